@@ -46,6 +46,9 @@ const migrations: Record<string, Migration> = {
   '20261201-1017-protect-history': protectHistory,
 }
 
+/** In the order they run. The shop itself may only read and write rows, so its health check compares names and runs nothing. */
+export const migrationNames = Object.keys(migrations)
+
 /** The runner for one database: `up()`, `down({ to: 0 })`, `pending()`, `executed()`. What has run stands in the table `migrations`. */
 export const migrator = (sequelize: Sequelize) =>
   new Umzug<QueryInterface>({

@@ -1,0 +1,37 @@
+import { advice, keptAdvice, riderAnswers } from '#contract/advisor.ts'
+import { route, type Route } from '../../http/route.ts'
+import { giveAdvice, keepAdvice } from './service.ts'
+
+const feature = 'advisor'
+
+export const advisorRoutes: Route[] = [
+  route(
+    {
+      method: 'post',
+      path: '/api/advice',
+      feature,
+      access: 'anyone',
+      summary: 'Advice for one rider over every wheelset on sale; stores nothing',
+      body: riderAnswers,
+      reply: advice,
+    },
+    ({ deps, body }) => giveAdvice(deps, body),
+  ),
+  route(
+    {
+      method: 'post',
+      path: '/api/advice-snapshots',
+      feature,
+      access: 'anyone',
+      summary: 'The same, kept under an id because the rider chose a wheelset on the strength of it',
+      body: riderAnswers,
+      reply: keptAdvice,
+      status: 201,
+      idempotency: 'optional',
+    },
+    async ({ deps, body, user }) => {
+      const { adviceId, sha256 } = await keepAdvice(deps, body, user?.id ?? null)
+      return { adviceId, sha256 }
+    },
+  ),
+]
