@@ -8,6 +8,9 @@ import { UniqueConstraintError } from 'sequelize'
 import { IdempotencyKey } from '../models/idempotency-key.ts'
 import { AppError, badField } from './errors.ts'
 
+/** No call runs this long: requests are cut off after 30 s. */
+const ABANDONED_MS = 120_000
+
 export interface KeptAnswer {
   status: number
   body: unknown
@@ -17,6 +20,7 @@ export async function once(
   req: Request,
   caller: string,
   need: 'required' | 'optional',
+  clock: () => Date,
   answer: () => Promise<KeptAnswer>,
 ): Promise<KeptAnswer> {
   const key = req.get('idempotency-key')
@@ -29,18 +33,23 @@ export async function once(
   const requestHash = createHash('sha256').update(JSON.stringify(req.body ?? null)).digest('hex')
 
   try {
-    await IdempotencyKey.create({ scope, key, requestHash, state: 'running' })
+    await IdempotencyKey.create({ scope, key, requestHash, state: 'running', createdAt: clock() })
   } catch (error) {
     if (!(error instanceof UniqueConstraintError)) throw error
     const kept = await IdempotencyKey.findOne({ where: { scope, key } })
     if (!kept) throw new AppError('still-running', 409)
+    if (kept.state === 'running' && clock().getTime() - kept.createdAt.getTime() > ABANDONED_MS) {
+      // The process died under the first try. What it did stands in its own tables, which have unique keys of their own.
+      await kept.destroy()
+      return once(req, caller, need, clock, answer)
+    }
     if (kept.requestHash !== requestHash) throw new AppError('idempotency-key-reused', 422)
     if (kept.state !== 'done' || kept.status === null) throw new AppError('still-running', 409)
     return { status: kept.status, body: kept.body }
   }
   try {
     const given = await answer()
-    await IdempotencyKey.update({ state: 'done', status: given.status, body: given.body }, { where: { scope, key } })
+    await IdempotencyKey.update({ state: 'done', status: given.status, body: given.body as object }, { where: { scope, key } })
     return given
   } catch (error) {
     await IdempotencyKey.destroy({ where: { scope, key } })

@@ -37,7 +37,7 @@ export function mountRoutes(app: Express, routes: readonly Route[], deps: Deps) 
         return
       }
       const caller = user ? `user ${user.id}` : `session ${req.sessionID}`
-      const { status, body: reply } = spec.idempotency ? await once(req, caller, spec.idempotency, answer) : await answer()
+      const { status, body: reply } = spec.idempotency ? await once(req, caller, spec.idempotency, deps.clock, answer) : await answer()
       if (!res.hasHeader('Cache-Control')) res.set('Cache-Control', 'no-store')
       res.status(status).json(reply)
     }
