@@ -10,7 +10,7 @@ export async function up(q: QueryInterface) {
       event_id VARCHAR(255) CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NOT NULL PRIMARY KEY,
       type VARCHAR(80) NOT NULL,
       object_id VARCHAR(190) CHARACTER SET utf8mb4 COLLATE utf8mb4_bin NULL,
-      created INT UNSIGNED NOT NULL,
+      created DATETIME(3) NOT NULL,
       payload JSON NOT NULL,
       received_at DATETIME(3) NOT NULL,
       KEY webhook_events_object (object_id)

@@ -6,7 +6,7 @@ export class WebhookEvent extends Model<InferAttributes<WebhookEvent>, InferCrea
   declare eventId: string
   declare type: string
   declare objectId: CreationOptional<string | null>
-  declare created: number // seconds since 1970, as it was sent
+  declare created: Date // when the payment service made it
   declare payload: Record<string, unknown>
   declare receivedAt: Date
 }
@@ -17,7 +17,7 @@ export const initWebhookEvent = (sequelize: Sequelize) =>
       eventId: { type: DataTypes.STRING(255), primaryKey: true },
       type: { type: DataTypes.STRING(80), allowNull: false },
       objectId: { type: DataTypes.STRING(190), allowNull: true },
-      created: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
+      created: { type: DataTypes.DATE(3), allowNull: false },
       payload: { type: DataTypes.JSON, allowNull: false },
       receivedAt: { type: DataTypes.DATE(3), allowNull: false },
     },
