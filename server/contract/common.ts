@@ -26,6 +26,9 @@ export const isoTime = z.string().describe('ISO 8601, UTC')
 /** `{ items, nextCursor }`; nextCursor is null on the last page. */
 export const listOf = <T extends z.ZodType>(item: T) => z.object({ items: z.array(item), nextCursor: z.string().nullable() })
 
+/** Why staff change something; kept with the change for good. */
+export const staffReason = z.string().trim().min(5).max(500)
+
 /** RFC 9457 problem details, with our code, the request's id and the fields of a bad input. */
 export const problem = z.object({
   type: z.string(),
