@@ -6,6 +6,7 @@ import catalogue from './en/catalogue.json'
 import checkout from './en/checkout.json'
 import common from './en/common.json'
 import errors from './en/errors.json'
+import home from './en/home.json'
 import productDesk from './en/product-desk.json'
 import supportDesk from './en/support-desk.json'
 
@@ -17,6 +18,7 @@ export const texts = {
   checkout,
   common,
   errors,
+  home,
   'product-desk': productDesk,
   'support-desk': supportDesk,
 }

@@ -6,6 +6,7 @@ import catalogue from './pt/catalogue.json'
 import checkout from './pt/checkout.json'
 import common from './pt/common.json'
 import errors from './pt/errors.json'
+import home from './pt/home.json'
 import productDesk from './pt/product-desk.json'
 import supportDesk from './pt/support-desk.json'
 
@@ -17,6 +18,7 @@ export const texts = {
   checkout,
   common,
   errors,
+  home,
   'product-desk': productDesk,
   'support-desk': supportDesk,
 }
