@@ -79,6 +79,9 @@ export async function seedDemo(sequelize: Sequelize): Promise<boolean> {
   return true
 }
 
+/** Ids are given, not counted by the database, so that two seeds are equal even where rows were deleted before. */
+const numbered = <T extends object>(rows: T[]) => rows.map((row, i) => ({ id: i + 1, ...row }))
+
 const dated = (at: Date) => ({ createdAt: at, updatedAt: at })
 
 async function seedRange(transaction: Transaction) {
@@ -122,36 +125,42 @@ async function seedRange(transaction: Transaction) {
     { transaction },
   )
   await WheelsetText.bulkCreate(
-    catalogue.flatMap(({ id, sku }) =>
-      (['en', 'pt'] as const).map((locale) => {
-        const words = texts[sku]?.[locale]
-        if (!words) throw new PrepareError(`No ${locale} text for ${sku}.`)
-        return { wheelsetId: id, locale, tagline: words[0], description: words[1], ...start }
-      }),
+    numbered(
+      catalogue.flatMap(({ id, sku }) =>
+        (['en', 'pt'] as const).map((locale) => {
+          const words = texts[sku]?.[locale]
+          if (!words) throw new PrepareError(`No ${locale} text for ${sku}.`)
+          return { wheelsetId: id, locale, tagline: words[0], description: words[1], ...start }
+        }),
+      ),
     ),
     { transaction },
   )
   await LimitVersion.bulkCreate(
-    catalogue.map(({ id, limitKg }) => ({
-      wheelsetId: id,
-      limitKg,
-      proof: `Invented demo proof: bench report FB-${String(4100 + id)}, front and rear wheel, static side load and fatigue drum.`,
-      reason: 'First limit of the demo range.',
-      state: 'in-force' as const,
-      inForceFrom: DEMO_START,
-      createdAt: DEMO_START,
-    })),
+    numbered(
+      catalogue.map(({ id, limitKg }) => ({
+        wheelsetId: id,
+        limitKg,
+        proof: `Invented demo proof: bench report FB-${String(4100 + id)}, front and rear wheel, static side load and fatigue drum.`,
+        reason: 'First limit of the demo range.',
+        state: 'in-force' as const,
+        inForceFrom: DEMO_START,
+        createdAt: DEMO_START,
+      })),
+    ),
     { transaction },
   )
   await Price.bulkCreate(
-    catalogue.flatMap(({ id, priceCents }) =>
-      (['EUR', 'GBP', 'USD'] as const).map((currency) => ({
-        wheelsetId: id,
-        currency,
-        priceCents: priceCents[currency],
-        validFrom: DEMO_START,
-        createdAt: DEMO_START,
-      })),
+    numbered(
+      catalogue.flatMap(({ id, priceCents }) =>
+        (['EUR', 'GBP', 'USD'] as const).map((currency) => ({
+          wheelsetId: id,
+          currency,
+          priceCents: priceCents[currency],
+          validFrom: DEMO_START,
+          createdAt: DEMO_START,
+        })),
+      ),
     ),
     { transaction },
   )
