@@ -22,8 +22,8 @@ export async function listAudit({ subjectType, subjectId, limit = PAGE, cursor }
     subjectType: row.subjectType,
     subjectId: row.subjectId,
     reason: row.reason,
-    before: row.before as Record<string, unknown> | null,
-    after: row.after as Record<string, unknown> | null,
+    before: row.before,
+    after: row.after,
     createdAt: row.createdAt.toISOString(),
   }))
   return { items, nextCursor: rows.length > limit ? String(items.at(-1)?.id) : null }

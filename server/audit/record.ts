@@ -15,7 +15,11 @@ export interface AuditEntry {
   after?: Record<string, unknown>
 }
 
-export async function recordAudit(actor: Pick<SignedIn, 'id' | 'name' | 'role'>, entry: AuditEntry, transaction: Transaction) {
+export async function recordAudit(
+  actor: Pick<SignedIn, 'id' | 'name' | 'role'>,
+  entry: AuditEntry,
+  transaction: Transaction,
+) {
   await AuditRow.create(
     {
       actorId: actor.id,

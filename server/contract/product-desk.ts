@@ -45,7 +45,10 @@ export const productWheelset = z.object({
 })
 export type ProductWheelset = z.infer<typeof productWheelset>
 
-const typedWords = z.strictObject({ tagline: z.string().trim().min(1).max(200), description: z.string().trim().min(1).max(4000) })
+const typedWords = z.strictObject({
+  tagline: z.string().trim().min(1).max(200),
+  description: z.string().trim().min(1).max(4000),
+})
 const typedPrice = z.number().int().min(100).max(5_000_000)
 
 /**
@@ -57,8 +60,12 @@ export const productChange = z.strictObject({
   version: z.number().int().min(1),
   reason: staffReason,
   texts: z.strictObject({ en: typedWords.optional(), pt: typedWords.optional() }).optional(),
-  prices: z.strictObject({ EUR: typedPrice.optional(), GBP: typedPrice.optional(), USD: typedPrice.optional() }).optional(),
-  stock: z.strictObject({ onHand: z.number().int().min(0).max(100_000), onHandSeen: z.number().int().min(0).optional() }).optional(),
+  prices: z
+    .strictObject({ EUR: typedPrice.optional(), GBP: typedPrice.optional(), USD: typedPrice.optional() })
+    .optional(),
+  stock: z
+    .strictObject({ onHand: z.number().int().min(0).max(100_000), onHandSeen: z.number().int().min(0).optional() })
+    .optional(),
   onSale: z.boolean().optional(),
   /** Says that a price jump over the usual is meant. */
   confirmJump: z.boolean().optional(),
@@ -103,7 +110,8 @@ export const limitList = listOf(limitRow)
 
 export const limitDraft = z.strictObject({
   sku: z.string().trim().min(1).max(40),
-  limitKg: z.number().min(LIMIT_FROM_KG).max(LIMIT_TO_KG),
+  /** In tenths at most: a figure that display would have to round could read as more than it is. */
+  limitKg: z.number().min(LIMIT_FROM_KG).max(LIMIT_TO_KG).multipleOf(0.1),
   /** What shows that the wheels carry it; needed in full where the limit goes up. */
   proof: z.string().trim().max(4000),
   reason: staffReason,
@@ -124,7 +132,11 @@ export const limitImpact = z.object({
   /** Sent or in use: their riders would need a safety notice. */
   deliveredOrders: z.number().int(),
   over: z.array(
-    z.object({ kind: z.enum(['basket', 'unpaid', 'placed', 'delivered']), orderNumber: z.string().nullable(), overKg: z.number() }),
+    z.object({
+      kind: z.enum(['basket', 'unpaid', 'placed', 'delivered']),
+      orderNumber: z.string().nullable(),
+      overKg: z.number(),
+    }),
   ),
 })
 export type LimitImpact = z.infer<typeof limitImpact>
@@ -151,4 +163,3 @@ export const auditRow = z.object({
 })
 export type AuditRowView = z.infer<typeof auditRow>
 export const auditList = listOf(auditRow)
-

@@ -86,7 +86,12 @@ export const deskMoney = z.object({
   /** Taken, less what was refunded, less refunds on their way. */
   leftToRefundCents: cents,
   ledger: z.array(
-    z.object({ kind: z.enum(['taken', 'refunded']), amountCents: z.number().int(), ref: z.string(), createdAt: isoTime }),
+    z.object({
+      kind: z.enum(['taken', 'refunded']),
+      amountCents: z.number().int(),
+      ref: z.string(),
+      createdAt: isoTime,
+    }),
   ),
   refunds: z.array(
     z.object({
@@ -213,7 +218,10 @@ export const refundRequest = z
     amountCents: cents.min(1).optional(),
     reason: staffReason,
   })
-  .refine((asked) => (asked.lines === undefined) !== (asked.amountCents === undefined), { message: 'lines-or-amount', path: ['amountCents'] })
+  .refine((asked) => (asked.lines === undefined) !== (asked.amountCents === undefined), {
+    message: 'lines-or-amount',
+    path: ['amountCents'],
+  })
 export type RefundRequest = z.output<typeof refundRequest>
 
 export const refundDone = z.object({

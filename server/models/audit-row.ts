@@ -11,8 +11,8 @@ export class AuditRow extends Model<InferAttributes<AuditRow>, InferCreationAttr
   declare subjectType: string
   declare subjectId: string
   declare reason: string
-  declare before: CreationOptional<unknown>
-  declare after: CreationOptional<unknown>
+  declare before: CreationOptional<Record<string, unknown> | null>
+  declare after: CreationOptional<Record<string, unknown> | null>
   declare createdAt: CreationOptional<Date>
 }
 

@@ -30,7 +30,12 @@ const note = (diff: Diff, name: string, before: unknown, after: unknown) => {
 /**
  * @throws AppError changed-meanwhile (with the present values), price-jump, stock-below-reserved: all 409, nothing written
  */
-export function changeWheelset(deps: Reach, actor: SignedIn, sku: string, change: ProductChange): Promise<ProductWheelset> {
+export function changeWheelset(
+  deps: Reach,
+  actor: SignedIn,
+  sku: string,
+  change: ProductChange,
+): Promise<ProductWheelset> {
   return inTransaction(deps.db, async (transaction) => {
     // The row lock puts two editors in line; the second then reads the first one's version.
     const wheelset = await Wheelset.findOne({ where: { sku }, lock: true, transaction })
@@ -45,8 +50,15 @@ export function changeWheelset(deps: Reach, actor: SignedIn, sku: string, change
 
     // Saving what is there already is no change: no new version, no audit row.
     if (Object.keys(diff.after).length > 0) {
-      await wheelset.update({ onSale: change.onSale ?? wheelset.onSale, version: wheelset.version + 1 }, { transaction })
-      await recordAudit(actor, { action: 'wheelset.changed', subjectType: 'wheelset', subjectId: sku, reason: change.reason, ...diff }, transaction)
+      await wheelset.update(
+        { onSale: change.onSale ?? wheelset.onSale, version: wheelset.version + 1 },
+        { transaction },
+      )
+      await recordAudit(
+        actor,
+        { action: 'wheelset.changed', subjectType: 'wheelset', subjectId: sku, reason: change.reason, ...diff },
+        transaction,
+      )
     }
     return readProduct(deps, sku, transaction)
   })
@@ -55,12 +67,19 @@ export function changeWheelset(deps: Reach, actor: SignedIn, sku: string, change
 const changedMeanwhile = async (deps: Reach, sku: string, transaction: Transaction) =>
   new AppError('changed-meanwhile', 409, { present: await readProduct(deps, sku, transaction) })
 
-async function changeStock(deps: Reach, wheelset: Wheelset, { stock }: ProductChange, diff: Diff, transaction: Transaction) {
+async function changeStock(
+  deps: Reach,
+  wheelset: Wheelset,
+  { stock }: ProductChange,
+  diff: Diff,
+  transaction: Transaction,
+) {
   if (!stock) return
   // Sales take this lock too, so the count cannot move between this read and the write.
   const kept = await Stock.findByPk(wheelset.id, { lock: true, transaction })
   const onHand = kept?.onHand ?? 0
-  if (stock.onHandSeen !== undefined && stock.onHandSeen !== onHand) throw await changedMeanwhile(deps, wheelset.sku, transaction)
+  if (stock.onHandSeen !== undefined && stock.onHandSeen !== onHand)
+    throw await changedMeanwhile(deps, wheelset.sku, transaction)
   const reserved = kept?.reserved ?? 0
   if (stock.onHand < reserved) throw new AppError('stock-below-reserved', 409, { reserved })
   if (!note(diff, 'stock.onHand', onHand, stock.onHand)) return
@@ -68,7 +87,13 @@ async function changeStock(deps: Reach, wheelset: Wheelset, { stock }: ProductCh
   else await Stock.create({ wheelsetId: wheelset.id, onHand: stock.onHand }, { transaction })
 }
 
-async function changePrices({ clock }: Reach, wheelset: Wheelset, change: ProductChange, diff: Diff, transaction: Transaction) {
+async function changePrices(
+  { clock }: Reach,
+  wheelset: Wheelset,
+  change: ProductChange,
+  diff: Diff,
+  transaction: Transaction,
+) {
   if (!change.prices) return
   const now = clock()
   const present = pricesNow(await Price.findAll({ where: { wheelsetId: wheelset.id }, transaction }), now)

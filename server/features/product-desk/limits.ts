@@ -32,7 +32,13 @@ function standingOf(version: LimitVersion, current: LimitVersion | null, now: Da
   return version.inForceFrom !== null && version.inForceFrom > now ? 'seconded' : 'replaced'
 }
 
-function view(version: LimitVersion, sku: string, current: LimitVersion | null, now: Date, userId: number): LimitVersionView {
+function view(
+  version: LimitVersion,
+  sku: string,
+  current: LimitVersion | null,
+  now: Date,
+  userId: number,
+): LimitVersionView {
   return {
     id: version.id,
     sku,
@@ -71,8 +77,16 @@ export async function listLimits({ clock }: Reach, user: SignedIn): Promise<{ it
   return { items, nextCursor: null }
 }
 
-async function readLimit({ clock }: Reach, id: number, user: SignedIn, transaction: Transaction): Promise<LimitVersionView> {
-  const version = await LimitVersion.findByPk(id, { include: [...people, { model: Wheelset, as: 'wheelset', attributes: ['sku'] }], transaction })
+async function readLimit(
+  { clock }: Reach,
+  id: number,
+  user: SignedIn,
+  transaction: Transaction,
+): Promise<LimitVersionView> {
+  const version = await LimitVersion.findByPk(id, {
+    include: [...people, { model: Wheelset, as: 'wheelset', attributes: ['sku'] }],
+    transaction,
+  })
   if (!version?.wheelset) throw notFound()
   const now = clock()
   const current = await currentLimit(version.wheelsetId, now, transaction)
@@ -94,7 +108,8 @@ export function draftLimit(deps: Reach, actor: SignedIn, draft: LimitDraft): Pro
     if (!wheelset) throw badField('sku', 'no-such-wheelset')
     const now = deps.clock()
     const inForceFrom = draft.inForceFrom === undefined ? null : new Date(draft.inForceFrom)
-    if (inForceFrom && inForceFrom.getTime() < now.getTime() - PAST_GRACE_MS) throw badField('inForceFrom', 'in-the-past')
+    if (inForceFrom && inForceFrom.getTime() < now.getTime() - PAST_GRACE_MS)
+      throw badField('inForceFrom', 'in-the-past')
     const current = await currentLimit(wheelset.id, now, transaction)
     if (current?.limitKg === draft.limitKg) throw badField('limitKg', 'same-as-now')
     checkProof(draft.limitKg, draft.proof, current)
@@ -165,7 +180,9 @@ export function secondLimit(deps: Reach, actor: SignedIn, id: number, reason: st
 export function rejectLimit(deps: Reach, actor: SignedIn, id: number, reason: string): Promise<LimitVersionView> {
   return inTransaction(deps.db, async (transaction) => {
     const { wheelset, version } = await lockedChange(id, transaction)
-    const waiting = version.state === 'drafted' || (agreed(version) && version.inForceFrom !== null && version.inForceFrom > deps.clock())
+    const waiting =
+      version.state === 'drafted' ||
+      (agreed(version) && version.inForceFrom !== null && version.inForceFrom > deps.clock())
     if (!waiting) throw new AppError('limit-change-closed', 409)
     const before = { state: version.state }
     await version.update({ state: 'rejected' }, { transaction })

@@ -41,8 +41,13 @@ const ROWS = `
   ORDER BY w.name, w.sku`
 
 /** The price in force of each currency; a later `validFrom` waits. */
-export function pricesNow(rows: readonly Pick<Price, 'currency' | 'priceCents' | 'validFrom' | 'id'>[], now: Date): Partial<Record<Currency, number>> {
-  const due = rows.filter(({ validFrom }) => validFrom <= now).sort((a, b) => a.validFrom.getTime() - b.validFrom.getTime() || a.id - b.id)
+export function pricesNow(
+  rows: readonly Pick<Price, 'currency' | 'priceCents' | 'validFrom' | 'id'>[],
+  now: Date,
+): Partial<Record<Currency, number>> {
+  const due = rows
+    .filter(({ validFrom }) => validFrom <= now)
+    .sort((a, b) => a.validFrom.getTime() - b.validFrom.getTime() || a.id - b.id)
   return Object.fromEntries(due.map(({ currency, priceCents }) => [currency, priceCents]))
 }
 
@@ -70,7 +75,9 @@ function rowView({ row, prices, texts, now }: Read): ProductRow {
     onHand: row.onHand ?? 0,
     reserved: row.reserved ?? 0,
     prices: pricesNow(prices, now),
-    missingTexts: locales.filter((language) => !texts.some(({ locale, description }) => locale === language && description !== '')),
+    missingTexts: locales.filter(
+      (language) => !texts.some(({ locale, description }) => locale === language && description !== ''),
+    ),
     updatedAt: row.updatedAt.toISOString(),
   }
 }

@@ -9,11 +9,13 @@ import type { AdviceSnapshot } from '../../models/advice-snapshot.ts'
 const massAnswers = ['bodyMassKg', 'bodyMassBandKg'] as const
 
 type Loose = Record<string, unknown>
-const isRecord = (value: unknown): value is Loose => typeof value === 'object' && value !== null && !Array.isArray(value)
+const isRecord = (value: unknown): value is Loose =>
+  typeof value === 'object' && value !== null && !Array.isArray(value)
 const records = (value: unknown): Loose[] => (Array.isArray(value) ? value.filter(isRecord) : [])
 const text = (value: unknown): string | null => (typeof value === 'string' ? value : null)
 const number = (value: unknown): number | null => (typeof value === 'number' ? value : null)
-const strings = (value: unknown): string[] => (Array.isArray(value) ? value.filter((one) => typeof one === 'string') : [])
+const strings = (value: unknown): string[] =>
+  Array.isArray(value) ? value.filter((one) => typeof one === 'string') : []
 
 /** A list or an object of explanations, in words: older rule versions may have kept either. */
 const inWords = (value: unknown): string | null => (Array.isArray(value) ? strings(value).join('; ') : text(value))
@@ -25,7 +27,9 @@ const inWords = (value: unknown): string | null => (Array.isArray(value) ? strin
 export function frozenAdviceView(snapshot: AdviceSnapshot, skus: readonly string[], reveal: boolean): FrozenAdvice {
   const { answers, advice } = snapshot
   const present = massAnswers.filter((name) => answers[name] !== undefined)
-  const shownAnswers = Object.fromEntries(Object.entries(answers).filter(([name]) => reveal || !massAnswers.some((one) => one === name)))
+  const shownAnswers = Object.fromEntries(
+    Object.entries(answers).filter(([name]) => reveal || !massAnswers.some((one) => one === name)),
+  )
   return {
     adviceId: snapshot.id,
     createdAt: snapshot.createdAt.toISOString(),
@@ -40,7 +44,10 @@ export function frozenAdviceView(snapshot: AdviceSnapshot, skus: readonly string
     pressure: advice.pressure ?? null,
     rimDepthMm: advice.rimDepthMm ?? null,
     spokes: advice.spokes ?? null,
-    notes: records(advice.notes).map(({ code, severity }) => ({ code: text(code) ?? '', severity: text(severity) ?? 'info' })),
+    notes: records(advice.notes).map(({ code, severity }) => ({
+      code: text(code) ?? '',
+      severity: text(severity) ?? 'info',
+    })),
     wheelsets: records(advice.wheelsets)
       .filter(({ sku }) => skus.some((one) => one === sku))
       .map((one) => ({

@@ -20,7 +20,11 @@ export async function findOrder(number: string): Promise<Order> {
 }
 
 const linesOf = (order: Order) =>
-  OrderLine.findAll({ where: { orderId: order.id }, include: [{ model: Wheelset, as: 'wheelset', attributes: ['slug'] }], order: ['id'] })
+  OrderLine.findAll({
+    where: { orderId: order.id },
+    include: [{ model: Wheelset, as: 'wheelset', attributes: ['slug'] }],
+    order: ['id'],
+  })
 
 export async function readDeskOrder(number: string): Promise<DeskOrder> {
   const order = await findOrder(number)
@@ -28,7 +32,11 @@ export async function readDeskOrder(number: string): Promise<DeskOrder> {
   const [lines, mails, events, money] = await Promise.all([
     linesOf(order),
     OutboxMail.findAll({ where, order: ['id'] }),
-    OrderEvent.findAll({ where, include: [{ model: User, as: 'actor', attributes: ['name'] }], order: ['createdAt', 'id'] }),
+    OrderEvent.findAll({
+      where,
+      include: [{ model: User, as: 'actor', attributes: ['name'] }],
+      order: ['createdAt', 'id'],
+    }),
     readMoney(order),
   ])
   const { delivery } = order
@@ -41,7 +49,12 @@ export async function readDeskOrder(number: string): Promise<DeskOrder> {
     state: order.state,
     placedAt: order.placedAt?.toISOString() ?? null,
     createdAt: order.createdAt.toISOString(),
-    delivery: { ...delivery, line2: delivery.line2 ?? null, region: delivery.region ?? null, phone: delivery.phone ?? null },
+    delivery: {
+      ...delivery,
+      line2: delivery.line2 ?? null,
+      region: delivery.region ?? null,
+      phone: delivery.phone ?? null,
+    },
     lines: lines.map((line) => ({
       id: line.id,
       sku: line.sku,
@@ -92,8 +105,11 @@ async function readMoney(order: Order): Promise<DeskMoney> {
     Refund.findAll({ where, include: [{ model: User, as: 'author', attributes: ['name'] }], order: ['id'] }),
     Market.findByPk(order.market),
   ])
-  const sum = (kind: 'taken' | 'refunded') => ledger.filter((entry) => entry.kind === kind).reduce((total, { amountCents }) => total + amountCents, 0)
-  const onTheWay = refunds.filter(({ state }) => state === 'asked').reduce((total, { amountCents }) => total + amountCents, 0)
+  const sum = (kind: 'taken' | 'refunded') =>
+    ledger.filter((entry) => entry.kind === kind).reduce((total, { amountCents }) => total + amountCents, 0)
+  const onTheWay = refunds
+    .filter(({ state }) => state === 'asked')
+    .reduce((total, { amountCents }) => total + amountCents, 0)
   const takenCents = sum('taken')
   const refundedCents = -sum('refunded')
   return {
@@ -106,7 +122,12 @@ async function readMoney(order: Order): Promise<DeskMoney> {
     takenCents,
     refundedCents,
     leftToRefundCents: Math.max(0, takenCents - refundedCents - onTheWay),
-    ledger: ledger.map(({ kind, amountCents, ref, createdAt }) => ({ kind, amountCents, ref, createdAt: createdAt.toISOString() })),
+    ledger: ledger.map(({ kind, amountCents, ref, createdAt }) => ({
+      kind,
+      amountCents,
+      ref,
+      createdAt: createdAt.toISOString(),
+    })),
     refunds: refunds.map((refund) => ({
       id: refund.id,
       amountCents: refund.amountCents,

@@ -70,7 +70,14 @@ export const supportDeskRoutes: Route[] = [
       status: 201,
       idempotency: 'required',
     },
-    (call) => refundFromDesk(call.deps, signedIn(call), call.params.orderNumber, call.body, call.req.get('idempotency-key') ?? ''),
+    (call) =>
+      refundFromDesk(
+        call.deps,
+        signedIn(call),
+        call.params.orderNumber,
+        call.body,
+        call.req.get('idempotency-key') ?? '',
+      ),
   ),
   route(
     {

@@ -50,7 +50,9 @@ export async function findOrders({ db }: Pick<Deps, 'db'>, { q, state, limit = P
     search?.sql,
     state === undefined ? undefined : 'o.state = :state',
     // Keyset: an order that arrives while somebody pages moves nothing.
-    after ? '(COALESCE(o.placed_at, o.created_at) < :afterAt OR (COALESCE(o.placed_at, o.created_at) = :afterAt AND o.id < :afterId))' : undefined,
+    after
+      ? '(COALESCE(o.placed_at, o.created_at) < :afterAt OR (COALESCE(o.placed_at, o.created_at) = :afterAt AND o.id < :afterId))'
+      : undefined,
   ].filter((one) => one !== undefined)
   const rows = await db.query<StoredRow>(
     `SELECT o.id, o.number AS orderNumber, o.name, o.email, o.postcode, o.market AS country, o.state, o.total_cents AS totalCents,
@@ -91,4 +93,5 @@ const readLines = (db: Deps['db'], orders: readonly { id: number }[]) =>
       )
 
 /** limitChecks stand from calm to doubtful. */
-const worse = (a: DeskOrderRow['limitCheck'], b: DeskOrderRow['limitCheck']) => (limitChecks.indexOf(a) >= limitChecks.indexOf(b) ? a : b)
+const worse = (a: DeskOrderRow['limitCheck'], b: DeskOrderRow['limitCheck']) =>
+  limitChecks.indexOf(a) >= limitChecks.indexOf(b) ? a : b

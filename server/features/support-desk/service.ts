@@ -6,7 +6,7 @@ import type { SignedIn } from '../../http/session.ts'
 import { OrderEvent } from '../../models/order-event.ts'
 import { findOrder, readDeskOrder, readRevealedAdvice } from './read.ts'
 
-/** The audit row is written first: nobody sees a body mass without having said why. The mass itself is not in it. */
+/** Nothing is answered before the audit row stands: nobody sees a body mass without having said why. The mass is not in the row. */
 export async function revealMass({ db }: Pick<Deps, 'db'>, actor: SignedIn, number: string, reason: string) {
   const order = await findOrder(number)
   const advice = await readRevealedAdvice(order)
@@ -26,14 +26,23 @@ export async function revealMass({ db }: Pick<Deps, 'db'>, actor: SignedIn, numb
   return { advice }
 }
 
-export async function addNote({ db, clock }: Pick<Deps, 'db' | 'clock'>, actor: SignedIn, number: string, text: string) {
+export async function addNote(
+  { db, clock }: Pick<Deps, 'db' | 'clock'>,
+  actor: SignedIn,
+  number: string,
+  text: string,
+) {
   const order = await findOrder(number)
   await inTransaction(db, async (transaction) => {
     await OrderEvent.create(
       { orderId: order.id, kind: 'note', actorId: actor.id, actorRole: actor.role, reason: text, createdAt: clock() },
       { transaction },
     )
-    await recordAudit(actor, { action: 'order.noted', subjectType: 'order', subjectId: order.number, reason: text }, transaction)
+    await recordAudit(
+      actor,
+      { action: 'order.noted', subjectType: 'order', subjectId: order.number, reason: text },
+      transaction,
+    )
   })
   return readDeskOrder(number)
 }
