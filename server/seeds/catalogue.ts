@@ -294,7 +294,7 @@ export const catalogue = wheelsetRows.map((w, i) => {
     timber: w.timber,
     brake: w.brake,
     beadSeatMm: w.beadSeatMm,
-    rides: w.rides as string[],
+    rides: w.rides,
     useCondition: w.useCondition,
     assistRated: wheels.every(({ hub }) => hub.assistRated),
     buildKind: w.build,

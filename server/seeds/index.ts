@@ -23,6 +23,7 @@ import { WheelsetText } from '../models/wheelset-text.ts'
 import { WheelsetWheel } from '../models/wheelset-wheel.ts'
 import { migrator } from '../migrations/index.ts'
 import { catalogue, hubs, rims, spokes } from './catalogue.ts'
+import { limitProof } from './facts.ts'
 import { markets } from './markets.ts'
 import { demoOrders } from './orders.ts'
 import { texts } from './texts.ts'
@@ -138,10 +139,10 @@ async function seedRange(transaction: Transaction) {
   )
   await LimitVersion.bulkCreate(
     numbered(
-      catalogue.map(({ id, limitKg }) => ({
-        wheelsetId: id,
-        limitKg,
-        proof: `Invented demo proof: bench report FB-${String(4100 + id)}, front and rear wheel, static side load and fatigue drum.`,
+      catalogue.map((w) => ({
+        wheelsetId: w.id,
+        limitKg: w.limitKg,
+        proof: limitProof(w),
         reason: 'First limit of the demo range.',
         state: 'in-force' as const,
         inForceFrom: DEMO_START,

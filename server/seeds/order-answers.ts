@@ -1,5 +1,5 @@
 /** What an invented rider answered in the fitting: whole requests of POST /api/advice, with the usual tyres and bikes of each ride. */
-import type { Ride } from './wheelset-rows.ts'
+import type { Ride } from '#contract/advisor.ts'
 import type { Prng } from './prng.ts'
 
 interface Habit {

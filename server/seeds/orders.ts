@@ -1,7 +1,6 @@
 /** 400 invented orders over the year before `now`: buyers, lines, money, history, mails and the advice each was bought on. */
 import { createHash } from 'node:crypto'
 import type { LineOptions } from '../models/basket-line.ts'
-import type { OrderState } from '../models/order.ts'
 import { demoAdvice } from './advice.ts'
 import { catalogue, type SeedWheelset } from './catalogue.ts'
 import { receiptWords, refundWords } from './mails.ts'
@@ -175,7 +174,7 @@ function lineRow(random: Prng, id: number, order: OrderRow, line: OrderRow['draf
       taxCents,
     },
     options: optionsOf(random, wheelset),
-    state: order.state as OrderState,
+    state: order.state,
     adviceId,
     limitCheck,
     limitKg: wheelset.limitKg,

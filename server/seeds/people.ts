@@ -174,7 +174,7 @@ export interface Buyer {
 const weighted = Object.entries(countries).flatMap(([code, { share }]) => Array.from({ length: share }, () => code))
 const postcodeFrom = (pattern: string, random: Prng) =>
   pattern.replace(/[#@]/g, (mark) =>
-    mark === '#' ? String(random.between(0, 9)) : random.pick([...'ABDEFGHJLNPRSTUWXY']),
+    mark === '#' ? String(random.between(0, 9)) : 'ABDEFGHJLNPRSTUWXY'.charAt(random.between(0, 17)),
   )
 const plain = (text: string) =>
   text

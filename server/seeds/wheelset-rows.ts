@@ -3,17 +3,7 @@
  * one share it in the table too. Figures of rims, hubs and spokes follow the generic classes of the wheel reference
  * (its 3.1 to 3.3, DERIVED and MEMORY there); limits stay at or under its rider limits plus bike and kit (4.12, DERIVED).
  */
-export type Ride =
-  | 'road-fast'
-  | 'road-long'
-  | 'climbing'
-  | 'time-trial'
-  | 'cyclocross'
-  | 'gravel'
-  | 'bikepacking'
-  | 'commute'
-  | 'cross-country'
-  | 'trail'
+import type { Ride } from '#contract/advisor.ts'
 
 export type HubFamily = 'rim' | 'road' | 'gravel' | 'touring' | 'assist' | 'mountain' | 'mountain-assist'
 

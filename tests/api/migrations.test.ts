@@ -2,13 +2,15 @@
 import { createHash } from 'node:crypto'
 import { QueryTypes, type Sequelize } from 'sequelize'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import { openDatabase } from '../../server/db.ts'
+import { inTransaction, openDatabase } from '../../server/db.ts'
+import { readCatalogue } from '../../server/features/catalogue/read.ts'
 import { migrator } from '../../server/migrations/index.ts'
 import { initModels } from '../../server/models/index.ts'
 import { Stock } from '../../server/models/stock.ts'
 import { Wheelset } from '../../server/models/wheelset.ts'
 import { WheelsetWheel } from '../../server/models/wheelset-wheel.ts'
-import { prepareDatabase } from '../../server/seeds/index.ts'
+import { wheelsetFacts } from '../../server/seeds/facts.ts'
+import { DEMO_NOW, prepareDatabase } from '../../server/seeds/index.ts'
 import { designOf, tableLimitKg } from '../support/rider-limits.ts'
 import { emptyDatabase, ownDatabaseUrl } from '../support/test-db.ts'
 
@@ -99,6 +101,26 @@ describe('the connection', () => {
     expect(t).toEqual(moment)
   })
 
+  it('does a transaction again that lost a deadlock, so that both writers get through', async () => {
+    let waiting = 2
+    let bothHoldOne = () => {}
+    const barrier = new Promise<void>((resolve) => (bothHoldOne = resolve))
+    let runs = 0
+    const swap = (first: number, second: number) =>
+      inTransaction(db, async (transaction) => {
+        runs += 1
+        await Stock.increment('onHand', { by: 1, where: { wheelsetId: first }, transaction })
+        waiting -= 1
+        if (waiting <= 0) bothHoldOne()
+        await barrier
+        await Stock.increment('onHand', { by: 1, where: { wheelsetId: second }, transaction })
+      })
+    const before = await one('SELECT SUM(on_hand) FROM stock')
+    await Promise.all([swap(1, 2), swap(2, 1)])
+    expect(runs).toBe(3)
+    expect(await one('SELECT SUM(on_hand) FROM stock')).toBe(before + 4)
+  })
+
   it('waits seconds, not a minute, for a lock', async () => {
     expect(await one('SELECT @@innodb_lock_wait_timeout')).toBe(5)
   })
@@ -169,6 +191,11 @@ describe('the demo seed', () => {
     const free = wheelsets.map(({ stock }) => stock?.onHand)
     expect(free).toContain(0)
     expect(free).toContain(1)
+  })
+
+  it('reads back as the facts that the invented advice was worked out from', async () => {
+    const stored = await readCatalogue({ db, clock: () => DEMO_NOW }, 'en')
+    expect(stored.map(({ id: _id, version: _version, onSale: _onSale, ...facts }) => facts)).toEqual(wheelsetFacts)
   })
 
   it('spans alloy and carbon, rim and disc, 622 and 584, 25 to 80 mm, 16 to 36 spokes, hooked and hookless, every ride', async () => {
