@@ -4,7 +4,15 @@ import { Notice } from '../ui/Notice.tsx'
 import { ApiError } from './api.ts'
 
 /** A refusal or a fault in words: what happened, what to do, and the number to quote. */
-export function ErrorNotice({ error, onRetry, className }: { error: unknown; onRetry?: () => void; className?: string }) {
+export function ErrorNotice({
+  error,
+  onRetry,
+  className,
+}: {
+  error: unknown
+  onRetry?: () => void
+  className?: string
+}) {
   const { t } = useTranslation(['errors', 'common'])
   const known = error instanceof ApiError ? error.problem : null
   const code = known?.code ?? 'unknown'
@@ -18,7 +26,9 @@ export function ErrorNotice({ error, onRetry, className }: { error: unknown; onR
           ))}
         </ul>
       )}
-      {known && known.requestId !== '' && <p className="mt-1 text-sm text-soft">{t('common:requestNumber', { id: known.requestId })}</p>}
+      {known && known.requestId !== '' && (
+        <p className="mt-1 text-sm text-soft">{t('common:requestNumber', { id: known.requestId })}</p>
+      )}
       {onRetry && (
         <Button kind="plain" small className="mt-3" onClick={onRetry}>
           {t('common:tryAgain')}

@@ -20,7 +20,13 @@ interface Options {
   idempotencyKey?: string
 }
 
-async function call<S extends z.ZodType>(method: string, path: string, body: unknown, reply: S, options: Options = {}): Promise<z.output<S>> {
+async function call<S extends z.ZodType>(
+  method: string,
+  path: string,
+  body: unknown,
+  reply: S,
+  options: Options = {},
+): Promise<z.output<S>> {
   const headers: Record<string, string> = { Accept: 'application/json', 'Accept-Language': i18next.language }
   if (body !== undefined) headers['Content-Type'] = 'application/json'
   if (options.idempotencyKey !== undefined) headers['Idempotency-Key'] = options.idempotencyKey
@@ -46,9 +52,14 @@ async function call<S extends z.ZodType>(method: string, path: string, body: unk
 }
 
 export const api = {
-  get: <S extends z.ZodType>(path: string, reply: S, signal?: AbortSignal) => call('GET', path, undefined, reply, signal ? { signal } : {}),
-  post: <S extends z.ZodType>(path: string, body: unknown, reply: S, options?: Options) => call('POST', path, body, reply, options),
-  put: <S extends z.ZodType>(path: string, body: unknown, reply: S, options?: Options) => call('PUT', path, body, reply, options),
-  patch: <S extends z.ZodType>(path: string, body: unknown, reply: S, options?: Options) => call('PATCH', path, body, reply, options),
-  delete: <S extends z.ZodType>(path: string, reply: S, options?: Options) => call('DELETE', path, undefined, reply, options),
+  get: <S extends z.ZodType>(path: string, reply: S, signal?: AbortSignal) =>
+    call('GET', path, undefined, reply, signal ? { signal } : {}),
+  post: <S extends z.ZodType>(path: string, body: unknown, reply: S, options?: Options) =>
+    call('POST', path, body, reply, options),
+  put: <S extends z.ZodType>(path: string, body: unknown, reply: S, options?: Options) =>
+    call('PUT', path, body, reply, options),
+  patch: <S extends z.ZodType>(path: string, body: unknown, reply: S, options?: Options) =>
+    call('PATCH', path, body, reply, options),
+  delete: <S extends z.ZodType>(path: string, reply: S, options?: Options) =>
+    call('DELETE', path, undefined, reply, options),
 }

@@ -68,7 +68,10 @@ export function readDraft(params: URLSearchParams): Draft {
 
 /** An address may hold anything: what the contract does not take is left out, and the question is open again. */
 function checked(draft: Tree): Draft {
-  const shape = riderAnswers.shape as Record<string, { safeParse: (value: unknown) => { success: boolean; data?: unknown } }>
+  const shape = riderAnswers.shape as Record<
+    string,
+    { safeParse: (value: unknown) => { success: boolean; data?: unknown } }
+  >
   return Object.fromEntries(
     Object.entries(draft).flatMap(([name, value]) => {
       const one = shape[name]?.safeParse(value)
@@ -86,7 +89,11 @@ function put(tree: Tree, path: string, value: unknown) {
 function take(tree: Tree, path: string): unknown {
   const [head = '', tail] = path.split('.')
   const branch = tree[head]
-  return tail === undefined ? branch : typeof branch === 'object' && branch !== null ? (branch as Tree)[tail] : undefined
+  return tail === undefined
+    ? branch
+    : typeof branch === 'object' && branch !== null
+      ? (branch as Tree)[tail]
+      : undefined
 }
 
 /** @param into parameters to keep beside the answers (step, units, language) */
@@ -173,7 +180,10 @@ export function useFitting() {
 export function useKeptFitting(): { address: string; answers: RiderAnswers | null } {
   const text = useKept(DRAFT_KEY) ?? ''
   const [mass] = useMass()
-  return useMemo(() => ({ address: text, answers: completeAnswers(readDraft(new URLSearchParams(text)), mass) }), [text, mass])
+  return useMemo(
+    () => ({ address: text, answers: completeAnswers(readDraft(new URLSearchParams(text)), mass) }),
+    [text, mass],
+  )
 }
 
 export function rememberFitting(draft: Draft) {

@@ -17,7 +17,9 @@ export interface Shown {
 export function formatter(language: string, units: Pick<Preferences, 'mass' | 'pressure' | 'length'>) {
   const numbers = new Map<number, Intl.NumberFormat>()
   const number = (value: number, digits = 0) => {
-    const found = numbers.get(digits) ?? new Intl.NumberFormat(language, { minimumFractionDigits: digits, maximumFractionDigits: digits })
+    const found =
+      numbers.get(digits) ??
+      new Intl.NumberFormat(language, { minimumFractionDigits: digits, maximumFractionDigits: digits })
     numbers.set(digits, found)
     return found.format(value)
   }
@@ -27,7 +29,8 @@ export function formatter(language: string, units: Pick<Preferences, 'mass' | 'p
   }
   return {
     number,
-    percent: (share: number, digits = 0) => new Intl.NumberFormat(language, { style: 'percent', maximumFractionDigits: digits }).format(share),
+    percent: (share: number, digits = 0) =>
+      new Intl.NumberFormat(language, { style: 'percent', maximumFractionDigits: digits }).format(share),
     /** @param kg kilograms; a limit is a maximum, a rider's total a minimum */
     mass: (kg: number, rounding: Rounding = 'nearest') => shown(kg, units.mass, rounding),
     /** @param bar gauge pressure in bar */
@@ -38,9 +41,14 @@ export function formatter(language: string, units: Pick<Preferences, 'mass' | 'p
     depth: (mm: number) => ({ value: number(mm), unit: 'mm', text: `${number(mm)}\u00a0mm` }),
     grams: (g: number) => `${number(Math.round(g))}\u00a0g`,
     money: (cents: number, currency: Currency) =>
-      new Intl.NumberFormat(language, { style: 'currency', currency, ...(cents % 100 === 0 ? { maximumFractionDigits: 0 } : {}) }).format(cents / 100),
+      new Intl.NumberFormat(language, {
+        style: 'currency',
+        currency,
+        ...(cents % 100 === 0 ? { maximumFractionDigits: 0 } : {}),
+      }).format(cents / 100),
     date: (iso: string) => new Intl.DateTimeFormat(language, { dateStyle: 'medium' }).format(new Date(iso)),
-    time: (iso: string) => new Intl.DateTimeFormat(language, { dateStyle: 'medium', timeStyle: 'short' }).format(new Date(iso)),
+    time: (iso: string) =>
+      new Intl.DateTimeFormat(language, { dateStyle: 'medium', timeStyle: 'short' }).format(new Date(iso)),
     list: (items: readonly string[]) => new Intl.ListFormat(language, { type: 'conjunction' }).format(items),
   }
 }

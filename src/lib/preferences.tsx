@@ -20,8 +20,12 @@ export type Preferences = z.infer<typeof shape>
 const inAddress = { lng: 'language', mass: 'mass', pressure: 'pressure', length: 'length', market: 'market' } as const
 
 function fromBrowser(): Preferences {
-  const spoken = navigator.languages.map((one) => one.slice(0, 2)).find((one): one is Locale => locale.safeParse(one).success)
-  const region = navigator.languages.map((one) => one.slice(3, 5).toUpperCase()).find((one) => marketCode.safeParse(one).success)
+  const spoken = navigator.languages
+    .map((one) => one.slice(0, 2))
+    .find((one): one is Locale => locale.safeParse(one).success)
+  const region = navigator.languages
+    .map((one) => one.slice(3, 5).toUpperCase())
+    .find((one) => marketCode.safeParse(one).success)
   const american = region === 'US'
   return {
     language: spoken ?? 'en',
