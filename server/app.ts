@@ -27,7 +27,11 @@ export function createApp(deps: Deps, clientDir: string | null): Express {
       genReqId: () => randomUUID(),
       // One line a request. Addresses are logged without their query: answers of a fitting are nobody's business in a log.
       serializers: {
-        req: (req: { id: string; method: string; url: string }) => ({ id: req.id, method: req.method, url: req.url.split('?')[0] }),
+        req: (req: { id: string; method: string; url: string }) => ({
+          id: req.id,
+          method: req.method,
+          url: req.url.split('?')[0],
+        }),
         res: (res: { statusCode: number }) => ({ status: res.statusCode }),
       },
       autoLogging: { ignore: (req) => req.url?.startsWith('/api/health') ?? false },
@@ -64,9 +68,17 @@ export function createApp(deps: Deps, clientDir: string | null): Express {
   app.use(compression())
   app.use('/api', sameSiteOnly(config.PUBLIC_URL))
 
-  mountRoutes(app, routes.filter(({ spec }) => spec.raw), deps)
+  mountRoutes(
+    app,
+    routes.filter(({ spec }) => spec.raw),
+    deps,
+  )
   app.use('/api', sessionMiddleware(deps))
-  mountRoutes(app, routes.filter(({ spec }) => !spec.raw), deps)
+  mountRoutes(
+    app,
+    routes.filter(({ spec }) => !spec.raw),
+    deps,
+  )
   app.use('/api', () => {
     throw new AppError('not-found', 404)
   })

@@ -36,8 +36,14 @@ export function readConfig(env: Record<string, string | undefined>): Config {
     throw new ConfigError(`Settings that cannot be used:\n${lines.join('\n')}`)
   }
   const config = result.data
-  if (config.NODE_ENV === 'production' && config.PAYMENTS === 'stripe' && config.STRIPE_SECRET_KEY.startsWith('sk_test_')) {
-    throw new ConfigError('Settings that cannot be used:\n  STRIPE_SECRET_KEY: a test key with PAYMENTS=stripe in production')
+  if (
+    config.NODE_ENV === 'production' &&
+    config.PAYMENTS === 'stripe' &&
+    config.STRIPE_SECRET_KEY.startsWith('sk_test_')
+  ) {
+    throw new ConfigError(
+      'Settings that cannot be used:\n  STRIPE_SECRET_KEY: a test key with PAYMENTS=stripe in production',
+    )
   }
   return { ...config, PUBLIC_URL: config.PUBLIC_URL ?? `http://${config.HOST}:${config.PORT}` }
 }

@@ -7,10 +7,13 @@ const folder = path.resolve(import.meta.dirname, '../locales')
 const files = readdirSync(path.join(folder, 'en')).sort()
 
 type Tree = { [key: string]: string | Tree }
-const read = (language: string, file: string) => JSON.parse(readFileSync(path.join(folder, language, file), 'utf8')) as Tree
+const read = (language: string, file: string) =>
+  JSON.parse(readFileSync(path.join(folder, language, file), 'utf8')) as Tree
 
 const flat = (tree: Tree, before = ''): [key: string, text: string][] =>
-  Object.entries(tree).flatMap(([key, value]) => (typeof value === 'string' ? [[before + key, value] as [string, string]] : flat(value, `${before}${key}.`)))
+  Object.entries(tree).flatMap(([key, value]) =>
+    typeof value === 'string' ? [[before + key, value] as [string, string]] : flat(value, `${before}${key}.`),
+  )
 
 /** `basketCount_one` and `basketCount_other` are forms of one text; which forms there are depends on the language. */
 const plural = /_(zero|one|two|few|many|other)$/
@@ -44,12 +47,17 @@ describe.each(locales.filter((language) => language !== 'en'))('texts in %s', (l
   })
 
   it.each(files)('%s leaves no text empty', (file) => {
-    for (const which of ['en', language]) for (const [key, text] of flat(read(which, file))) expect(text.trim(), `${which} ${key}`).not.toBe('')
+    for (const which of ['en', language])
+      for (const [key, text] of flat(read(which, file))) expect(text.trim(), `${which} ${key}`).not.toBe('')
   })
 })
 
 describe('the words of the product', () => {
-  const all = locales.flatMap((language) => files.flatMap((file) => flat(read(language, file)).map(([key, text]) => ({ where: `${language}/${file} ${key}`, text }))))
+  const all = locales.flatMap((language) =>
+    files.flatMap((file) =>
+      flat(read(language, file)).map(([key, text]) => ({ where: `${language}/${file} ${key}`, text })),
+    ),
+  )
 
   it('never promise safety, scold a body or shout', () => {
     const never = /\b(safe|safely|obese|overweight|too fat|lose weight|seguro|segura|obeso|gordo|perca peso)\b|!/i
@@ -60,9 +68,15 @@ describe('the words of the product', () => {
 describe('texts that pages ask for', () => {
   const sources = (dir: string): string[] =>
     readdirSync(dir, { withFileTypes: true }).flatMap((entry) =>
-      entry.isDirectory() ? sources(path.join(dir, entry.name)) : /\.tsx?$/.test(entry.name) ? [path.join(dir, entry.name)] : [],
+      entry.isDirectory()
+        ? sources(path.join(dir, entry.name))
+        : /\.tsx?$/.test(entry.name)
+          ? [path.join(dir, entry.name)]
+          : [],
     )
-  const texts = new Set(files.flatMap((file) => flat(read('en', file)).map(([key]) => `${file.replace('.json', '')}:${base(key)}`)))
+  const texts = new Set(
+    files.flatMap((file) => flat(read('en', file)).map(([key]) => `${file.replace('.json', '')}:${base(key)}`)),
+  )
 
   it('exist in English, wherever a key is written out in full', () => {
     const missing: string[] = []

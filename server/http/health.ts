@@ -10,7 +10,14 @@ const status = z.object({ status: z.literal('ok') })
 
 export const healthRoutes: Route[] = [
   route(
-    { method: 'get', path: '/api/health/live', feature: 'health', access: 'anyone', summary: 'The process answers', reply: status },
+    {
+      method: 'get',
+      path: '/api/health/live',
+      feature: 'health',
+      access: 'anyone',
+      summary: 'The process answers',
+      reply: status,
+    },
     () => Promise.resolve({ status: 'ok' as const }),
   ),
   route(

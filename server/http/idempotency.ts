@@ -30,7 +30,9 @@ export async function once(
   }
   if (!/^[\x21-\x7e]{8,80}$/.test(key)) throw badField('Idempotency-Key', 'not-valid')
   const scope = `${req.method} ${req.path} ${caller}`.slice(0, 120)
-  const requestHash = createHash('sha256').update(JSON.stringify(req.body ?? null)).digest('hex')
+  const requestHash = createHash('sha256')
+    .update(JSON.stringify(req.body ?? null))
+    .digest('hex')
 
   try {
     await IdempotencyKey.create({ scope, key, requestHash, state: 'running', createdAt: clock() })
@@ -49,7 +51,10 @@ export async function once(
   }
   try {
     const given = await answer()
-    await IdempotencyKey.update({ state: 'done', status: given.status, body: given.body as object }, { where: { scope, key } })
+    await IdempotencyKey.update(
+      { state: 'done', status: given.status, body: given.body as object },
+      { where: { scope, key } },
+    )
     return given
   } catch (error) {
     await IdempotencyKey.destroy({ where: { scope, key } })

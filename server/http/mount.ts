@@ -17,7 +17,10 @@ function mayCall(access: Access, user: SignedIn | null) {
 }
 
 const jsonOnly: RequestHandler = (req, _res, next) => {
-  const hasBody = req.headers['content-length'] !== undefined ? req.headers['content-length'] !== '0' : req.headers['transfer-encoding'] !== undefined
+  const hasBody =
+    req.headers['content-length'] !== undefined
+      ? req.headers['content-length'] !== '0'
+      : req.headers['transfer-encoding'] !== undefined
   next(hasBody && !req.is('application/json') ? new AppError('json-only', 415) : undefined)
 }
 
@@ -30,14 +33,19 @@ export function mountRoutes(app: Express, routes: readonly Route[], deps: Deps) 
       const body = spec.body ? spec.body.parse(req.body ?? {}) : undefined
       const user = res.locals.user as SignedIn | null
       const call = { deps, req, res, params, query, body, user } as never
-      const answer = async () => ({ status: spec.status ?? 200, body: spec.contentType ? undefined : spec.reply.parse(await handle(call)) })
+      const answer = async () => ({
+        status: spec.status ?? 200,
+        body: spec.contentType ? undefined : spec.reply.parse(await handle(call)),
+      })
 
       if (spec.contentType) {
         await handle(call)
         return
       }
       const caller = user ? `user ${user.id}` : `session ${req.sessionID}`
-      const { status, body: reply } = spec.idempotency ? await once(req, caller, spec.idempotency, deps.clock, answer) : await answer()
+      const { status, body: reply } = spec.idempotency
+        ? await once(req, caller, spec.idempotency, deps.clock, answer)
+        : await answer()
       if (!res.hasHeader('Cache-Control')) res.set('Cache-Control', 'no-store')
       res.status(status).json(reply)
     }

@@ -13,7 +13,10 @@ const schemaOf = (schema: z.ZodType, io: 'input' | 'output'): Json => {
 
 function parameters(schema: z.ZodType | undefined, where: 'path' | 'query'): Json[] {
   if (!schema) return []
-  const { properties = {}, required = [] } = schemaOf(schema, 'input') as { properties?: Record<string, Json>; required?: string[] }
+  const { properties = {}, required = [] } = schemaOf(schema, 'input') as {
+    properties?: Record<string, Json>
+    required?: string[]
+  }
   return Object.entries(properties).map(([name, one]) => ({
     name,
     in: where,
@@ -45,19 +48,32 @@ export function openApiDocument(routes: readonly Route[], publicUrl: string): Js
       summary: spec.summary,
       'x-roles': spec.access === 'anyone' ? ['anyone'] : [...spec.access],
       security: spec.access === 'anyone' ? [] : [{ session: [] }],
-      parameters: [...parameters(spec.params, 'path'), ...parameters(spec.query, 'query'), ...(spec.idempotency ? [key] : [])],
+      parameters: [
+        ...parameters(spec.params, 'path'),
+        ...parameters(spec.query, 'query'),
+        ...(spec.idempotency ? [key] : []),
+      ],
       responses: {
         [status]: {
           description: spec.summary,
-          content: spec.contentType ? { [spec.contentType]: {} } : { 'application/json': { schema: schemaOf(spec.reply, 'output') } },
+          content: spec.contentType
+            ? { [spec.contentType]: {} }
+            : { 'application/json': { schema: schemaOf(spec.reply, 'output') } },
         },
-        ...(spec.body || spec.query || spec.params ? { 400: problemAnswer('A field is wrong; `errors` names it') } : {}),
-        ...(spec.access === 'anyone' ? {} : { 401: problemAnswer('Nobody is signed in'), 403: problemAnswer('The role may not do this') }),
+        ...(spec.body || spec.query || spec.params
+          ? { 400: problemAnswer('A field is wrong; `errors` names it') }
+          : {}),
+        ...(spec.access === 'anyone'
+          ? {}
+          : { 401: problemAnswer('Nobody is signed in'), 403: problemAnswer('The role may not do this') }),
         default: problemAnswer('Any other refusal'),
       },
     }
     if (spec.body) {
-      operation.requestBody = { required: true, content: { 'application/json': { schema: schemaOf(spec.body, 'input') } } }
+      operation.requestBody = {
+        required: true,
+        content: { 'application/json': { schema: schemaOf(spec.body, 'input') } },
+      }
     } else if (spec.raw) {
       operation.requestBody = { required: true, content: { 'application/json': { schema: { type: 'object' } } } }
     }
@@ -69,7 +85,8 @@ export function openApiDocument(routes: readonly Route[], publicUrl: string): Js
     info: {
       title: 'Felloe',
       version: '1',
-      description: 'Units stand in the field names; SI on the wire; money in minor units beside an ISO 4217 currency. Errors are RFC 9457 problems.',
+      description:
+        'Units stand in the field names; SI on the wire; money in minor units beside an ISO 4217 currency. Errors are RFC 9457 problems.',
     },
     servers: [{ url: publicUrl }],
     paths,

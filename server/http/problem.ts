@@ -8,7 +8,13 @@ import type { Problem } from '#contract/common.ts'
 import { AppError, type FieldError } from './errors.ts'
 import { localeOf, textsIn } from './texts.ts'
 
-const connectionCodes = new Set(['ECONNREFUSED', 'ECONNRESET', 'ER_GET_CONNECTION_TIMEOUT', 'ER_SOCKET_UNEXPECTED_CLOSE', 'ER_CONNECTION_TIMEOUT'])
+const connectionCodes = new Set([
+  'ECONNREFUSED',
+  'ECONNRESET',
+  'ER_GET_CONNECTION_TIMEOUT',
+  'ER_SOCKET_UNEXPECTED_CLOSE',
+  'ER_CONNECTION_TIMEOUT',
+])
 
 export function toAppError(error: unknown): AppError | null {
   if (error instanceof AppError) return error
@@ -33,13 +39,37 @@ function fieldErrors(issue: core.$ZodIssue): FieldError[] {
     case 'unrecognized_keys':
       return issue.keys.map((key) => ({ path: [...path, key].join('.'), code: 'unknown' }))
     case 'invalid_type':
-      return [{ path: path.join('.'), code: issue.input === undefined ? 'required' : 'wrong-type', data: { expected: issue.expected } }]
+      return [
+        {
+          path: path.join('.'),
+          code: issue.input === undefined ? 'required' : 'wrong-type',
+          data: { expected: issue.expected },
+        },
+      ]
     case 'too_small':
-      return [{ path: path.join('.'), code: issue.origin === 'string' ? 'too-short' : 'too-small', data: { minimum: Number(issue.minimum) } }]
+      return [
+        {
+          path: path.join('.'),
+          code: issue.origin === 'string' ? 'too-short' : 'too-small',
+          data: { minimum: Number(issue.minimum) },
+        },
+      ]
     case 'too_big':
-      return [{ path: path.join('.'), code: issue.origin === 'string' ? 'too-long' : 'too-large', data: { maximum: Number(issue.maximum) } }]
+      return [
+        {
+          path: path.join('.'),
+          code: issue.origin === 'string' ? 'too-long' : 'too-large',
+          data: { maximum: Number(issue.maximum) },
+        },
+      ]
     case 'invalid_value':
-      return [{ path: path.join('.'), code: issue.input === undefined ? 'required' : 'not-a-choice', data: { choices: issue.values.join(', ') } }]
+      return [
+        {
+          path: path.join('.'),
+          code: issue.input === undefined ? 'required' : 'not-a-choice',
+          data: { choices: issue.values.join(', ') },
+        },
+      ]
     case 'custom':
       return [{ path: path.join('.'), code: /^[a-z-]+$/.test(issue.message) ? issue.message : 'not-valid' }]
     default:
@@ -60,7 +90,13 @@ function sendProblem(req: Request, res: Response, error: AppError) {
     requestId: String(req.id),
     ...(Object.keys(error.data).length > 0 ? { data: error.data } : {}),
     ...(fields
-      ? { errors: fields.map(({ path, code, data }) => ({ path, code, message: t([`errors:field.${code}`, 'errors:field.not-valid'], data ?? {}) })) }
+      ? {
+          errors: fields.map(({ path, code, data }) => ({
+            path,
+            code,
+            message: t([`errors:field.${code}`, 'errors:field.not-valid'], data ?? {}),
+          })),
+        }
       : {}),
   }
   if (error.status === 503) res.set('Retry-After', '2')

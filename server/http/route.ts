@@ -12,7 +12,12 @@ export type Access = 'anyone' | readonly Role[]
 type Schema = z.ZodType
 type Out<S extends Schema | undefined> = S extends Schema ? z.output<S> : undefined
 
-export interface RouteSpec<P extends Schema | undefined, Q extends Schema | undefined, B extends Schema | undefined, R extends Schema> {
+export interface RouteSpec<
+  P extends Schema | undefined,
+  Q extends Schema | undefined,
+  B extends Schema | undefined,
+  R extends Schema,
+> {
   method: 'get' | 'post' | 'put' | 'patch' | 'delete'
   /** Express form, `/api/orders/:orderNumber`. */
   path: string

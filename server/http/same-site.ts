@@ -17,6 +17,9 @@ export const sameSiteOnly =
     const site = req.get('sec-fetch-site')
     const origin = req.get('origin')
     const ownOrigins = [new URL(publicUrl).origin, `${req.protocol}://${req.get('host') ?? ''}`]
-    const foreign = site !== undefined ? site !== 'same-origin' && site !== 'none' : origin !== undefined && !ownOrigins.includes(origin)
+    const foreign =
+      site !== undefined
+        ? site !== 'same-origin' && site !== 'none'
+        : origin !== undefined && !ownOrigins.includes(origin)
     next(foreign ? new AppError('other-site', 403) : undefined)
   }

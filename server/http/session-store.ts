@@ -56,7 +56,10 @@ export class SqlSessionStore extends Store {
     this.touched.set(sid, now)
     this.db
       .query('UPDATE sessions SET expires_at = ? WHERE sid_hash = ?', { replacements: [this.expiry(), hash(sid)] })
-      .then(() => done?.(), () => done?.())
+      .then(
+        () => done?.(),
+        () => done?.(),
+      )
   }
 
   private expiry() {

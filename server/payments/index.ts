@@ -42,5 +42,9 @@ export interface Payments {
   expireCheckout(sessionId: string): Promise<void>
   /** @throws AppError bad-signature, 400 */
   readEvent(rawBody: Buffer, signature: string): PaymentEvent
-  refund(request: { paymentIntentId: string; amountCents: number; idempotencyKey: string }): Promise<{ refundId: string; done: boolean }>
+  refund(request: {
+    paymentIntentId: string
+    amountCents: number
+    idempotencyKey: string
+  }): Promise<{ refundId: string; done: boolean }>
 }

@@ -78,7 +78,7 @@ export function inventLife(
   }
   if (random.chance(withAdvice ? 0.03 : 0.4)) {
     if (!move('queried', 'query', 'support', later(HOUR, 20 * HOUR), random.pick(queryReasons))) return steps
-    if (!move('cleared', 'cleared', 'support', later(5 * HOUR, 2 * DAY), 'Buyer answered; all as ordered.'))
+    if (!move('cleared', 'cleared', 'support', later(12 * HOUR, 5 * DAY), 'Buyer answered; all as ordered.'))
       return steps
   } else if (!move('cleared', 'cleared', 'machine', later(1 * MINUTE, 20 * HOUR))) return steps
   if (build === 'bench') {

@@ -20,7 +20,10 @@ export function Layout() {
   }, [pathname])
   return (
     <div className="flex min-h-dvh flex-col">
-      <a href="#page" className="absolute start-2 top-2 z-50 -translate-y-20 bg-ink px-4 py-3 text-sheet focus:translate-y-0">
+      <a
+        href="#page"
+        className="absolute start-2 top-2 z-50 -translate-y-20 bg-ink px-4 py-3 text-sheet focus:translate-y-0"
+      >
         {t('nav.skip')}
       </a>
       <Header />

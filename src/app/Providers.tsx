@@ -10,7 +10,8 @@ const client = new QueryClient({
       staleTime: 30_000,
       refetchOnWindowFocus: false,
       // What the server refused it will refuse again; only lost connections and faults are tried twice more.
-      retry: (count, error) => count < 2 && (!(error instanceof ApiError) || error.problem.status === 0 || error.problem.status >= 500),
+      retry: (count, error) =>
+        count < 2 && (!(error instanceof ApiError) || error.problem.status === 0 || error.problem.status >= 500),
     },
   },
 })

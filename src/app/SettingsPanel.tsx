@@ -27,7 +27,11 @@ export function SettingsPanel() {
     }
   }, [])
   const countries = new Intl.DisplayNames([i18n.language], { type: 'region' })
-  const choose = <K extends keyof Preferences>(name: K, values: readonly Preferences[K][], word: (value: Preferences[K]) => string) => (
+  const choose = <K extends keyof Preferences>(
+    name: K,
+    values: readonly Preferences[K][],
+    word: (value: Preferences[K]) => string,
+  ) => (
     <label className="block">
       <span className="block text-xs text-soft">{t(`settings.${name}`)}</span>
       <Select

@@ -24,13 +24,25 @@ export const router = createBrowserRouter([
           { path: 'working', ...page(async () => (await import('../pages/advisor/WorkingPage.tsx')).WorkingPage) },
           // catalogue
           { path: 'range', ...page(async () => (await import('../pages/catalogue/RangePage.tsx')).RangePage) },
-          { path: 'range/:slug', ...page(async () => (await import('../pages/catalogue/WheelsetPage.tsx')).WheelsetPage) },
-          { path: 'side-by-side', ...page(async () => (await import('../pages/catalogue/SideBySidePage.tsx')).SideBySidePage) },
+          {
+            path: 'range/:slug',
+            ...page(async () => (await import('../pages/catalogue/WheelsetPage.tsx')).WheelsetPage),
+          },
+          {
+            path: 'side-by-side',
+            ...page(async () => (await import('../pages/catalogue/SideBySidePage.tsx')).SideBySidePage),
+          },
           // basket, checkout
           { path: 'basket', ...page(async () => (await import('../pages/basket/BasketPage.tsx')).BasketPage) },
           { path: 'checkout', ...page(async () => (await import('../pages/checkout/CheckoutPage.tsx')).CheckoutPage) },
-          { path: 'orders/:orderNumber', ...page(async () => (await import('../pages/checkout/OrderPage.tsx')).OrderPage) },
-          { path: 'orders/:orderNumber/left', ...page(async () => (await import('../pages/checkout/LeftPage.tsx')).LeftPage) },
+          {
+            path: 'orders/:orderNumber',
+            ...page(async () => (await import('../pages/checkout/OrderPage.tsx')).OrderPage),
+          },
+          {
+            path: 'orders/:orderNumber/left',
+            ...page(async () => (await import('../pages/checkout/LeftPage.tsx')).LeftPage),
+          },
           // account
           { path: 'sign-in', ...page(async () => (await import('../pages/account/SignInPage.tsx')).SignInPage) },
           { path: 'account', ...page(async () => (await import('../pages/account/AccountPage.tsx')).AccountPage) },

@@ -20,9 +20,23 @@ const look = ({ kind = 'main', small = false }: Look, extra?: string) =>
   [base, kinds[kind], small ? 'min-h-9! px-3! py-1.5! text-sm!' : '', extra ?? ''].join(' ')
 
 /** `busy` keeps the words in place and refuses a second click. */
-export function Button({ kind, small, busy = false, className, children, disabled, ...rest }: ComponentProps<'button'> & Look & { busy?: boolean }) {
+export function Button({
+  kind,
+  small,
+  busy = false,
+  className,
+  children,
+  disabled,
+  ...rest
+}: ComponentProps<'button'> & Look & { busy?: boolean }) {
   return (
-    <button type="button" {...rest} className={look({ kind, small }, className)} disabled={(disabled ?? false) || busy} aria-busy={busy || undefined}>
+    <button
+      type="button"
+      {...rest}
+      className={look({ kind, small }, className)}
+      disabled={(disabled ?? false) || busy}
+      aria-busy={busy || undefined}
+    >
       {children}
     </button>
   )

@@ -23,7 +23,16 @@ interface ChoicesProps<V extends string> {
 const grids = { 1: '', 2: 'sm:grid-cols-2', 3: 'sm:grid-cols-2 lg:grid-cols-3' }
 
 /** One of several, as large radio cards. Native radios underneath: arrow keys, forms and screen readers work as people know them. */
-export function Choices<V extends string>({ legend, legendHidden = false, name, choices, value, onChange, columns = 1, error }: ChoicesProps<V>) {
+export function Choices<V extends string>({
+  legend,
+  legendHidden = false,
+  name,
+  choices,
+  value,
+  onChange,
+  columns = 1,
+  error,
+}: ChoicesProps<V>) {
   return (
     <fieldset aria-describedby={error !== undefined ? `${name}-error` : undefined}>
       <legend className={legendHidden ? 'sr-only' : 'mb-2 text-lg font-bold'}>{legend}</legend>
@@ -45,10 +54,15 @@ export function Choices<V extends string>({ legend, legendHidden = false, name, 
                   onChange(choice.value)
                 }}
               />
-              <span aria-hidden className={`size-4 flex-none rounded-full border-[1.5px] ${on ? 'border-[5px] border-own' : 'border-strong'}`} />
+              <span
+                aria-hidden
+                className={`size-4 flex-none rounded-full border-[1.5px] ${on ? 'border-[5px] border-own' : 'border-strong'}`}
+              />
               <span className="min-w-0 flex-1">
                 <span className="block font-[650] leading-snug">{choice.label}</span>
-                {choice.hint !== undefined && <span className="block text-sm leading-snug text-soft">{choice.hint}</span>}
+                {choice.hint !== undefined && (
+                  <span className="block text-sm leading-snug text-soft">{choice.hint}</span>
+                )}
               </span>
               {choice.picture}
             </label>

@@ -11,7 +11,9 @@ interface FieldProps {
 /** Label above, hint below it, error beside the control and tied to it. */
 export function Field({ label, hint, error, className, children }: FieldProps) {
   const id = useId()
-  const described = [hint !== undefined ? `${id}-hint` : '', error !== undefined ? `${id}-error` : ''].filter(Boolean).join(' ')
+  const described = [hint !== undefined ? `${id}-hint` : '', error !== undefined ? `${id}-error` : '']
+    .filter(Boolean)
+    .join(' ')
   return (
     <div className={className}>
       <label htmlFor={id} className="block font-[650]">
@@ -34,12 +36,17 @@ export function Field({ label, hint, error, className, children }: FieldProps) {
   )
 }
 
-const control = 'min-h-12 w-full border border-strong bg-sheet px-3.5 py-2.5 text-base text-ink aria-invalid:border-2 aria-invalid:border-own'
+const control =
+  'min-h-12 w-full border border-strong bg-sheet px-3.5 py-2.5 text-base text-ink aria-invalid:border-2 aria-invalid:border-own'
 
-export const TextInput = ({ className, ...rest }: ComponentProps<'input'>) => <input {...rest} className={`${control} ${className ?? ''}`} />
+export const TextInput = ({ className, ...rest }: ComponentProps<'input'>) => (
+  <input {...rest} className={`${control} ${className ?? ''}`} />
+)
 
 export const TextArea = ({ className, ...rest }: ComponentProps<'textarea'>) => (
   <textarea rows={4} {...rest} className={`${control} ${className ?? ''}`} />
 )
 
-export const Select = ({ className, ...rest }: ComponentProps<'select'>) => <select {...rest} className={`${control} ${className ?? ''}`} />
+export const Select = ({ className, ...rest }: ComponentProps<'select'>) => (
+  <select {...rest} className={`${control} ${className ?? ''}`} />
+)

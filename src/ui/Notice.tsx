@@ -10,9 +10,22 @@ const tones: Record<Tone, string> = {
 }
 
 /** A calm aside. `stop` is announced at once, the rest when the reader gets there. */
-export function Notice({ tone = 'note', title, children, className }: { tone?: Tone; title?: ReactNode; children?: ReactNode; className?: string }) {
+export function Notice({
+  tone = 'note',
+  title,
+  children,
+  className,
+}: {
+  tone?: Tone
+  title?: ReactNode
+  children?: ReactNode
+  className?: string
+}) {
   return (
-    <div role={tone === 'stop' ? 'alert' : undefined} className={`border-s-[3px] px-4 py-3 text-[0.9375rem] ${tones[tone]} ${className ?? ''}`}>
+    <div
+      role={tone === 'stop' ? 'alert' : undefined}
+      className={`border-s-[3px] px-4 py-3 text-[0.9375rem] ${tones[tone]} ${className ?? ''}`}
+    >
       {title !== undefined && <p className="font-bold">{title}</p>}
       {children}
     </div>

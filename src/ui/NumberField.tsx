@@ -20,7 +20,17 @@ export function parseNumber(text: string): number | null {
   return /^-?\d*\.?\d+$|^-?\d+\.$/.test(trimmed) ? Number(trimmed) : null
 }
 
-export function NumberField({ label, unit, hint, error, value, onChange, large = false, name, className }: NumberFieldProps) {
+export function NumberField({
+  label,
+  unit,
+  hint,
+  error,
+  value,
+  onChange,
+  large = false,
+  name,
+  className,
+}: NumberFieldProps) {
   const [text, setText] = useState(value === null ? '' : String(value))
   // A value that changed from outside (unit switch, reset) replaces the text; the rider's own typing is never rewritten.
   const [seen, setSeen] = useState(value)
@@ -31,7 +41,9 @@ export function NumberField({ label, unit, hint, error, value, onChange, large =
   return (
     <Field label={label} hint={hint} error={error} className={className}>
       {(ids) => (
-        <div className={`flex max-w-72 border bg-sheet ${error !== undefined ? 'border-2 border-own' : 'border-ink'} focus-within:outline-3 focus-within:outline-offset-2 focus-within:outline-own`}>
+        <div
+          className={`flex max-w-72 border bg-sheet ${error !== undefined ? 'border-2 border-own' : 'border-ink'} focus-within:outline-3 focus-within:outline-offset-2 focus-within:outline-own`}
+        >
           <input
             {...ids}
             name={name}

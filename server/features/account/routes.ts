@@ -18,7 +18,8 @@ const limiter = rateLimit({
   standardHeaders: 'draft-8',
   legacyHeaders: false,
   skipSuccessfulRequests: true,
-  keyGenerator: (req) => `${req.ip ?? ''} ${String((req.body as { email?: unknown } | undefined)?.email ?? '').toLowerCase()}`,
+  keyGenerator: (req) =>
+    `${req.ip ?? ''} ${String((req.body as { email?: unknown } | undefined)?.email ?? '').toLowerCase()}`,
   validate: { keyGeneratorIpFallback: false },
   handler: (_req, _res, next) => {
     next(new AppError('too-many-tries', 429))
@@ -33,11 +34,21 @@ const withinLimit = ({ req, res }: Pick<Call<unknown, unknown, unknown>, 'req' |
     })
   })
 
-const view = (user: Awaited<ReturnType<typeof readUser>>) => ({ user: user && { email: user.email, name: user.name, role: user.role, locale: user.locale } })
+const view = (user: Awaited<ReturnType<typeof readUser>>) => ({
+  user: user && { email: user.email, name: user.name, role: user.role, locale: user.locale },
+})
 
 export const accountRoutes: Route[] = [
   route(
-    { method: 'post', path: '/api/session', feature, access: 'anyone', summary: 'Sign in', body: signIn, reply: session },
+    {
+      method: 'post',
+      path: '/api/session',
+      feature,
+      access: 'anyone',
+      summary: 'Sign in',
+      body: signIn,
+      reply: session,
+    },
     async (call) => {
       await withinLimit(call)
       const userId = await checkSignIn(call.body)
@@ -46,7 +57,10 @@ export const accountRoutes: Route[] = [
       return view(await readUser(userId))
     },
   ),
-  route({ method: 'get', path: '/api/session', feature, access: 'anyone', summary: 'Who am I', reply: session }, ({ user }) => Promise.resolve(view(user))),
+  route(
+    { method: 'get', path: '/api/session', feature, access: 'anyone', summary: 'Who am I', reply: session },
+    ({ user }) => Promise.resolve(view(user)),
+  ),
   route(
     { method: 'delete', path: '/api/session', feature, access: 'anyone', summary: 'Sign out', reply: nothing },
     async ({ req, res }) => {
@@ -61,26 +75,67 @@ export const accountRoutes: Route[] = [
     },
   ),
   route(
-    { method: 'get', path: '/api/account/bikes', feature, access: everyRole, summary: 'My bike passports', reply: bikeList },
+    {
+      method: 'get',
+      path: '/api/account/bikes',
+      feature,
+      access: everyRole,
+      summary: 'My bike passports',
+      reply: bikeList,
+    },
     (call) => listBikes(signedIn(call).id),
   ),
   route(
-    { method: 'post', path: '/api/account/bikes', feature, access: everyRole, summary: 'Keep a bike', body: bikeFacts, reply: bike, status: 201, idempotency: 'optional' },
+    {
+      method: 'post',
+      path: '/api/account/bikes',
+      feature,
+      access: everyRole,
+      summary: 'Keep a bike',
+      body: bikeFacts,
+      reply: bike,
+      status: 201,
+      idempotency: 'optional',
+    },
     (call) => addBike(signedIn(call).id, call.body),
   ),
   route(
-    { method: 'put', path: '/api/account/bikes/:bikeId', feature, access: everyRole, summary: 'Change a bike', params: bikeId, body: bikeFacts, reply: bike },
+    {
+      method: 'put',
+      path: '/api/account/bikes/:bikeId',
+      feature,
+      access: everyRole,
+      summary: 'Change a bike',
+      params: bikeId,
+      body: bikeFacts,
+      reply: bike,
+    },
     (call) => changeBike(signedIn(call).id, call.params.bikeId, call.body),
   ),
   route(
-    { method: 'delete', path: '/api/account/bikes/:bikeId', feature, access: everyRole, summary: 'Forget a bike', params: bikeId, reply: nothing },
+    {
+      method: 'delete',
+      path: '/api/account/bikes/:bikeId',
+      feature,
+      access: everyRole,
+      summary: 'Forget a bike',
+      params: bikeId,
+      reply: nothing,
+    },
     async (call) => {
       await removeBike(signedIn(call).id, call.params.bikeId)
       return {}
     },
   ),
   route(
-    { method: 'get', path: '/api/account/orders', feature, access: everyRole, summary: 'My orders', reply: ownOrderList },
+    {
+      method: 'get',
+      path: '/api/account/orders',
+      feature,
+      access: everyRole,
+      summary: 'My orders',
+      reply: ownOrderList,
+    },
     (call) => listOwnOrders(signedIn(call).id),
   ),
 ]

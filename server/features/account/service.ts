@@ -49,7 +49,8 @@ async function ownBike(userId: number, id: number): Promise<Bike> {
   return bike
 }
 
-export const changeBike = async (userId: number, id: number, facts: BikeFacts) => bikeView(await (await ownBike(userId, id)).update(facts))
+export const changeBike = async (userId: number, id: number, facts: BikeFacts) =>
+  bikeView(await (await ownBike(userId, id)).update(facts))
 
 export const removeBike = async (userId: number, id: number) => {
   await (await ownBike(userId, id)).destroy()

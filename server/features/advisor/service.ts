@@ -17,7 +17,11 @@ async function readRules({ clock }: Pick<Deps, 'clock'>): Promise<{ rules: Rules
     raw: true,
   })
   const newest = [...new Map(rows.map((row) => [row.name, row])).values()]
-  const version = newest.map((row) => String(row.version)).sort().at(-1) ?? 'none'
+  const version =
+    newest
+      .map((row) => String(row.version))
+      .sort()
+      .at(-1) ?? 'none'
   return { rules: rulesFrom(newest), version }
 }
 
@@ -27,8 +31,13 @@ async function readRules({ clock }: Pick<Deps, 'clock'>): Promise<{ rules: Rules
  */
 function versionOf(version: string, rules: Rules, catalogue: readonly StoredWheelset[]): string {
   // Words, prices and stock do not enter the advice.
-  const facts = catalogue.map(({ tagline: _t, description: _d, prices: _p, available: _a, version: _v, ...rest }) => rest)
-  const digest = createHash('sha256').update(JSON.stringify([rules, facts])).digest('hex').slice(0, 10)
+  const facts = catalogue.map(
+    ({ tagline: _t, description: _d, prices: _p, available: _a, version: _v, ...rest }) => rest,
+  )
+  const digest = createHash('sha256')
+    .update(JSON.stringify([rules, facts]))
+    .digest('hex')
+    .slice(0, 10)
   return `${version}+${digest}`
 }
 
@@ -42,6 +51,13 @@ export async function keepAdvice(deps: Pick<Deps, 'db' | 'clock'>, answers: Ride
   const advice = await giveAdvice(deps, answers)
   const sha256 = createHash('sha256').update(JSON.stringify({ answers, advice })).digest('hex')
   const id = randomUUID()
-  await AdviceSnapshot.create({ id, userId, answers: { ...answers }, advice: { ...advice }, rulesVersion: advice.rulesVersion, sha256 })
+  await AdviceSnapshot.create({
+    id,
+    userId,
+    answers: { ...answers },
+    advice: { ...advice },
+    rulesVersion: advice.rulesVersion,
+    sha256,
+  })
   return { adviceId: id, sha256, advice }
 }

@@ -97,7 +97,22 @@ export async function readCatalogue(
 }
 
 function emptySet(row: WheelRow): StoredWheelset {
-  const { id, version, sku, slug, name, brake, beadSeatMm, rides, useCondition, buildKind, limitKg, limitProof, tagline, description } = row
+  const {
+    id,
+    version,
+    sku,
+    slug,
+    name,
+    brake,
+    beadSeatMm,
+    rides,
+    useCondition,
+    buildKind,
+    limitKg,
+    limitProof,
+    tagline,
+    description,
+  } = row
   return {
     id,
     version,

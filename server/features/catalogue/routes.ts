@@ -35,7 +35,14 @@ export const catalogueRoutes: Route[] = [
     ({ deps, req, params, query }) => readWheelset(deps, params.slug, query.lng ?? localeOf(req)),
   ),
   route(
-    { method: 'get', path: '/api/markets', feature, access: 'anyone', summary: 'Where we deliver, at what price and tax', reply: marketList },
+    {
+      method: 'get',
+      path: '/api/markets',
+      feature,
+      access: 'anyone',
+      summary: 'Where we deliver, at what price and tax',
+      reply: marketList,
+    },
     async () => {
       const markets = await Market.findAll({ order: ['code'] })
       return {

@@ -17,7 +17,8 @@ const matches = (set: Wheelset, f: WheelsetFilters): boolean =>
   (f.depthToMm === undefined || set.front.depthMm <= f.depthToMm) &&
   (f.spokesFrom === undefined || set.rear.spokeCount >= f.spokesFrom) &&
   (f.limitFromKg === undefined || set.limitKg >= f.limitFromKg) &&
-  (f.tyreMm === undefined || [set.front, set.rear].every((w) => w.tyreMinMm <= (f.tyreMm ?? 0) && w.tyreMaxMm >= (f.tyreMm ?? 0))) &&
+  (f.tyreMm === undefined ||
+    [set.front, set.rear].every((w) => w.tyreMinMm <= (f.tyreMm ?? 0) && w.tyreMaxMm >= (f.tyreMm ?? 0))) &&
   (f.assist === undefined || set.assistRated) &&
   (f.inStock === undefined || set.available > 0) &&
   (f.q === undefined || plain(`${set.name} ${set.tagline} ${set.sku}`).includes(plain(f.q)))
@@ -38,7 +39,10 @@ export async function listWheelsets(deps: Deps, filters: WheelsetFilters, locale
   const key = keys[filters.sort ?? 'name']
   const found = (await readCatalogue(deps, locale))
     .filter((set) => matches(set, filters))
-    .sort((a, b) => key(a, filters) - key(b, filters) || a.name.localeCompare(b.name, 'en') || a.slug.localeCompare(b.slug, 'en'))
+    .sort(
+      (a, b) =>
+        key(a, filters) - key(b, filters) || a.name.localeCompare(b.name, 'en') || a.slug.localeCompare(b.slug, 'en'),
+    )
   const after = filters.cursor === undefined ? 0 : found.findIndex(({ slug }) => slug === filters.cursor) + 1
   if (filters.cursor !== undefined && after === 0) throw badField('cursor', 'not-valid')
   const items = found.slice(after, after + (filters.limit ?? PAGE))

@@ -29,7 +29,10 @@ export function HomePage() {
   const { language } = usePreferences()
   const { data: range } = useQuery(wheelsetsQuery({ lng: language }))
   const sets = range?.items ?? []
-  const hero = sets.find(({ slug }) => slug.startsWith('rowan-45')) ?? sets.find(({ rear, brake }) => rear.depthMm === 45 && brake === 'disc') ?? sets[0]
+  const hero =
+    sets.find(({ slug }) => slug.startsWith('rowan-45')) ??
+    sets.find(({ rear, brake }) => rear.depthMm === 45 && brake === 'disc') ??
+    sets[0]
   const kept = new URLSearchParams(address)
   const to = (ride: string) => {
     const params = new URLSearchParams(kept)
@@ -41,7 +44,10 @@ export function HomePage() {
     <>
       <Sheet>
         <div className="grid lg:grid-cols-[minmax(0,1.02fr)_minmax(0,1fr)]">
-          <section aria-labelledby="first-question" className="order-1 px-5 pt-7 pb-8 md:px-9 md:pt-10 lg:order-2 lg:ps-8">
+          <section
+            aria-labelledby="first-question"
+            className="order-1 px-5 pt-7 pb-8 md:px-9 md:pt-10 lg:order-2 lg:ps-8"
+          >
             <h1 className="max-w-[16ch]">{t('title')}</h1>
             <p className="mt-3 max-w-[56ch] text-soft">{t('lede')}</p>
             <h2 id="first-question" className="mt-7 border-t border-ink pt-4">
@@ -91,7 +97,13 @@ function HeroWheel({ set }: { set: Wheelset | undefined }) {
           className="mt-4"
           items={[
             { label: t('block.wheel'), value: <Link to={`/range/${set.slug}`}>{set.name}</Link> },
-            { label: t('block.lacing'), value: t(rear.crossesRight === 0 ? 'radial' : 'lacing', { count: rear.spokeCount, crosses: rear.crossesRight }) },
+            {
+              label: t('block.lacing'),
+              value: t(rear.crossesRight === 0 ? 'radial' : 'lacing', {
+                count: rear.spokeCount,
+                crosses: rear.crossesRight,
+              }),
+            },
             { label: t('block.limit'), value: format.mass(set.limitKg, 'down').text },
             { label: t('block.mass'), value: format.grams(set.massG) },
           ]}
@@ -109,7 +121,12 @@ function Example() {
   const { front, rear } = data.pressure
   const unit = format.pressure(front.startBar).unit
   const figures = [
-    { label: t('example.total'), parts: [{ value: format.mass(data.systemMassKg, 'up').value }], unit: format.mass(data.systemMassKg, 'up').unit, own: true },
+    {
+      label: t('example.total'),
+      parts: [{ value: format.mass(data.systemMassKg, 'up').value }],
+      unit: format.mass(data.systemMassKg, 'up').unit,
+      own: true,
+    },
     {
       label: t('example.pressure'),
       parts: [
@@ -171,7 +188,10 @@ function Points() {
   return (
     <section className="grid border-t border-ink md:grid-cols-3">
       {(['limit', 'honest', 'bench'] as const).map((point) => (
-        <div key={point} className="border-line px-5 py-6 not-first:border-t md:px-9 md:not-first:border-s md:not-first:border-t-0">
+        <div
+          key={point}
+          className="border-line px-5 py-6 not-first:border-t md:px-9 md:not-first:border-s md:not-first:border-t-0"
+        >
           <h2>{t(`points.${point}.title`)}</h2>
           <p className="mt-1.5 text-[0.9375rem] text-soft">{t(`points.${point}.text`)}</p>
         </div>
@@ -187,7 +207,9 @@ function FromTheRange({ sets }: { sets: readonly Wheelset[] }) {
   const { currency } = usePreferences()
   const picked = (['road-long', 'gravel', 'climbing', 'cross-country'] as const).flatMap((ride, index, all) => {
     const earlier = all.slice(0, index)
-    const one = sets.find((set) => set.available > 0 && set.rides.includes(ride) && !earlier.some((other) => set.rides.includes(other)))
+    const one = sets.find(
+      (set) => set.available > 0 && set.rides.includes(ride) && !earlier.some((other) => set.rides.includes(other)),
+    )
     return one ? [one] : []
   })
   if (picked.length === 0) return null
@@ -206,13 +228,18 @@ function FromTheRange({ sets }: { sets: readonly Wheelset[] }) {
           return (
             <li key={set.sku} className="bg-sheet">
               <Link to={`/range/${set.slug}`} className="group block h-full p-4 no-underline">
-                <WheelDrawing size="card" label="" wheel={{ ...set.rear, beadSeatMm: set.beadSeatMm, tyreWidthMm: set.rear.tyreMinMm }} />
+                <WheelDrawing
+                  size="card"
+                  label=""
+                  wheel={{ ...set.rear, beadSeatMm: set.beadSeatMm, tyreWidthMm: set.rear.tyreMinMm }}
+                />
                 <p className="mt-3 flex items-baseline justify-between gap-2">
                   <span className="text-lg font-bold group-hover:underline">{set.name}</span>
                   {price !== undefined && <span className="text-sm">{format.money(price, currency)}</span>}
                 </p>
                 <p className="text-sm text-soft">
-                  {t(depths, { depth: set.rear.depthMm, front: set.front.depthMm, rear: set.rear.depthMm })} · {t('range.limit', { limit: format.mass(set.limitKg, 'down').text })}
+                  {t(depths, { depth: set.rear.depthMm, front: set.front.depthMm, rear: set.rear.depthMm })} ·{' '}
+                  {t('range.limit', { limit: format.mass(set.limitKg, 'down').text })}
                 </p>
               </Link>
             </li>
