@@ -1,0 +1,118 @@
+/** Starting, finding and stopping processes. Every one is in a group of its own, so that Ctrl-C reaches the launcher alone and it decides the order. */
+import { spawn } from 'node:child_process'
+import { openSync, closeSync, readFileSync, readdirSync, renameSync, statSync } from 'node:fs'
+import { pause } from './trouble.mjs'
+
+const LOG_BYTES = 5_000_000
+
+/** Opens a log for adding; a long one is put aside first, so that two are the most there ever are. */
+export function openLog(file) {
+  const size = statSync(file, { throwIfNoEntry: false })?.size ?? 0
+  if (size > LOG_BYTES) renameSync(file, `${file}.old`)
+  return openSync(file, 'a', 0o600)
+}
+
+/**
+ * Starts a program that keeps running, its output in `log`.
+ * @param ipc keep a channel open, so that the child notices the launcher's end (see leash.mjs)
+ * @returns { child, ended: Promise<string> how it ended, hasEnded() }
+ */
+export function launch(program, args, { cwd, env, log, ipc = false }) {
+  const out = openLog(log)
+  const stdio = ['ignore', out, out, ...(ipc ? ['ipc'] : [])]
+  const child = spawn(program, args, { cwd, env, stdio, detached: true })
+  closeSync(out)
+  let end = null
+  const ended = new Promise((resolve) => {
+    const finish = (how) => {
+      end ??= how
+      resolve(end)
+    }
+    child.once('error', (error) => finish(error.message))
+    child.once('exit', (code, signal) => finish(signal ? `ended by ${signal}` : `ended with code ${code}`))
+  })
+  return { child, ended, hasEnded: () => end !== null }
+}
+
+/** TERM, and KILL for one that has not gone after `patienceMs`. */
+export async function stop({ child, ended, hasEnded }, patienceMs) {
+  if (hasEnded()) return
+  child.kill('SIGTERM')
+  const kill = setTimeout(() => child.kill('SIGKILL'), patienceMs)
+  await ended
+  clearTimeout(kill)
+}
+
+/** Running tools (npm, apt, vite, …), so that a signal in the middle of an installation can end them. */
+const tools = new Set()
+
+/**
+ * Runs a program to its end.
+ * @returns { code, output } output holds both streams, in order
+ */
+export function run(program, args, { cwd, env } = {}) {
+  return new Promise((resolve) => {
+    const child = spawn(program, args, { cwd, env, stdio: ['ignore', 'pipe', 'pipe'], detached: true })
+    tools.add(child)
+    let output = ''
+    const add = (chunk) => (output += chunk)
+    child.stdout.on('data', add)
+    child.stderr.on('data', add)
+    child.once('error', (error) => {
+      tools.delete(child)
+      resolve({ code: 127, output: error.message })
+    })
+    child.once('close', (code) => {
+      tools.delete(child)
+      resolve({ code: code ?? 1, output })
+    })
+  })
+}
+
+export function stopTools() {
+  for (const { pid } of tools) {
+    try {
+      process.kill(-pid, 'SIGTERM')
+    } catch {
+      // gone already
+    }
+  }
+}
+
+/** Pids whose command line holds this argument: what an earlier launcher that was killed has left behind. */
+export function findProcesses(argument) {
+  return readdirSync('/proc')
+    .filter((name) => /^\d+$/.test(name) && Number(name) !== process.pid)
+    .filter((pid) => commandLine(pid).includes(argument))
+    .map(Number)
+}
+
+function commandLine(pid) {
+  try {
+    return readFileSync(`/proc/${pid}/cmdline`, 'utf8').split('\0')
+  } catch {
+    return [] // ended meanwhile
+  }
+}
+
+/** Stops processes that are not our children. @returns the pids that may not be stopped by this user */
+export async function stopLeftovers(argument, patienceMs) {
+  const refused = []
+  const signal = (name) => {
+    for (const pid of findProcesses(argument)) {
+      try {
+        process.kill(pid, name)
+      } catch (error) {
+        if (error.code === 'EPERM') refused.push(pid)
+      }
+    }
+  }
+  signal('SIGTERM')
+  for (let waited = 0; findProcesses(argument).length > refused.length && waited < patienceMs; waited += 25)
+    await pause(25)
+  if (findProcesses(argument).length > refused.length) {
+    signal('SIGKILL')
+    await pause(50)
+  }
+  return refused
+}

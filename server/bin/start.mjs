@@ -1,0 +1,149 @@
+/**
+ * `npm start`: installs what is missing, starts MariaDB, migrates, seeds once, builds, starts the shop and its local stand-ins.
+ * Plain Node without any package, because it runs before there are any. Every step has a file in launch/.
+ * Ends with code 0 after a signal and 1 after anything else; whatever it started is stopped in reverse order.
+ */
+import path from 'node:path'
+import { build, entryFile } from './launch/build.mjs'
+import { lastLines, startChild, stopLeftChildren, waitForPort, waitForReady } from './launch/children.mjs'
+import { openDataDir, secretSettings } from './launch/data-dir.mjs'
+import { startDatabase } from './launch/database.mjs'
+import { MARIADB, assertInstallable, cleanEnv, installDebian, installPackages } from './launch/install.mjs'
+import { assertFree } from './launch/ports.mjs'
+import { run, stopTools } from './launch/processes.mjs'
+import { ROOT, bracketed, checkNode, localUrl, readSettings } from './launch/settings.mjs'
+import { Trouble, tail } from './launch/trouble.mjs'
+
+const say = (line) => process.stdout.write(`${line}\n`)
+const near = (folder) => path.relative(ROOT, folder) || folder
+
+/** What was started, in order: each { name, stop, ended }. */
+const started = []
+let stopping = null
+
+/** Stops everything, newest first, and ends. Only the first call counts: npm passes a Ctrl-C on a second time. */
+function finish(code) {
+  stopping ??= (async () => {
+    stopTools()
+    while (started.length > 0) await started.pop().stop()
+    process.exit(code)
+  })()
+  return stopping
+}
+
+function keep(one) {
+  started.push(one)
+  void one.ended.then((how) => {
+    if (stopping || !one.watched) return
+    process.stderr.write(`${one.name} ${how}, so everything is stopped. The end of its log:\n${lastLines(one)}\n`)
+    void finish(1)
+  })
+  return one
+}
+
+async function start() {
+  checkNode()
+  const settings = readSettings(process.env)
+  const { host, port, ports, payments, dataDir, buildDir } = settings
+  const ownDatabase = settings.databaseUrl === null
+  // without the hosted service and a mail server of the owner's there is something to stand in for
+  const needsFakes = payments === 'stripe-fake' || !process.env.SMTP_URL
+
+  // everything that can be refused is refused before anything is made
+  if (ownDatabase) {
+    assertInstallable(
+      MARIADB.what,
+      MARIADB.programs,
+      MARIADB.packages,
+      ', or set DATABASE_URL to a MariaDB that is there',
+    )
+  }
+  openDataDir(dataDir)
+  await stopLeftChildren(dataDir)
+  await assertFree(needsFakes ? ports : ports.slice(0, 1))
+  const secrets = secretSettings(dataDir, payments, process.env)
+
+  const database = ownDatabase
+    ? installDebian(MARIADB.what, MARIADB.programs, MARIADB.packages, say).then(() => openDatabase(settings))
+    : Promise.resolve({ shopUrl: settings.databaseUrl, migrateUrl: settings.migrateUrl })
+  const built = installPackages('runtime', say).then(() => build(buildDir, say))
+  const [{ shopUrl, migrateUrl }] = await Promise.all([database, built])
+  if (stopping) return
+
+  await migrate(entryFile(buildDir, 'migrate'), migrateUrl, ownDatabase)
+  if (stopping) return
+
+  const [, payPort, mailPort, smtpPort] = ports.map((one) => one.port)
+  const env = {
+    ...cleanEnv(process.env),
+    ...(process.env.NODE_ENV && { NODE_ENV: process.env.NODE_ENV }),
+    ...secrets,
+    TZ: 'UTC',
+    DATABASE_URL: shopUrl,
+    HOST: host,
+    PORT: String(port),
+    DATA_DIR: dataDir,
+    PUBLIC_URL: process.env.PUBLIC_URL || localUrl(host, port),
+    PAYMENTS: payments,
+    STRIPE_FAKE_PORT: String(payPort),
+    MAIL_SINK_PORT: String(mailPort),
+    SMTP_PORT: String(smtpPort),
+    SMTP_URL: process.env.SMTP_URL || `smtp://127.0.0.1:${smtpPort}`,
+  }
+  delete env.MIGRATE_DATABASE_URL
+
+  const shop = () => startChild('shop', entryFile(buildDir, 'index'), { dataDir, env })
+  if (needsFakes) {
+    // the stand-ins have no business with the database
+    const fakesEnv = { ...env }
+    delete fakesEnv.DATABASE_URL
+    const fakes = keep(startChild('stand-ins', entryFile(buildDir, 'fakes'), { dataDir, env: fakesEnv }))
+    const theShop = keep(shop())
+    for (const one of [payPort, mailPort, smtpPort]) await waitForPort(fakes, '127.0.0.1', one)
+    await waitForReady(theShop, host, port)
+  } else {
+    await waitForReady(keep(shop()), host, port)
+  }
+  if (stopping) return
+  for (const one of started) {
+    one.watched = true
+    if (one.hasEnded()) throw new Trouble(`${one.name} ${await one.ended}: see ${one.log}.`)
+  }
+
+  if (payments === 'stripe-fake') say(`  payments (stand-in)  http://127.0.0.1:${payPort}`)
+  if (needsFakes) say(`  mails to read        http://127.0.0.1:${mailPort}`)
+  say(`  data and logs        ${near(dataDir)}`)
+  say(`Felloe is ready at http://${bracketed(host)}:${port}`)
+}
+
+async function openDatabase({ dataDir, ports }) {
+  if (stopping) return {}
+  const taken = ports.map((one) => one.port)
+  const database = await startDatabase(dataDir, taken, say)
+  const { ended, hasEnded } = database.process
+  keep({ name: 'MariaDB', log: path.join(dataDir, 'mariadb/error.log'), ended, hasEnded, stop: () => database.stop() })
+  await database.ready()
+  return database
+}
+
+async function migrate(file, url, ownDatabase) {
+  const { code, output } = await run(process.execPath, [file, 'seed'], {
+    cwd: ROOT,
+    env: { ...cleanEnv(process.env), TZ: 'UTC', DATABASE_URL: url },
+  })
+  if (code === 0 || stopping) return
+  const where = ownDatabase ? 'the database' : 'the database that DATABASE_URL names'
+  throw new Trouble(`The tables could not be brought up to date in ${where}: the reason is below.\n${tail(output)}`)
+}
+
+for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => void finish(0))
+// a reader that went away (npm start | head) is no reason to leave processes behind
+for (const stream of [process.stdout, process.stderr]) stream.on('error', () => {})
+
+try {
+  await start()
+} catch (error) {
+  if (stopping) await stopping
+  process.stderr.write(`${error instanceof Trouble ? error.message : error.stack}\n`)
+  await finish(1)
+}
