@@ -5,8 +5,8 @@ import { run } from './processes.mjs'
 import { ROOT } from './settings.mjs'
 import { Trouble, tail } from './trouble.mjs'
 
-/** Where Debian puts programs; /usr/sbin is not on everybody's PATH. */
-const FOLDERS = () => [...new Set([...(process.env.PATH ?? '').split(':'), '/usr/sbin', '/usr/bin', '/sbin', '/bin'])]
+/** PATH, and /usr/sbin, where Debian puts servers and which is on root's PATH alone. */
+const FOLDERS = () => [...(process.env.PATH ?? '').split(':'), '/usr/sbin']
 
 /** @returns the full path of a program, or null */
 export function findProgram(name) {
