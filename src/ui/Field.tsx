@@ -5,12 +5,15 @@ interface FieldProps {
   hint?: ReactNode
   error?: string | undefined
   className?: string
+  /** For a control that others point at by a name of their own. */
+  id?: string
   children: (ids: { id: string; 'aria-describedby': string | undefined; 'aria-invalid': true | undefined }) => ReactNode
 }
 
 /** Label above, hint below it, error beside the control and tied to it. */
-export function Field({ label, hint, error, className, children }: FieldProps) {
-  const id = useId()
+export function Field({ label, hint, error, className, id: given, children }: FieldProps) {
+  const own = useId()
+  const id = given ?? own
   const described = [hint !== undefined ? `${id}-hint` : '', error !== undefined ? `${id}-error` : '']
     .filter(Boolean)
     .join(' ')
