@@ -7,7 +7,7 @@ import path from 'node:path'
 import { build, entryFile } from './launch/build.mjs'
 import { lastLines, startChild, stopLeftChildren, waitForPort, waitForReady } from './launch/children.mjs'
 import { openDataDir, secretSettings } from './launch/data-dir.mjs'
-import { startDatabase } from './launch/database.mjs'
+import { prepareDatabase } from './launch/database.mjs'
 import { MARIADB, assertInstallable, cleanEnv, installDebian, installPackages } from './launch/install.mjs'
 import { assertFree } from './launch/ports.mjs'
 import { run, stopTools } from './launch/processes.mjs'
@@ -24,7 +24,7 @@ let stopping = null
 /** Stops everything, newest first, and ends. Only the first call counts: npm passes a Ctrl-C on a second time. */
 function finish(code) {
   stopping ??= (async () => {
-    stopTools()
+    await stopTools(8_000)
     while (started.length > 0) await started.pop().stop()
     process.exit(code)
   })()
@@ -119,7 +119,9 @@ async function start() {
 async function openDatabase({ dataDir, ports }) {
   if (stopping) return {}
   const taken = ports.map((one) => one.port)
-  const database = await startDatabase(dataDir, taken, say)
+  const startServer = await prepareDatabase(dataDir, taken, say)
+  if (stopping) return {}
+  const database = startServer()
   const { ended, hasEnded } = database.process
   keep({ name: 'MariaDB', log: path.join(dataDir, 'mariadb/error.log'), ended, hasEnded, stop: () => database.stop() })
   await database.ready()

@@ -101,9 +101,10 @@ export async function installDebian(what, programs, packages, say) {
   const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' }
   const wait = ['-o', 'DPkg::Lock::Timeout=120']
   // a failed update is told by the installation: with good lists from earlier it may well work
-  const update = await run('apt-get', ['update', '-qq', ...wait], { env })
+  const update = await run('apt-get', ['update', '-qq', ...wait], { env, uninterrupted: true })
   const { code, output } = await run('apt-get', ['install', '-y', '--no-install-recommends', ...wait, ...packages], {
     env,
+    uninterrupted: true,
   })
   if (code !== 0 || !programs.every((name) => findProgram(name))) {
     throw new Trouble(

@@ -1,6 +1,9 @@
 /** Starting, finding and stopping processes. Every one is in a group of its own, so that Ctrl-C reaches the launcher alone and it decides the order. */
 import { spawn } from 'node:child_process'
-import { openSync, closeSync, readFileSync, readdirSync, renameSync, statSync } from 'node:fs'
+import { randomUUID } from 'node:crypto'
+import { closeSync, openSync, readFileSync, readdirSync, renameSync, rmSync, statSync } from 'node:fs'
+import os from 'node:os'
+import path from 'node:path'
 import { pause } from './trouble.mjs'
 
 const LOG_BYTES = 5_000_000
@@ -48,34 +51,42 @@ const tools = new Set()
 
 /**
  * Runs a program to its end.
+ * @param options uninterrupted: never signalled, and it writes to a file that stays when we are gone, as half-configured
+ *   Debian packages would be left behind otherwise
  * @returns { code, output } output holds both streams, in order
  */
-export function run(program, args, { cwd, env } = {}) {
+export function run(program, args, { cwd, env, uninterrupted = false } = {}) {
+  const file = path.join(os.tmpdir(), `felloe-${process.pid}-${randomUUID()}.log`)
+  const out = openSync(file, 'wx+', 0o600)
   return new Promise((resolve) => {
-    const child = spawn(program, args, { cwd, env, stdio: ['ignore', 'pipe', 'pipe'], detached: true })
-    tools.add(child)
-    let output = ''
-    const add = (chunk) => (output += chunk)
-    child.stdout.on('data', add)
-    child.stderr.on('data', add)
-    child.once('error', (error) => {
-      tools.delete(child)
-      resolve({ code: 127, output: error.message })
-    })
-    child.once('close', (code) => {
-      tools.delete(child)
-      resolve({ code: code ?? 1, output })
-    })
+    const child = spawn(program, args, { cwd, env, stdio: ['ignore', out, out], detached: true })
+    const tool = { pid: child.pid, uninterrupted }
+    tools.add(tool)
+    const finish = (code, reason = '') => {
+      if (!tools.delete(tool)) return
+      const output = readFileSync(file, 'utf8') + reason
+      closeSync(out)
+      rmSync(file)
+      resolve({ code, output })
+    }
+    child.once('error', (error) => finish(127, error.message))
+    child.once('exit', (code) => finish(code ?? 1))
   })
 }
 
-export function stopTools() {
-  for (const { pid } of tools) {
-    try {
-      process.kill(-pid, 'SIGTERM')
-    } catch {
-      // gone already
-    }
+/** Ends running tools, or waits a while for those that should not be interrupted. */
+export async function stopTools(patienceMs) {
+  for (const { pid, uninterrupted } of tools) {
+    if (!uninterrupted) signalGroup(pid)
+  }
+  for (let waited = 0; tools.size > 0 && waited < patienceMs; waited += 25) await pause(25)
+}
+
+function signalGroup(pid) {
+  try {
+    process.kill(-pid, 'SIGTERM')
+  } catch {
+    // gone already
   }
 }
 
