@@ -76,7 +76,7 @@ export function inventLife(
     move('dropped', 'dropped', 'support', later(2 * HOUR, 60 * HOUR), random.pick(dropReasons))
     return steps
   }
-  if (random.chance(withAdvice ? 0.03 : 0.4)) {
+  if (random.chance(withAdvice ? 0.05 : 0.5)) {
     if (!move('queried', 'query', 'support', later(HOUR, 20 * HOUR), random.pick(queryReasons))) return steps
     if (!move('cleared', 'cleared', 'support', later(12 * HOUR, 5 * DAY), 'Buyer answered; all as ordered.'))
       return steps

@@ -93,9 +93,9 @@ function choose(random: Prng, at: Date, snapshots: ReturnType<typeof snapshotRow
   if (random.chance(0.1)) return [anyOne()]
   for (let tries = 0; tries < 20; tries += 1) {
     const answers = inventAnswers(random)
-    const { advice, rulesVersion, offers } = demoAdvice(answers)
+    const { advice, offers } = demoAdvice(answers)
     if (offers.length === 0) continue
-    const snapshot = snapshotRow(random.uuid(), answers, advice, rulesVersion, at)
+    const snapshot = snapshotRow(random.uuid(), { ...answers }, { ...advice }, advice.rulesVersion, at)
     snapshots.push(snapshot)
     const pick = ({ wheelset, noMargin }: (typeof offers)[number]): Chosen => ({
       wheelset,

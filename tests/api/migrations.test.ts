@@ -2,6 +2,7 @@
 import { createHash } from 'node:crypto'
 import { QueryTypes, type Sequelize } from 'sequelize'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { advice as adviceShape, riderAnswers } from '#contract/advisor.ts'
 import { inTransaction, openDatabase } from '../../server/db.ts'
 import { readCatalogue } from '../../server/features/catalogue/read.ts'
 import { migrator } from '../../server/migrations/index.ts'
@@ -365,6 +366,8 @@ describe('the demo seed', () => {
       'SELECT sha256, answers, advice FROM advice_snapshots',
     )
     for (const { sha256, answers, advice } of snapshots) {
+      expect(riderAnswers.safeParse(answers).error).toBeUndefined()
+      expect(adviceShape.safeParse(advice).error).toBeUndefined()
       expect(createHash('sha256').update(JSON.stringify({ answers, advice })).digest('hex')).toBe(sha256)
     }
   })
