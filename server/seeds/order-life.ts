@@ -76,11 +76,11 @@ export function inventLife(
     move('dropped', 'dropped', 'support', later(2 * HOUR, 60 * HOUR), random.pick(dropReasons))
     return steps
   }
-  if (random.chance(withAdvice ? 0.05 : 0.5)) {
+  if (random.chance(withAdvice ? 0.08 : 0.6)) {
     if (!move('queried', 'query', 'support', later(HOUR, 20 * HOUR), random.pick(queryReasons))) return steps
     if (!move('cleared', 'cleared', 'support', later(12 * HOUR, 5 * DAY), 'Buyer answered; all as ordered.'))
       return steps
-  } else if (!move('cleared', 'cleared', 'machine', later(1 * MINUTE, 20 * HOUR))) return steps
+  } else if (!move('cleared', 'cleared', 'machine', later(1 * HOUR, 36 * HOUR))) return steps
   if (build === 'bench') {
     if (!move('queued', 'queued', 'machine', later(HOUR, DAY))) return steps
     if (!move('build-started', 'on-bench', 'machine', later(2 * DAY, 7 * DAY))) return steps

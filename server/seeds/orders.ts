@@ -14,7 +14,7 @@ import { demoUsers } from './users.ts'
 const ORDERS = 400
 const DAY_MS = 86_400_000
 /** The last fortnight is a busy one, so that the desk has orders in every state. */
-const RECENT = { orders: 45, days: 14 }
+const RECENT = { orders: 64, days: 14 }
 const SEED = 20261201
 const RIDER = demoUsers[0]
 /** Orders of the rider who can sign in, by their place in the row. */

@@ -282,7 +282,7 @@ describe('the demo seed', () => {
       0,
     )
     const states = (await all<{ state: string }>('SELECT DISTINCT state FROM orders')).map(({ state }) => state)
-    expect(states).toEqual(expect.arrayContaining(['placed', 'cleared', 'queued', 'on-bench', 'handed-over', 'arrived', 'settled', 'dropped'])) // prettier-ignore
+    expect(states).toEqual(expect.arrayContaining(['placed', 'query', 'cleared', 'queued', 'on-bench', 'handed-over', 'arrived', 'settled', 'dropped'])) // prettier-ignore
     expect(states).not.toContain('holding')
     expect(await one("SELECT COUNT(*) FROM orders WHERE email NOT LIKE '%.example'")).toBe(0)
   })
