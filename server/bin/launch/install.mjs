@@ -42,8 +42,9 @@ export function packagesState(kind, root = ROOT) {
   const there = readPackages(path.join(root, 'node_modules/.package-lock.json'))
   if (!there) return 'none'
   const complete = Object.entries(wanted).every(([name, one]) => {
-    // optional ones depend on the machine
-    if (name === '' || one.optional || one.devOptional || (kind === 'runtime' && one.dev)) return true
+    // optional ones depend on the machine; extraneous ones are in the lock file and wanted by nobody
+    if (name === '' || one.optional || one.extraneous || one.os || one.cpu) return true
+    if (kind === 'runtime' && (one.dev || one.devOptional)) return true
     return there[name]?.version === one.version && existsSync(path.join(root, name))
   })
   return complete ? 'complete' : 'some'
