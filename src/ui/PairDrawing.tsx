@@ -15,7 +15,7 @@ interface PairDrawingProps {
 /** Both wheels as half views on one axle, as drawing sheets do it: front on the left of the centre line, rear on the right, upper halves, to scale. */
 export function PairDrawing({ front, rear, label, names, className }: PairDrawingProps) {
   const id = useId()
-  const low = 34
+  const low = 46
   const height = FRAME_MM + low
   return (
     <DrawingFrame
@@ -25,8 +25,8 @@ export function PairDrawing({ front, rear, label, names, className }: PairDrawin
       marks={
         names
           ? [
-              { x: -FRAME_MM, y: 20, text: names.front },
-              { x: FRAME_MM, y: 20, text: names.rear, anchor: 'end' },
+              { x: -FRAME_MM, y: 26, text: names.front },
+              { x: FRAME_MM, y: 26, text: names.rear, anchor: 'end' },
             ]
           : []
       }

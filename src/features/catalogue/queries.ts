@@ -1,5 +1,5 @@
 /** The range as the server has it. Filters travel as they stand in the address. */
-import { queryOptions } from '@tanstack/react-query'
+import { keepPreviousData, queryOptions } from '@tanstack/react-query'
 import { marketList, wheelset, wheelsetList, type Wheelset, type WheelsetList } from '#contract/catalogue.ts'
 import type { Locale } from '#contract/common.ts'
 import { api } from '../../lib/api.ts'
@@ -23,7 +23,7 @@ export const wheelsetsQuery = (asked: Asked) =>
     },
     staleTime: 60_000,
     // While the next answer is on its way the present one stays on the page.
-    placeholderData: (before: WheelsetList | undefined) => before,
+    placeholderData: keepPreviousData,
   })
 
 export const wheelsetQuery = (slug: string, lng: Locale) =>
