@@ -27,7 +27,7 @@ import { limitProof } from './facts.ts'
 import { markets } from './markets.ts'
 import { demoOrders } from './orders.ts'
 import { texts } from './texts.ts'
-import { demoUsers, withPasswordHash } from './users.ts'
+import { demoUserRows } from './users.ts'
 
 /** The demo's present: its orders lie in the year before. */
 export const DEMO_NOW = new Date('2026-12-01T00:00:00.000Z')
@@ -61,20 +61,21 @@ async function migrate(sequelize: Sequelize): Promise<string[]> {
 
 /**
  * The whole demo in one transaction; false when its marker is there. Models must be initialised.
+ * @param orders false leaves out the orders and the rider's bikes: range, markets and people only, as most tests want it
  * @throws PrepareError when there are orders but no marker: that is somebody's real shop
  */
-export async function seedDemo(sequelize: Sequelize): Promise<boolean> {
+export async function seedDemo(sequelize: Sequelize, { orders = true }: { orders?: boolean } = {}): Promise<boolean> {
   if ((await DemoMarker.count()) > 0) return false
   if ((await Order.count()) > 0)
     throw new PrepareError('The database holds orders and no demo marker, so the demo is not put into it.')
-  const users = await Promise.all(demoUsers.map(withPasswordHash))
+  const users = await demoUserRows()
   await sequelize.transaction(async (transaction) => {
     await seedRange(transaction)
     await User.bulkCreate(
       users.map((user) => ({ ...user, activeFrom: DEMO_START, ...dated(DEMO_START) })),
       { transaction },
     )
-    await seedOrders(transaction)
+    if (orders) await seedOrders(transaction)
     await DemoMarker.create({ id: 1, note: DEMO_NOTE, seededAt: DEMO_NOW }, { transaction })
   })
   return true

@@ -49,7 +49,11 @@ export const demoUsers = [
 export const ARGON2 = { memoryCost: 19_456, timeCost: 2, parallelism: 1 }
 
 /** The demo's salts are fixed by the address, as its passwords are public and two seeds must be equal. Real accounts get random salts. */
-export const withPasswordHash = async ({ password, ...user }: (typeof demoUsers)[number]) => {
+const withPasswordHash = async ({ password, ...user }: (typeof demoUsers)[number]) => {
   const salt = createHash('sha256').update(`demo:${user.email}`).digest().subarray(0, 16)
   return { ...user, passwordHash: await hash(password, { ...ARGON2, salt }) }
 }
+
+let rows: Promise<Awaited<ReturnType<typeof withPasswordHash>>[]> | undefined
+/** All of them with their hashes, worked out once in a process: tests seed many times. */
+export const demoUserRows = () => (rows ??= Promise.all(demoUsers.map(withPasswordHash)))

@@ -5,27 +5,32 @@ import { openDatabase } from '../../server/db.ts'
 import { initModels } from '../../server/models/index.ts'
 import { prepareDatabase, seedDemo } from '../../server/seeds/index.ts'
 
+/** true: the whole demo (about a second); 'range': range, markets and people without orders (about a tenth of that); false: nothing. */
+export interface Filling {
+  seed?: boolean | 'range'
+}
+
 export interface TestDatabase {
   sequelize: Sequelize
   /** mariadb://…/t_<worker> */
   url: string
-  /** Deletes every row; with `seed`, puts the demo in again. */
-  reset: (options?: { seed?: boolean }) => Promise<void>
+  /** Deletes every row, then puts in what `seed` names. */
+  reset: (options?: Filling) => Promise<void>
   close: () => Promise<void>
 }
 
 /**
- * The worker's database, migrated; empty, or holding the demo with `seed`. Call in beforeAll, `close` in afterAll.
+ * The worker's database, migrated, holding what `seed` names. Call in beforeAll, `close` in afterAll.
  * Needs TEST_DATABASE_URL: a server whose user may do everything on databases named t_….
  */
-export async function testDatabase({ seed = false }: { seed?: boolean } = {}): Promise<TestDatabase> {
+export async function testDatabase({ seed = false }: Filling = {}): Promise<TestDatabase> {
   const url = await ownDatabaseUrl()
   const sequelize = openDatabase(url)
   initModels(sequelize)
   await prepareDatabase(sequelize, { seed: false })
-  const reset = async (options: { seed?: boolean } = {}) => {
+  const reset = async (options: Filling = {}) => {
     await emptyDatabase(sequelize)
-    if (options.seed) await seedDemo(sequelize)
+    if (options.seed) await seedDemo(sequelize, { orders: options.seed === true })
   }
   await reset({ seed })
   return { sequelize, url, reset, close: () => sequelize.close() }

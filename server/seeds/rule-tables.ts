@@ -1,0 +1,297 @@
+/** The first rule tables: dated data with source and label, which product staff may later replace by newer versions. */
+import type { TableName } from '#core/rules.ts'
+
+export const RULES_VERSION = '2026-12.1'
+
+export interface RuleTableSeed {
+  name: TableName
+  source: string
+  label: 'read' | 'memory' | 'derived' | 'practice'
+  data: unknown
+}
+
+const everyRide = (values: Record<string, number>, rest: number) => ({
+  ...Object.fromEntries(
+    [
+      'road-fast',
+      'road-long',
+      'climbing',
+      'time-trial',
+      'cyclocross',
+      'gravel',
+      'bikepacking',
+      'commute',
+      'cross-country',
+      'trail',
+    ].map((ride) => [ride, rest]),
+  ),
+  ...values,
+})
+
+const limit = (design: string, material: string, depthMm: number, front: string, rear: string) => ({
+  design,
+  material,
+  depthMm,
+  front: front.split(' '),
+  rear: rear.split(' '),
+})
+
+export const ruleTables: readonly RuleTableSeed[] = [
+  {
+    name: 'load-split',
+    label: 'derived',
+    source:
+      'Midpoints of reported splits, ±3 points: road 43/57, endurance 42/58, gravel 41/59, time trial 48/52, mountain 40/60, upright 35/65; scales and force plates in the trade, TBIS 4210-3 dummy',
+    data: {
+      frontShare: {
+        'road-fast': 0.43,
+        'road-long': 0.42,
+        climbing: 0.42,
+        'time-trial': 0.43,
+        cyclocross: 0.41,
+        gravel: 0.41,
+        bikepacking: 0.41,
+        commute: 0.42,
+        'cross-country': 0.41,
+        trail: 0.41,
+        aero: 0.48,
+        upright: 0.35,
+        mountain: 0.4,
+      },
+      luggageFrontShare: { none: 0.5, front: 0.9, frame: 0.5, rear: 0.1, spread: 0.5 },
+    },
+  },
+  {
+    name: 'target-drops',
+    label: 'practice',
+    source:
+      'Drop of the tyre under load by use; judgement tuned to common practice, no source. The 15 % drop goes back to F. Berto, "All About Tire Inflation"',
+    data: {
+      byRide: everyRide(
+        {
+          'road-fast': 0.15,
+          'time-trial': 0.15,
+          commute: 0.155,
+          'road-long': 0.17,
+          climbing: 0.17,
+          bikepacking: 0.175,
+          gravel: 0.185,
+          trail: 0.19,
+          'cross-country': 0.2,
+          cyclocross: 0.23,
+        },
+        0.17,
+      ),
+      fastTubelessFrom28: 0.17,
+      onRoadMost: 0.2,
+      offRoadMost: 0.25,
+      atLimitSlack: 0.02,
+    },
+  },
+  {
+    name: 'assumed-tyre-maxima',
+    label: 'memory',
+    source: 'Usual printed maxima by width; assumed only until the sidewall is read',
+    data: {
+      rows: [
+        [25, 8],
+        [28, 7.5],
+        [30, 7],
+        [32, 6.5],
+        [35, 6],
+        [40, 5.5],
+        [50, 4.5],
+      ],
+      beyondBar: 3,
+    },
+  },
+  {
+    name: 'hookless-caps',
+    label: 'memory',
+    source:
+      'ISO 5775-1:2023 table 3, maximum by nominal width on straight-side rims; second-hand, to be confirmed against the standard',
+    data: {
+      rows: [
+        [24, 5.5],
+        [29, 5],
+        [34, 4.5],
+        [39, 4],
+        [44, 3.5],
+        [54, 3],
+        [64, 2.5],
+        [75, 2],
+      ],
+    },
+  },
+  {
+    name: 'hookless-least-tyres',
+    label: 'memory',
+    source:
+      'Narrowest tyre by inner width on straight-side rims: ETRTO 2023 as told in the trade press (25 mm), the rest from memory; otherwise inner width + 4 mm',
+    data: {
+      rows: [
+        [19, 23],
+        [21, 25],
+        [23, 28],
+        [25, 29],
+      ],
+    },
+  },
+  {
+    name: 'measuring-rims',
+    label: 'memory',
+    source:
+      'ETRTO 2020 and later, measuring rim by tyre width, low to medium confidence; joined by straight lines between the classes',
+    data: {
+      rows: [
+        [20, 13],
+        [25, 19],
+        [28, 19],
+        [29, 21],
+        [34, 21],
+        [35, 23],
+        [46, 23],
+        [47, 25],
+        [57, 25],
+        [60, 30],
+        [65, 30],
+        [69, 35],
+      ],
+    },
+  },
+  {
+    name: 'spoke-limits',
+    label: 'derived',
+    source:
+      'Rider limits by spoke count from a finite-element model of rim and pre-tensioned spokes, ±20–25 %; stands in until the model runs for each design',
+    data: {
+      counts: [16, 20, 24, 28, 32, 36],
+      extraKg: { 'road-rim': 11, 'road-disc': 11, gravel: 14, mountain: 15 },
+      referenceDepthMm: { 'road-rim': 30, 'road-disc': 30, gravel: 30, mountain: 25 },
+      rows: [
+        limit('road-rim', 'alloy', 18, '82Bx 96Cx 111C 121C 133C 145C', '56Bx 61Ax 69Ax 84A 92A 100A'),
+        limit('road-rim', 'alloy', 24, '97Cx 116C 131C 143C 160C 176C', '67Ax 73Ax 84A 102A 112A 123A'),
+        limit('road-rim', 'carbon', 30, '98Bx 119B 137B 144B 152B 168B', '66Bx 78B 92B 92B 105B 117B'),
+        limit('road-rim', 'carbon', 45, '122B 146B 169B 177B 187B 207B', '80Bf 94B 112B 111B 127B 143B'),
+        limit('road-rim', 'carbon', 60, '143B 172B 199B 208B 219B 244B', '94Bf 110B 131B 128B 149B 168B'),
+        limit('road-disc', 'alloy', 24, '75Ex 99Ex 111E 130E 144E 156E', '71Cx 82Cx 95C 108C 121C 134C'),
+        limit('road-disc', 'carbon', 30, '84Bx 92B 112B 118B 135B 151B', '74Bx 82Bf 100B 105B 121B 136B'),
+        limit('road-disc', 'carbon', 45, '95Ef 111B 136B 143B 166B 186B', '91Bf 98Bf 121B 127B 148B 167B'),
+        limit('road-disc', 'carbon', 60, '102Ef 129B 159B 167B 194B 219B', '106Bf 114Bf 141B 148B 173B 196B'),
+        limit('gravel', 'alloy', 24, '75Cx 86Cx 99C 113C 126C 140C', '57Cx 67Cx 78C 90C 101C 112C'),
+        limit('gravel', 'carbon', 30, '86Ex 101Bf 123C 130B 149B 166B', '68Cx 82Cf 97C 113C 126C 139C'),
+        limit('gravel', 'carbon', 45, '96Ef 123Bf 150B 158B 182B 205B', '84Cf 104Cf 123C 140B 158C 175C'),
+        limit('gravel', 'carbon', 60, '103Ef 143Bf 170E 184B 213B 241B', '97Cf 122Cf 142C 163B 184C 204C'),
+        limit('mountain', 'carbon', 25, '64Cx 78Cf 92C 106C 120C 132C', '56Cx 69Cf 81C 95C 107C 118C'),
+        limit('mountain', 'carbon', 30, '66Cx 80Cf 95C 110C 124C 136C', '58Cx 71Cf 84C 98C 110C 121C'),
+        limit('mountain', 'carbon', 45, '83Cf 103Cf 123C 141C 157C 173C', '72Cx 91Cf 108C 124C 139C 153C'),
+        limit('mountain', 'carbon', 60, '98Cf 123Cf 143C 165C 184C 203C', '85Cx 107Cf 125C 144C 162C 179C'),
+      ],
+    },
+  },
+  {
+    name: 'spoke-floors',
+    label: 'practice',
+    source:
+      'Trade floors: rear 28 above 100 kg whatever the rim, rear 32 above 120 kg, 28 for bikepacking and assistance, 32 with heavy luggage, front at most 4 fewer than the rear; common practice, no source',
+    data: {
+      rearAbove100Kg: 28,
+      rearAbove120Kg: 32,
+      bikepacking: 28,
+      assist: 28,
+      loadedFromKg: 20,
+      loaded: 32,
+      frontMayBeFewerBy: 4,
+    },
+  },
+  {
+    name: 'wind',
+    label: 'derived',
+    source:
+      'Words to wind at bike height (Rayleigh mean, design gust) and the correction a rider accepts, in degrees: judgement set on common practice, ±15 mm of depth',
+    data: {
+      meanMs: { sheltered: 1.2, typical: 2.2, exposed: 3.5 },
+      gustMs: { sheltered: 5, typical: 7, exposed: 10 },
+      correctionDeg: { nervous: 2.2, average: 3, confident: 3.8 },
+      aeroBarsFactor: 0.95,
+      speedMs: 10,
+      mountainSpeedMs: 12.5,
+    },
+  },
+  {
+    name: 'depth-clamps',
+    label: 'practice',
+    source: 'Deepest rim by use, whatever the wind: policy on impact, mass and handling, common practice, no source',
+    data: {
+      byRide: everyRide(
+        { climbing: 50, gravel: 50, cyclocross: 50, bikepacking: 45, commute: 45, 'cross-country': 35, trail: 35 },
+        80,
+      ),
+      aeroBarsMm: 90,
+    },
+  },
+  {
+    name: 'terrain',
+    label: 'practice',
+    source: 'Share of the way on the flat and uphill, gradient of the climbs and of the steepest long descents; policy',
+    data: {
+      flatShare: { flat: 0.95, rolling: 0.75, hilly: 0.55, mountain: 0.35 },
+      climbShare: { flat: 0.03, rolling: 0.15, hilly: 0.3, mountain: 0.5 },
+      gradient: { flat: 0.03, rolling: 0.04, hilly: 0.06, mountain: 0.08 },
+      descent: { flat: 0.03, rolling: 0.06, hilly: 0.08, mountain: 0.12 },
+    },
+  },
+  {
+    name: 'brake-heat',
+    label: 'derived',
+    source:
+      'Policy on carbon rim brakes on long descents by total mass, from a lumped rim model, ±30 % of the rise; butyl tubes serve to about 120 °C (MEMORY)',
+    data: {
+      warnAboveKg: 90,
+      steerAboveKg: 105,
+      nervousSteerAboveKg: 90,
+      limitC: 120,
+      rotor160AboveKg: 85,
+      rotor180AboveKg: 120,
+    },
+  },
+  {
+    name: 'limits',
+    label: 'practice',
+    source:
+      'A limit counts rider, clothes, bike and bags; from 95 % on there is no margin; pads need about 4 mm beyond the rim; an assumed bike counts 1 kg more against a limit',
+    data: { noMarginFrom: 0.95, caliperSlackMm: 4, assumedBikeExtraKg: 1 },
+  },
+  {
+    name: 'defaults',
+    label: 'memory',
+    source: 'Usual masses and speeds by use, taken only where the rider did not say, and said aloud',
+    data: {
+      kitMassKg: 3,
+      bikeMassKg: everyRide(
+        { gravel: 10, cyclocross: 9, bikepacking: 11, commute: 13, 'cross-country': 12, trail: 15, 'time-trial': 9 },
+        8.5,
+      ),
+      assistBikeMassKg: 22,
+      bikepackingLuggageKg: 12,
+      flatSpeedKmh: everyRide(
+        {
+          'road-fast': 34,
+          'time-trial': 40,
+          climbing: 27,
+          cyclocross: 26,
+          gravel: 25,
+          bikepacking: 20,
+          commute: 22,
+          'cross-country': 20,
+          trail: 20,
+        },
+        28,
+      ),
+      tyreWidthMm: everyRide(
+        { gravel: 40, bikepacking: 45, cyclocross: 33, commute: 38, 'cross-country': 56, trail: 60 },
+        28,
+      ),
+    },
+  },
+]
