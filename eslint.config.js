@@ -101,7 +101,12 @@ export default tseslint.config(
       'no-console': 'off',
     },
   },
-  { files: ['**/*.{js,mjs}'], ignores: ['src/**'], languageOptions: { globals: nodeGlobals } },
+  {
+    files: ['**/*.{js,mjs}'],
+    ignores: ['src/**'],
+    languageOptions: { globals: nodeGlobals },
+    rules: { 'no-unused-vars': ['error', { varsIgnorePattern: '^_' }] },
+  },
   {
     files: ['src/public/*.js'],
     languageOptions: {

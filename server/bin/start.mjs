@@ -8,10 +8,12 @@ import { build, entryFile } from './launch/build.mjs'
 import { lastLines, startChild, stopLeftChildren, waitForPort, waitForReady } from './launch/children.mjs'
 import { openDataDir, secretSettings } from './launch/data-dir.mjs'
 import { prepareDatabase } from './launch/database.mjs'
+import { shopEnv, standInsEnv } from './launch/environment.mjs'
 import { MARIADB, assertInstallable, cleanEnv, installDebian, installPackages } from './launch/install.mjs'
+import { aloneInCheckout } from './launch/lock.mjs'
 import { assertFree } from './launch/ports.mjs'
 import { run, stopTools } from './launch/processes.mjs'
-import { ROOT, bracketed, checkNode, localUrl, readSettings } from './launch/settings.mjs'
+import { ROOT, bracketed, checkNode, readSettings } from './launch/settings.mjs'
 import { Trouble, tail } from './launch/trouble.mjs'
 
 const say = (line) => process.stdout.write(`${line}\n`)
@@ -44,11 +46,8 @@ function keep(one) {
 async function start() {
   checkNode()
   const settings = readSettings(process.env)
-  const { host, port, ports, payments, dataDir, buildDir } = settings
+  const { host, port, ports, standIns, payments, dataDir, buildDir } = settings
   const ownDatabase = settings.databaseUrl === null
-  // without the hosted service and a mail server of the owner's there is something to stand in for
-  const needsFakes = payments === 'stripe-fake' || !process.env.SMTP_URL
-
   // everything that can be refused is refused before anything is made
   if (ownDatabase) {
     assertInstallable(
@@ -60,58 +59,38 @@ async function start() {
   }
   openDataDir(dataDir)
   await stopLeftChildren(dataDir)
-  await assertFree(needsFakes ? ports : ports.slice(0, 1))
-  const secrets = secretSettings(dataDir, payments, process.env)
+  await assertFree(ports)
 
   const database = ownDatabase
     ? installDebian(MARIADB.what, MARIADB.programs, MARIADB.packages, say).then(() => openDatabase(settings))
     : Promise.resolve({ shopUrl: settings.databaseUrl, migrateUrl: settings.migrateUrl })
-  const built = installPackages('runtime', say).then(() => build(buildDir, say))
+  const built = aloneInCheckout(async () => {
+    await installPackages('runtime', say)
+    await build(buildDir, say)
+  })
   const [{ shopUrl, migrateUrl }] = await Promise.all([database, built])
   if (stopping) return
 
   await migrate(entryFile(buildDir, 'migrate'), migrateUrl, ownDatabase)
   if (stopping) return
 
-  const [, payPort, mailPort, smtpPort] = ports.map((one) => one.port)
-  const env = {
-    ...cleanEnv(process.env),
-    ...(process.env.NODE_ENV && { NODE_ENV: process.env.NODE_ENV }),
-    ...secrets,
-    TZ: 'UTC',
-    DATABASE_URL: shopUrl,
-    HOST: host,
-    PORT: String(port),
-    DATA_DIR: dataDir,
-    PUBLIC_URL: process.env.PUBLIC_URL || localUrl(host, port),
-    PAYMENTS: payments,
-    STRIPE_FAKE_PORT: String(payPort),
-    MAIL_SINK_PORT: String(mailPort),
-    SMTP_PORT: String(smtpPort),
-    SMTP_URL: process.env.SMTP_URL || `smtp://127.0.0.1:${smtpPort}`,
-  }
-  delete env.MIGRATE_DATABASE_URL
-
-  const shop = () => startChild('shop', entryFile(buildDir, 'index'), { dataDir, env })
-  if (needsFakes) {
-    // the stand-ins have no business with the database
-    const fakesEnv = { ...env }
-    delete fakesEnv.DATABASE_URL
-    const fakes = keep(startChild('stand-ins', entryFile(buildDir, 'fakes'), { dataDir, env: fakesEnv }))
-    const theShop = keep(shop())
-    for (const one of [payPort, mailPort, smtpPort]) await waitForPort(fakes, '127.0.0.1', one)
-    await waitForReady(theShop, host, port)
-  } else {
-    await waitForReady(keep(shop()), host, port)
-  }
+  const env = shopEnv(settings, shopUrl, secretSettings(dataDir, payments, process.env), process.env)
+  const startOne = (name, logName, entry, ownEnv) =>
+    keep(startChild(name, logName, entryFile(buildDir, entry), { dataDir, env: ownEnv }))
+  const others = Object.values(standIns)
+  const fakes =
+    others.length > 0 ? startOne('The process of the stand-ins', 'stand-ins', 'fakes', standInsEnv(env)) : null
+  const shop = startOne('The shop', 'shop', 'index', env)
+  for (const one of others) await waitForPort(fakes, one.host, one.port)
+  await waitForReady(shop, host, port)
   if (stopping) return
   for (const one of started) {
     one.watched = true
     if (one.hasEnded()) throw new Trouble(`${one.name} ${await one.ended}: see ${one.log}.`)
   }
 
-  if (payments === 'stripe-fake') say(`  payments (stand-in)  http://127.0.0.1:${payPort}`)
-  if (needsFakes) say(`  mails to read        http://127.0.0.1:${mailPort}`)
+  if (standIns.STRIPE_FAKE_PORT) say(`  payments (stand-in)  http://127.0.0.1:${standIns.STRIPE_FAKE_PORT.port}`)
+  if (standIns.MAIL_SINK_PORT) say(`  mails to read        http://127.0.0.1:${standIns.MAIL_SINK_PORT.port}`)
   say(`  data and logs        ${near(dataDir)}`)
   say(`Felloe is ready at http://${bracketed(host)}:${port}`)
 }

@@ -7,6 +7,7 @@ import { spawn } from 'node:child_process'
 import { existsSync, mkdirSync, readFileSync, rmSync } from 'node:fs'
 import path from 'node:path'
 import { MARIADB, assertInstallable, cleanEnv, installDebian, installPackages } from './launch/install.mjs'
+import { aloneInCheckout } from './launch/lock.mjs'
 import { run } from './launch/processes.mjs'
 import { ROOT, checkNode } from './launch/settings.mjs'
 import { Trouble } from './launch/trouble.mjs'
@@ -83,7 +84,7 @@ async function install() {
   checkNode()
   for (const { what, programs, packages } of [MARIADB, BROWSER]) assertInstallable(what, programs, packages)
   await Promise.all([
-    installPackages('all', say),
+    aloneInCheckout(() => installPackages('all', say)),
     // one after the other: apt works on one thing at a time
     installDebian(MARIADB.what, MARIADB.programs, MARIADB.packages, say).then(() =>
       installDebian(BROWSER.what, BROWSER.programs, BROWSER.packages, say),

@@ -114,7 +114,7 @@ describe('a start that cannot work', () => {
   it('without MariaDB and without root, gives the command to run and makes nothing', async () => {
     // an empty PATH hides MariaDB's programs from the launcher
     const said = await saidBy(launch({ PATH: newFolder() }, asSomebodyElse()))
-    expect(said).toMatch(/^The MariaDB server is not installed .*apt-get install .* mariadb-server.*DATABASE_URL.*\.$/)
+    expect(said).toMatch(/^MariaDB is not installed .*apt-get install .* mariadb-server.*DATABASE_URL.*\.$/)
     expect(readdirSync(dataDir)).toEqual([])
   })
 
@@ -204,7 +204,7 @@ describe('a start that works', () => {
     await one.ready
     kill(processesOf(dataDir, '/server/index.mjs'))
     expect(await one.ended).toBe(1)
-    expect(one.output()).toMatch(/shop ended by SIGKILL/)
+    expect(one.output()).toMatch(/^The shop ended by SIGKILL/m)
     expect(processesOf(dataDir)).toEqual([])
   })
 

@@ -19,11 +19,12 @@ const mark = (dataDir) => `--data-dir=${dataDir}`
 export const stopLeftChildren = (dataDir) => stopLeftovers(mark(dataDir), STOP_MS)
 
 /**
- * Starts one built entry; its output goes to DATA_DIR/logs/<name>.log.
+ * Starts one built entry; its output goes to DATA_DIR/logs/<logName>.log.
+ * @param name how a sentence about it begins
  * @returns { name, log, ended, hasEnded, stop }
  */
-export function startChild(name, file, { dataDir, env }) {
-  const log = path.join(dataDir, 'logs', `${name}.log`)
+export function startChild(name, logName, file, { dataDir, env }) {
+  const log = path.join(dataDir, 'logs', `${logName}.log`)
   const args = ['--enable-source-maps', `--import=${LEASH}`, file, mark(dataDir)]
   const running = launch(process.execPath, args, { cwd: ROOT, env, log, ipc: true })
   return { name, log, ended: running.ended, hasEnded: running.hasEnded, stop: () => stop(running, STOP_MS) }

@@ -1,5 +1,4 @@
 /** The data folder: that it can be used, that only one start uses it, and the secrets that are kept in it. */
-import { spawnSync } from 'node:child_process'
 import { randomBytes } from 'node:crypto'
 import {
   accessSync,
@@ -13,11 +12,11 @@ import {
   writeFileSync,
 } from 'node:fs'
 import path from 'node:path'
+import { takeLock } from './lock.mjs'
 import { Trouble } from './trouble.mjs'
 
 /**
- * Makes the folder if it is not there, and takes its lock. The kernel holds the lock for this process and lets go when
- * it ends, however it ends: there is no stale lock.
+ * Makes the folder if it is not there, and takes its lock.
  * @throws Trouble when the folder cannot be used or another start is using it
  */
 export function openDataDir(dataDir) {
@@ -38,19 +37,14 @@ export function openDataDir(dataDir) {
 }
 
 function lock(file, dataDir) {
-  const fd = openSync(file, 'a', 0o600)
-  // flock(1) locks the open file that it shares with us, so the lock stays when it has ended
-  const { status, error } = spawnSync('flock', ['--exclusive', '--nonblock', '3'], {
-    stdio: ['ignore', 'ignore', 'ignore', fd],
-  })
-  if (error) throw new Trouble('The program flock is missing: install the Debian package util-linux.')
-  if (status !== 0) {
-    const holder = readFileSync(file, 'utf8').trim()
-    throw new Trouble(
-      `Another start${holder && ` (process ${holder})`} is using ${dataDir}: stop it, or set DATA_DIR to another folder.`,
-    )
+  if (takeLock(openSync(file, 'a', 0o600))) {
+    writeFileSync(file, `${process.pid}\n`)
+    return
   }
-  writeFileSync(file, `${process.pid}\n`)
+  const holder = readFileSync(file, 'utf8').trim()
+  throw new Trouble(
+    `Another start${holder && ` (process ${holder})`} is using ${dataDir}: stop it, or set DATA_DIR to another folder.`,
+  )
 }
 
 /**

@@ -115,7 +115,7 @@ export async function installDebian(what, programs, packages, say) {
 }
 
 export const MARIADB = {
-  what: 'The MariaDB server',
+  what: 'MariaDB',
   programs: ['mariadbd', 'mariadb-install-db'],
   packages: ['mariadb-server'],
 }

@@ -52,14 +52,19 @@ const tools = new Set()
 /**
  * Runs a program to its end.
  * @param options uninterrupted: never signalled, and it writes to a file that stays when we are gone, as half-configured
- *   Debian packages would be left behind otherwise
+ *   Debian packages would be left behind otherwise; fd: an open file that it gets as its number 3
  * @returns { code, output } output holds both streams, in order
  */
-export function run(program, args, { cwd, env, uninterrupted = false } = {}) {
+export function run(program, args, { cwd, env, fd, uninterrupted = false } = {}) {
   const file = path.join(os.tmpdir(), `felloe-${process.pid}-${randomUUID()}.log`)
   const out = openSync(file, 'wx+', 0o600)
   return new Promise((resolve) => {
-    const child = spawn(program, args, { cwd, env, stdio: ['ignore', out, out], detached: true })
+    const child = spawn(program, args, {
+      cwd,
+      env,
+      stdio: ['ignore', out, out, ...(fd === undefined ? [] : [fd])],
+      detached: true,
+    })
     const tool = { pid: child.pid, uninterrupted }
     tools.add(tool)
     const finish = (code, reason = '') => {
