@@ -58,14 +58,22 @@ export async function build(buildDir, say) {
   const stamp = path.join(buildDir, STAMP)
   if (existsSync(stamp) && readFileSync(stamp, 'utf8') === hash) return false
   say('Building …')
-  const draft = `${buildDir}.new`
+  const draft = path.join(buildDir, '.new')
   rmSync(draft, { recursive: true, force: true })
   // vite takes NODE_ENV for the kind of React to ship
   const env = { ...cleanEnv(), NODE_ENV: 'production' }
   const results = await Promise.all([
     run(
       process.execPath,
-      ['node_modules/vite/bin/vite.js', 'build', '--outDir', path.join(draft, 'client'), '--emptyOutDir'],
+      [
+        'node_modules/vite/bin/vite.js',
+        'build',
+        // the usual loader writes into node_modules, which may belong to another user
+        '--configLoader=runner',
+        '--outDir',
+        path.join(draft, 'client'),
+        '--emptyOutDir',
+      ],
       {
         cwd: ROOT,
         env,
@@ -79,9 +87,14 @@ export async function build(buildDir, say) {
     rmSync(draft, { recursive: true, force: true })
     throw new Trouble(`The build failed, so nothing was started: the reason is below.\n${tail(failed.output, 30)}`)
   }
-  writeFileSync(path.join(draft, STAMP), hash)
-  rmSync(buildDir, { recursive: true, force: true })
-  renameSync(draft, buildDir)
+  // without the stamp what is there counts as unfinished, should the machine stop between the two
+  rmSync(stamp, { force: true })
+  for (const part of ['client', 'server']) {
+    rmSync(path.join(buildDir, part), { recursive: true, force: true })
+    renameSync(path.join(draft, part), path.join(buildDir, part))
+  }
+  rmSync(draft, { recursive: true })
+  writeFileSync(stamp, hash)
   return true
 }
 
