@@ -1,7 +1,18 @@
 /** What a rider answers and what the advice says. SI units in the names; the lists feed the form as well. */
 import { z } from 'zod'
 
-export const rides = ['road-fast', 'road-long', 'climbing', 'time-trial', 'cyclocross', 'gravel', 'bikepacking', 'commute', 'cross-country', 'trail'] as const
+export const rides = [
+  'road-fast',
+  'road-long',
+  'climbing',
+  'time-trial',
+  'cyclocross',
+  'gravel',
+  'bikepacking',
+  'commute',
+  'cross-country',
+  'trail',
+] as const
 export const brakeKinds = ['rim', 'disc'] as const
 export const tyreSetups = ['tubeless', 'tube', 'tubular'] as const
 export const rimSeats = ['hooked', 'hookless', 'any'] as const
@@ -39,7 +50,11 @@ export const riderAnswers = z
     /** null: the rider does not know; no pressure is then given. */
     tyre: tyreAnswer.nullable(),
     rim: z
-      .strictObject({ seat: z.enum(rimSeats).optional(), innerWidthMm: z.number().min(13).max(40).nullish(), maxBar: bar.nullish() })
+      .strictObject({
+        seat: z.enum(rimSeats).optional(),
+        innerWidthMm: z.number().min(13).max(40).nullish(),
+        maxBar: bar.nullish(),
+      })
       .optional(),
     beadSeatMm: z.number().int().min(200).max(800).optional(),
     ridersOnBike: z.number().int().min(1).max(10).optional(),
@@ -64,9 +79,12 @@ export const riderAnswers = z
   })
   .superRefine((answers, ctx) => {
     const { bodyMassKg, bodyMassBandKg } = answers
-    if (bodyMassKg === undefined && bodyMassBandKg === undefined) ctx.addIssue({ code: 'custom', path: ['bodyMassKg'], message: 'required' })
-    if (bodyMassKg !== undefined && bodyMassBandKg !== undefined) ctx.addIssue({ code: 'custom', path: ['bodyMassBandKg'], message: 'one-of-two' })
-    if (bodyMassBandKg && bodyMassBandKg.from >= bodyMassBandKg.to) ctx.addIssue({ code: 'custom', path: ['bodyMassBandKg'], message: 'band-order' })
+    if (bodyMassKg === undefined && bodyMassBandKg === undefined)
+      ctx.addIssue({ code: 'custom', path: ['bodyMassKg'], message: 'required' })
+    if (bodyMassKg !== undefined && bodyMassBandKg !== undefined)
+      ctx.addIssue({ code: 'custom', path: ['bodyMassBandKg'], message: 'one-of-two' })
+    if (bodyMassBandKg && bodyMassBandKg.from >= bodyMassBandKg.to)
+      ctx.addIssue({ code: 'custom', path: ['bodyMassBandKg'], message: 'band-order' })
   })
 export type RiderAnswers = z.infer<typeof riderAnswers>
 
@@ -84,7 +102,13 @@ const wheelPressure = z.object({
 })
 export type WheelPressure = z.infer<typeof wheelPressure>
 const depthRange = z.object({ from: z.number(), to: z.number() })
-const spokeAdvice = z.object({ min: z.number(), advised: z.number(), governedBy: z.string().optional() })
+const spokeAdvice = z.object({
+  min: z.number(),
+  advised: z.number(),
+  /** What decides: a criterion of the wheel's structure, or a floor of the trade. */
+  governedBy: z.enum(['tension-reserve', 'side-stiffness', 'fatigue', 'torque', 'floor']),
+  beyondTable: z.boolean(),
+})
 const data = z.record(z.string(), z.unknown())
 
 export const note = z.object({ code: z.string(), severity: z.enum(['info', 'caution', 'stop']), data })
@@ -110,7 +134,10 @@ export const wheelsetVerdict = z.object({
   limitKg: z.number(),
   marginKg: z.number(),
   codes: z.array(z.string()),
-  nearestChange: data.optional(),
+  /** The smallest change that would bring it back. */
+  nearestChange: z.object({ code: z.string(), field: z.string(), to: z.unknown() }).optional(),
+  /** Pressures to start from on this wheelset's own rims. */
+  startBar: z.object({ front: z.number(), rear: z.number() }).nullable(),
 })
 
 export const tradeOffPoint = z.object({
@@ -127,13 +154,24 @@ export const advice = z.object({
   assumed: z.array(z.string()),
   outcome: z.enum(outcomes),
   systemMassKg: z.number(),
+  /** The total's parts, as the limits count them. */
+  parts: z.object({ bodyMassKg: z.number(), kitMassKg: z.number(), bikeMassKg: z.number(), luggageKg: z.number() }),
   loads: z.object({ frontN: z.number(), rearN: z.number(), frontShare: z.number() }).nullable(),
   pressure: z.object({ front: wheelPressure, rear: wheelPressure }).nullable(),
   rimDepthMm: z.object({ front: depthRange, rear: depthRange }).nullable(),
   spokes: z.object({ front: spokeAdvice, rear: spokeAdvice }).nullable(),
   wheelsets: z.array(wheelsetVerdict),
   tradeOff: z.array(tradeOffPoint),
-  brakeHeat: z.object({ rimC: z.number(), limitC: z.number(), verdict: z.string() }).loose().nullable(),
+  brakeHeat: z
+    .object({
+      rimC: z.number(),
+      limitC: z.number(),
+      verdict: z.enum(['fine', 'caution', 'alloy-or-disc']),
+      carbonC: z.number(),
+      alloyC: z.number(),
+      gradient: z.number(),
+    })
+    .nullable(),
   notes: z.array(note),
   reasons: z.record(z.string(), reason),
 })

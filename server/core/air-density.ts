@@ -26,7 +26,10 @@ export function airDensity(heightM: number, temperatureC: number | null = null):
  * @source tyres reference 3.15, DERIVED
  * @example gaugeAfter(5, { fromC: 20, toC: 0, fromM: 0, toM: 0 }) // 4.59
  */
-export function gaugeAfter(bar: number, { fromC, toC, fromM, toM }: { fromC: number; toC: number; fromM: number; toM: number }): number {
+export function gaugeAfter(
+  bar: number,
+  { fromC, toC, fromM, toM }: { fromC: number; toC: number; fromM: number; toM: number },
+): number {
   const [before, after] = [airPressure(fromM) / 1e5, airPressure(toM) / 1e5]
   return ((bar + before) * (toC + 273.15)) / (fromC + 273.15) - after
 }

@@ -35,7 +35,8 @@ export const brakingPower = (descent: Descent, speedMs: number) =>
   Math.max(0, (drive(descent) - 0.5 * descent.airDensity * descent.cdaM2 * speedMs ** 2) * speedMs)
 
 /** Speed at which the bike runs free, m/s; 0 where it would not roll. */
-export const freeSpeed = (descent: Descent) => Math.sqrt(Math.max(0, drive(descent)) / (0.5 * descent.airDensity * descent.cdaM2))
+export const freeSpeed = (descent: Descent) =>
+  Math.sqrt(Math.max(0, drive(descent)) / (0.5 * descent.airDensity * descent.cdaM2))
 
 /** Speed of the most braking power (v_T/√3) and of the hottest steady rim (v_T/√5). @source aero reference 2.6, DERIVED */
 export const worstPowerSpeed = (freeSpeedMs: number) => freeSpeedMs / Math.sqrt(3)
@@ -48,8 +49,16 @@ export const worstRimSpeed = (freeSpeedMs: number) => freeSpeedMs / Math.sqrt(5)
  * @returns °C, mean of the heated rim; the track's surface runs hotter by about a fifth
  * @source aero reference 2.6 and 3.9, DERIVED
  */
-export function rimTemperature(rim: RimHeat, watts: number, onThisRim: number, speedMs: number, airC = 20, seconds: number | null = null): number {
-  if (!(watts >= 0 && onThisRim >= 0 && onThisRim <= 1 && speedMs > 0)) throw new RangeError('rimTemperature: out of range')
+export function rimTemperature(
+  rim: RimHeat,
+  watts: number,
+  onThisRim: number,
+  speedMs: number,
+  airC = 20,
+  seconds: number | null = null,
+): number {
+  if (!(watts >= 0 && onThisRim >= 0 && onThisRim <= 1 && speedMs > 0))
+    throw new RangeError('rimTemperature: out of range')
   const loss = (21 * Math.sqrt(speedMs) + rim.radiation) * rim.areaM2
   const rise = (rim.share * onThisRim * watts) / loss
   return airC + (seconds === null ? rise : rise * (1 - Math.exp((-seconds * loss) / rim.capacity)))

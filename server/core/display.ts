@@ -29,7 +29,11 @@ const GUARD = 1e-9
 export function roundTo(value: number, step: number, rounding: Rounding): number {
   const count = value / step
   const whole =
-    rounding === 'down' ? Math.floor(count + GUARD) : rounding === 'up' ? Math.ceil(count - GUARD) : Math.floor(count + 0.5 + GUARD)
+    rounding === 'down'
+      ? Math.floor(count + GUARD)
+      : rounding === 'up'
+        ? Math.ceil(count - GUARD)
+        : Math.floor(count + 0.5 + GUARD)
   // Dividing by the inverse keeps 47 steps of 0.1 at 4.7 instead of 4.7000000000000001.
   return step < 1 ? whole / Math.round(1 / step) : whole * step
 }
@@ -38,10 +42,16 @@ export function roundTo(value: number, step: number, rounding: Rounding): number
  * Converts once and rounds to the unit's display step.
  * @param value kg for masses, bar for pressures, mm for lengths
  */
-export const inUnit = (value: number, unit: Unit, rounding: Rounding): number => roundTo(from[unit](value), steps[unit], rounding)
+export const inUnit = (value: number, unit: Unit, rounding: Rounding): number =>
+  roundTo(from[unit](value), steps[unit], rounding)
 
 /** A recommended pressure as shown: rounded half up, but never above the rounded-down maximum nor below the rounded-up minimum. */
-export function shownPressure(startBar: number, floorBar: number, ceilingBar: number, unit: 'bar' | 'psi' | 'kPa'): number {
+export function shownPressure(
+  startBar: number,
+  floorBar: number,
+  ceilingBar: number,
+  unit: 'bar' | 'psi' | 'kPa',
+): number {
   const most = inUnit(ceilingBar, unit, 'down')
   const least = inUnit(floorBar, unit, 'up')
   return Math.min(most, Math.max(least, inUnit(startBar, unit, 'nearest')))

@@ -29,11 +29,18 @@ export interface Loads {
  */
 export function wheelLoads(unladenKg: number, frontShare: number, luggageKg: number, luggageFrontShare: number): Loads {
   const share = (x: number) => x >= 0 && x <= 1
-  if (!(unladenKg > 0 && luggageKg >= 0 && share(frontShare) && share(luggageFrontShare))) throw new RangeError('wheelLoads: out of range')
+  if (!(unladenKg > 0 && luggageKg >= 0 && share(frontShare) && share(luggageFrontShare)))
+    throw new RangeError('wheelLoads: out of range')
   const frontKg = unladenKg * frontShare + luggageKg * luggageFrontShare
   const totalKg = unladenKg + luggageKg
   const rearKg = totalKg - frontKg
-  return { frontKg, rearKg, frontN: frontKg * STANDARD_GRAVITY, rearN: rearKg * STANDARD_GRAVITY, frontShare: frontKg / totalKg }
+  return {
+    frontKg,
+    rearKg,
+    frontN: frontKg * STANDARD_GRAVITY,
+    rearN: rearKg * STANDARD_GRAVITY,
+    frontShare: frontKg / totalKg,
+  }
 }
 
 /**

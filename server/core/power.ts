@@ -22,8 +22,21 @@ export interface Ride {
  * @returns W in total and by part; the parts are before the chain
  * @source Martin, Milliken, Cobb, McFadden, Coggan 1998, J. Appl. Biomech. 14(3): form READ via two open transcriptions
  */
-export function ridingPower(ride: Ride, kinetic?: { fromMs: number; toMs: number; seconds: number; inertia: number; radiusM: number }) {
-  const { speedMs: v, airSpeedMs, massKg, cdaM2, spokeAreaM2, rollingCoefficient, gradient, airDensity, chainEfficiency } = ride
+export function ridingPower(
+  ride: Ride,
+  kinetic?: { fromMs: number; toMs: number; seconds: number; inertia: number; radiusM: number },
+) {
+  const {
+    speedMs: v,
+    airSpeedMs,
+    massKg,
+    cdaM2,
+    spokeAreaM2,
+    rollingCoefficient,
+    gradient,
+    airDensity,
+    chainEfficiency,
+  } = ride
   const weight = massKg * (ride.gravity ?? STANDARD_GRAVITY)
   const slope = Math.atan(gradient)
   const air = 0.5 * airDensity * (cdaM2 + spokeAreaM2) * airSpeedMs * Math.abs(airSpeedMs) * v
@@ -31,9 +44,17 @@ export function ridingPower(ride: Ride, kinetic?: { fromMs: number; toMs: number
   const bearings = v * (91 + 8.7 * v) * 1e-3
   const climbing = v * weight * Math.sin(slope)
   const accelerating = kinetic
-    ? (0.5 * (massKg + kinetic.inertia / kinetic.radiusM ** 2) * (kinetic.toMs ** 2 - kinetic.fromMs ** 2)) / kinetic.seconds
+    ? (0.5 * (massKg + kinetic.inertia / kinetic.radiusM ** 2) * (kinetic.toMs ** 2 - kinetic.fromMs ** 2)) /
+      kinetic.seconds
     : 0
-  return { total: (air + rolling + bearings + climbing + accelerating) / chainEfficiency, air, rolling, bearings, climbing, accelerating }
+  return {
+    total: (air + rolling + bearings + climbing + accelerating) / chainEfficiency,
+    air,
+    rolling,
+    bearings,
+    climbing,
+    accelerating,
+  }
 }
 
 /** Wind from `fromDeg`, riding towards `headingDeg`. @returns air speed along the road and absolute yaw in degrees @source as above */

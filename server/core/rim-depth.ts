@@ -23,7 +23,8 @@ export function gustMoment(depthMm: number, speedMs: number, gustMs: number): nu
 }
 
 /** Resisting stiffness of the loaded front wheel, N·m: 0.42·(rider + bike)·g·trail. */
-export const steeringStiffness = (bodyMassKg: number, bikeMassKg: number) => 0.42 * (bodyMassKg + bikeMassKg) * STANDARD_GRAVITY * TRAIL_M
+export const steeringStiffness = (bodyMassKg: number, bikeMassKg: number) =>
+  0.42 * (bodyMassKg + bikeMassKg) * STANDARD_GRAVITY * TRAIL_M
 
 /**
  * Deepest front rim whose gust moment asks for no more than `correctionDeg` of lean or steer.
@@ -32,9 +33,16 @@ export const steeringStiffness = (bodyMassKg: number, bikeMassKg: number) => 0.4
  * @source aero reference 2.4, DERIVED; the angles are judgement, the largest weakness of the method (±15 mm)
  * @example frontDepthCap({ bodyMassKg: 75, bikeMassKg: 8, gustMs: 7, speedMs: 10, correctionDeg: 3 }) // 57
  */
-export function frontDepthCap(given: { bodyMassKg: number; bikeMassKg: number; gustMs: number; speedMs: number; correctionDeg: number }): number {
+export function frontDepthCap(given: {
+  bodyMassKg: number
+  bikeMassKg: number
+  gustMs: number
+  speedMs: number
+  correctionDeg: number
+}): number {
   const { bodyMassKg, bikeMassKg, gustMs, speedMs, correctionDeg } = given
-  if (!(bodyMassKg > 0 && bikeMassKg >= 0 && gustMs > 0 && speedMs > 0 && correctionDeg > 0)) throw new RangeError('frontDepthCap: out of range')
+  if (!(bodyMassKg > 0 && bikeMassKg >= 0 && gustMs > 0 && speedMs > 0 && correctionDeg > 0))
+    throw new RangeError('frontDepthCap: out of range')
   const sine = gustMs / Math.hypot(speedMs, gustMs)
   const perArea = LEVER_M * 0.5 * AIR_DENSITY * (speedMs ** 2 + gustMs ** 2) * Math.min(2.2 * sine, 1.2)
   const areaM2 = (((correctionDeg * Math.PI) / 180) * steeringStiffness(bodyMassKg, bikeMassKg)) / perArea
@@ -68,18 +76,32 @@ function riding(given: DepthInputs) {
   const massKg = given.bodyMassKg + given.bikeMassKg
   const cdaM2 = dragArea(given.bodyMassKg) * (given.aeroBars ? 0.75 : 1)
   const still = { massKg, cdaM2, spokeAreaM2: 0, rollingCoefficient: ROLLING, chainEfficiency: CHAIN }
-  const watts = ridingPower({ ...still, speedMs: flatSpeedMs, airSpeedMs: flatSpeedMs, gradient: 0, airDensity: AIR_DENSITY }).total
+  const watts = ridingPower({
+    ...still,
+    speedMs: flatSpeedMs,
+    airSpeedMs: flatSpeedMs,
+    gradient: 0,
+    airDensity: AIR_DENSITY,
+  }).total
   const climbSpeedMs = speedAtPower(watts, { ...still, gradient: given.terrain.gradient, airDensity: 1.2 })
   const saved = new Map<string, number>()
   const savedBy = (depthMm: number, speedMs: number) => {
     const key = `${depthMm} ${speedMs}`
     const known = saved.get(key)
     if (known !== undefined) return known
-    const fresh = meanWattsSaved({ depthMm, speedMs, meanWindMs: given.meanWindMs, airDensity: AIR_DENSITY, chainEfficiency: CHAIN, ...stall(given.wideTyre) })
+    const fresh = meanWattsSaved({
+      depthMm,
+      speedMs,
+      meanWindMs: given.meanWindMs,
+      airDensity: AIR_DENSITY,
+      chainEfficiency: CHAIN,
+      ...stall(given.wideTyre),
+    })
     saved.set(key, fresh)
     return fresh
   }
-  const pair = (frontMm: number, rearMm: number, speedMs: number) => 0.9 * savedBy(frontMm, speedMs) + 0.6 * savedBy(rearMm, speedMs)
+  const pair = (frontMm: number, rearMm: number, speedMs: number) =>
+    0.9 * savedBy(frontMm, speedMs) + 0.6 * savedBy(rearMm, speedMs)
   return { flatSpeedMs, climbSpeedMs, watts, still, pair }
 }
 
@@ -93,7 +115,10 @@ function riding(given: DepthInputs) {
 export function depthRange(given: DepthInputs) {
   const capMm = frontDepthCap({ ...given, speedMs: given.referenceSpeedMs })
   const shallow = capMm < SHALLOWEST_MM
-  const to = Math.max(SHALLOWEST_MM, Math.min(roundTo(Math.min(capMm, 200), 5, 'nearest'), roundTo(given.clampMm, 5, 'down')))
+  const to = Math.max(
+    SHALLOWEST_MM,
+    Math.min(roundTo(Math.min(capMm, 200), 5, 'nearest'), roundTo(given.clampMm, 5, 'down')),
+  )
   const rearTo = Math.min(to + 20, roundTo(given.clampMm, 5, 'down'))
   const { flatSpeedMs, climbSpeedMs, pair } = riding(given)
   const { flatShare, climbShare, gradient } = given.terrain
@@ -101,8 +126,11 @@ export function depthRange(given: DepthInputs) {
   const gain = (frontMm: number) => {
     const rearMm = Math.min(frontMm + 10, rearTo)
     const addedKg = KG_PER_MM * (frontMm - 25 + (rearMm - 25))
-    const massWatts = (addedKg * STANDARD_GRAVITY * (Math.sin(slope) + ROLLING * Math.cos(slope)) * climbSpeedMs) / CHAIN
-    return flatShare * pair(frontMm, rearMm, flatSpeedMs) + climbShare * (pair(frontMm, rearMm, climbSpeedMs) - massWatts)
+    const massWatts =
+      (addedKg * STANDARD_GRAVITY * (Math.sin(slope) + ROLLING * Math.cos(slope)) * climbSpeedMs) / CHAIN
+    return (
+      flatShare * pair(frontMm, rearMm, flatSpeedMs) + climbShare * (pair(frontMm, rearMm, climbSpeedMs) - massWatts)
+    )
   }
   const depths = Array.from({ length: (to - SHALLOWEST_MM) / 5 + 1 }, (_, index) => SHALLOWEST_MM + 5 * index)
   const gains = depths.map(gain)
@@ -122,7 +150,14 @@ export function tradeOff(given: DepthInputs, depthsMm: readonly number[]) {
   const { flatSpeedMs, climbSpeedMs, watts, still, pair } = riding(given)
   const band = given.wideTyre ? 0.6 : 0.35
   const uphill = (cdaChangeM2: number, addedKg: number) =>
-    10_000 / speedAtPower(watts, { ...still, massKg: still.massKg + addedKg, cdaM2: still.cdaM2 + cdaChangeM2, gradient: given.terrain.gradient, airDensity: 1.2 })
+    10_000 /
+    speedAtPower(watts, {
+      ...still,
+      massKg: still.massKg + addedKg,
+      cdaM2: still.cdaM2 + cdaChangeM2,
+      gradient: given.terrain.gradient,
+      airDensity: 1.2,
+    })
   const shallow = uphill(0, 0)
   return depthsMm.map((depthMm) => {
     const wattsSaved = pair(depthMm, depthMm, flatSpeedMs)
@@ -140,5 +175,10 @@ export function tradeOff(given: DepthInputs, depthsMm: readonly number[]) {
 }
 
 /** Gradient below which a deeper, heavier pair is faster at fixed speed: G* = ½ρ|ΔCdA|v²/(Δm·g) − C_rr. @source aero reference 2.5, DERIVED */
-export const breakEvenGradient = (dragChangeM2: number, addedKg: number, speedMs: number, airDensity: number, rolling: number) =>
-  (0.5 * airDensity * Math.abs(dragChangeM2) * speedMs ** 2) / (addedKg * STANDARD_GRAVITY) - rolling
+export const breakEvenGradient = (
+  dragChangeM2: number,
+  addedKg: number,
+  speedMs: number,
+  airDensity: number,
+  rolling: number,
+) => (0.5 * airDensity * Math.abs(dragChangeM2) * speedMs ** 2) / (addedKg * STANDARD_GRAVITY) - rolling

@@ -38,7 +38,11 @@ export const casingTension = (bar: number, widthMm: number) => ((bar / 10) * wid
  * @source tyres reference step 3 and 3.14 (READ for motorcycles, ISO 5751-2:2010; PRACTICE for bicycles); measuring rims MEMORY low-medium
  * @example effectiveWidth(28, 23, rims) // 29.6 with a 28 mm tyre measured on 19 mm
  */
-export function effectiveWidth(nominalMm: number, innerWidthMm: number | null, measuringRims: readonly (readonly [number, number])[]): number {
+export function effectiveWidth(
+  nominalMm: number,
+  innerWidthMm: number | null,
+  measuringRims: readonly (readonly [number, number])[],
+): number {
   if (innerWidthMm === null) return nominalMm
   return nominalMm + 0.4 * (innerWidthMm - interpolate(measuringRims, nominalMm))
 }
@@ -100,7 +104,11 @@ export function bandHalfWidth(loadKg: number, widthMm: number, measured: boolean
   if (widthMm < 20 || widthMm > 60 || loadKg < 25 || loadKg > 80) return null
   const inner = measured ? 0.1 : 0.12
   const ramp = (x: number, from: number, to: number) => Math.min(1, Math.max(0, (x - from) / (to - from)))
-  const outside = Math.max(ramp(widthMm, 37, 38), ramp(loadKg, 65, measured ? 70 : 68), 1 - ramp(loadKg, measured ? 33 : 33.5, 35))
+  const outside = Math.max(
+    ramp(widthMm, 37, 38),
+    ramp(loadKg, 65, measured ? 70 : 68),
+    1 - ramp(loadKg, measured ? 33 : 33.5, 35),
+  )
   return inner + (0.15 - inner) * outside
 }
 
@@ -110,7 +118,13 @@ export function bandHalfWidth(loadKg: number, widthMm: number, measured: boolean
  * @returns mm, or null when none up to 75 mm does
  * @source tyres reference step 8 and 3.11, DERIVED
  */
-export function widthThatWouldDo(loadKg: number, beadSeatMm: number, drop: number, leastMm: number, ceilingAt: (widthMm: number) => number): number | null {
+export function widthThatWouldDo(
+  loadKg: number,
+  beadSeatMm: number,
+  drop: number,
+  leastMm: number,
+  ceilingAt: (widthMm: number) => number,
+): number | null {
   for (let widthMm = Math.max(25, Math.ceil(leastMm)); widthMm <= 75; widthMm += 1) {
     if (pressureAtDrop(pressureAt15(loadKg, widthMm, beadSeatMm), drop) <= ceilingAt(widthMm)) return widthMm
   }

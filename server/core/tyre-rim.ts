@@ -26,7 +26,9 @@ export function pairTyre(pair: {
     if (widthMm < leastTyreMm) return { verdict: 'no', code: 'tyre-too-narrow-for-rim', leastTyreMm }
     if (ratio > 3) return { verdict: 'no', code: 'tyre-too-wide-for-rim', leastTyreMm }
     if (ratio < 1.4) return { verdict: 'check', code: 'narrow-pairing', leastTyreMm }
-    return ratio > 2.25 ? { verdict: 'check', code: 'wide-pairing', leastTyreMm } : { verdict: 'ok', code: 'pairing-ok', leastTyreMm }
+    return ratio > 2.25
+      ? { verdict: 'check', code: 'wide-pairing', leastTyreMm }
+      : { verdict: 'ok', code: 'pairing-ok', leastTyreMm }
   }
   const named = pair.leastOnHookless.find(([inner]) => inner === innerWidthMm)?.[1] ?? 0
   const leastTyreMm = Math.max(named, innerWidthMm + 4)
@@ -56,7 +58,9 @@ export interface Designation {
 export function readDesignation(text: string): Designation | null {
   const tyre = /^\s*(\d{2,3})\s*-\s*(\d{3})\b/.exec(text)
   if (tyre) return { widthMm: Number(tyre[1]), innerWidthMm: null, beadSeatMm: Number(tyre[2]), type: null }
-  const rim = /^\s*(SS|TSS|HB|TC|C)?\s*(\d{2,3}(?:\.\d)?)\s*[x×]\s*(\d{2,3}(?:\.\d)?)\s*(SS|TSS|HB|TC|C)?\s*$/i.exec(text)
+  const rim = /^\s*(SS|TSS|HB|TC|C)?\s*(\d{2,3}(?:\.\d)?)\s*[x×]\s*(\d{2,3}(?:\.\d)?)\s*(SS|TSS|HB|TC|C)?\s*$/i.exec(
+    text,
+  )
   if (!rim) return null
   const [one, other] = [Number(rim[2]), Number(rim[3])]
   const type = (rim[1] ?? rim[4])?.toUpperCase() ?? null
@@ -64,4 +68,5 @@ export function readDesignation(text: string): Designation | null {
 }
 
 /** Use condition of ASTM F2043 for an intended drop. MEMORY, second-hand, confirm against the standard. @param dropM metres */
-export const useConditionForDrop = (dropM: number): 2 | 3 | 4 | 5 => (dropM <= 0.15 ? 2 : dropM < 0.61 ? 3 : dropM < 1.22 ? 4 : 5)
+export const useConditionForDrop = (dropM: number): 2 | 3 | 4 | 5 =>
+  dropM <= 0.15 ? 2 : dropM < 0.61 ? 3 : dropM < 1.22 ? 4 : 5

@@ -13,7 +13,8 @@ const rad = (deg: number) => (deg * Math.PI) / 180
 export const sideArea = (depthMm: number) => Math.PI * (RADIUS_M ** 2 - (RADIUS_M - TYRE_M - depthMm / 1000) ** 2)
 
 /** Side-force area: min(2.2·sin β, 1.2)·A_side. */
-export const sideForceArea = (depthMm: number, yawDeg: number) => Math.min(2.2 * Math.sin(rad(yawDeg)), 1.2) * sideArea(depthMm)
+export const sideForceArea = (depthMm: number, yawDeg: number) =>
+  Math.min(2.2 * Math.sin(rad(yawDeg)), 1.2) * sideArea(depthMm)
 
 /**
  * CdA(d,β) = C0(d) + 0.035·sin²β − η(d)·s(β)·CsA·tan β: the last term is side force turned into push, gone past the stall.
