@@ -15,6 +15,7 @@ import { OutboxMail } from '../models/outbox-mail.ts'
 import { Price } from '../models/price.ts'
 import { Refund } from '../models/refund.ts'
 import { Rim } from '../models/rim.ts'
+import { RuleTable } from '../models/rule-table.ts'
 import { Spoke } from '../models/spoke.ts'
 import { Stock } from '../models/stock.ts'
 import { User } from '../models/user.ts'
@@ -26,6 +27,7 @@ import { catalogue, hubs, rims, spokes } from './catalogue.ts'
 import { limitProof } from './facts.ts'
 import { markets } from './markets.ts'
 import { demoOrders } from './orders.ts'
+import { ruleTables } from './rule-tables.ts'
 import { texts } from './texts.ts'
 import { demoUserRows } from './users.ts'
 
@@ -170,12 +172,26 @@ async function seedRange(transaction: Transaction) {
     catalogue.map(({ id, onHand }) => ({ wheelsetId: id, onHand, ...dated(DEMO_NOW) })),
     { transaction },
   )
+  await RuleTable.bulkCreate(
+    numbered(ruleTables.map(({ name, source, label, data }) => ({ name, source, label, data, version: 1 }))).map(
+      (table) => ({
+        ...table,
+        inForceFrom: DEMO_START,
+        state: 'in-force' as const,
+        ...start,
+      }),
+    ),
+    { transaction },
+  )
 }
 
 async function seedOrders(transaction: Transaction) {
   const demo = demoOrders(DEMO_NOW)
   await Bike.bulkCreate(demo.bikes, { transaction })
-  await AdviceSnapshot.bulkCreate(demo.snapshots, { transaction })
+  // in parts: a whole year of advice in one statement comes near the server's largest packet
+  for (let from = 0; from < demo.snapshots.length; from += 100) {
+    await AdviceSnapshot.bulkCreate(demo.snapshots.slice(from, from + 100), { transaction })
+  }
   await Order.bulkCreate(demo.orders, { transaction })
   await OrderLine.bulkCreate(demo.lines, { transaction })
   await OrderEvent.bulkCreate(demo.events, { transaction })
