@@ -6,6 +6,8 @@ export interface Mark {
   text: ReactNode
   /** Which point of the words lies at x, y. */
   anchor?: 'start' | 'middle' | 'end'
+  /** Words stand on the point instead of around it. */
+  above?: boolean
   /** The dimension that counts is set in the accent colour. */
   own?: boolean
 }
@@ -39,17 +41,17 @@ export function DrawingFrame({ box, label, marks = [], className, children }: Dr
         aria-hidden
         focusable="false"
         viewBox={box.join(' ')}
-        className="block h-auto w-full *:[vector-effect:non-scaling-stroke] [&_*]:[vector-effect:non-scaling-stroke]"
+        className="block h-auto w-full [&_*]:[vector-effect:non-scaling-stroke]"
         fill="none"
         stroke="currentColor"
       >
         {children}
       </svg>
-      {marks.map(({ x, y, text, anchor = 'start', own = false }, index) => (
+      {marks.map(({ x, y, text, anchor = 'start', above = false, own = false }, index) => (
         <span
           key={index}
           aria-hidden
-          className={`absolute -translate-y-1/2 text-[0.8125rem] leading-none whitespace-nowrap tabular-nums ${own ? 'font-bold text-own' : 'font-semibold text-soft'} ${anchors[anchor]}`}
+          className={`absolute ${above ? '-translate-y-full pb-0.5' : '-translate-y-1/2'} text-[0.8125rem] leading-none whitespace-nowrap tabular-nums ${own ? 'font-bold text-own' : 'font-semibold text-soft'} ${anchors[anchor]}`}
           style={{ left: `${((x - left) / width) * 100}%`, top: `${((y - top) / height) * 100}%` }}
         >
           {text}

@@ -29,7 +29,9 @@ export function RimSection({ rim, tyres, label, texts, className }: RimSectionPr
     { x: dimensionX + 2.5, y: rim.depthMm / 2, text: texts.depth, own: true },
     { x: 0, y: rim.depthMm + 12.5, text: texts.outer, anchor: 'middle' },
     { x: 0, y: -5.4, text: texts.inner, anchor: 'middle' },
-    ...(texts.wide === undefined ? [] : [{ x: 0, y: wide.centreY - wide.radius - 4, text: texts.wide, anchor: 'middle' } as const]),
+    ...(texts.wide === undefined
+      ? []
+      : [{ x: 0, y: wide.centreY - wide.radius - 4, text: texts.wide, anchor: 'middle' } as const]),
     ...(texts.narrow === undefined || wide.radius - narrow.radius < 4
       ? []
       : [{ x: 0, y: narrow.centreY - narrow.radius + 5, text: texts.narrow, anchor: 'middle' } as const]),
@@ -39,16 +41,35 @@ export function RimSection({ rim, tyres, label, texts, className }: RimSectionPr
       <pattern id={`${id}h`} width="1.7" height="1.7" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
         <path d="M0 0V1.7" strokeWidth="0.7" />
       </pattern>
-      <path d={`M0 ${-top + 6}V${rim.depthMm + 5}`} stroke="var(--line-strong)" strokeWidth="0.7" strokeDasharray={CENTRE_LINE} />
+      <path
+        d={`M0 ${-top + 6}V${rim.depthMm + 5}`}
+        stroke="var(--line-strong)"
+        strokeWidth="0.7"
+        strokeDasharray={CENTRE_LINE}
+      />
       <path d={tyreArc(wide)} stroke="var(--line-strong)" strokeWidth="1" strokeDasharray="5 4" />
       <path d={tyreArc(narrow)} stroke="var(--soft)" strokeWidth="1.2" />
-      <path d={wall(section, rim.depthMm, 1) + wall(section, rim.depthMm, -1)} fill={`url(#${id}h)`} fillRule="evenodd" stroke="none" />
+      <path
+        d={wall(section, rim.depthMm, 1) + wall(section, rim.depthMm, -1)}
+        fill={`url(#${id}h)`}
+        fillRule="evenodd"
+        stroke="none"
+      />
       {[1, -1].map((side) => (
-        <path key={side} d={`${outline(section, rim.depthMm, side)}${hollow(section, side)}`} strokeWidth="1.5" strokeLinejoin="round" />
+        <path
+          key={side}
+          d={`${outline(section, rim.depthMm, side)}${hollow(section, side)}`}
+          strokeWidth="1.5"
+          strokeLinejoin="round"
+        />
       ))}
       <Across y={-2.6} half={inner} />
       <Across y={rim.depthMm + 8} half={outer} from={Math.min(section.shoulder, rim.depthMm - 4)} />
-      <path d={`M${outer + 1.5} 0H${dimensionX + 1.5}M${section.nose - 1} ${rim.depthMm}H${dimensionX + 1.5}`} stroke="var(--line-strong)" strokeWidth="0.8" />
+      <path
+        d={`M${outer + 1.5} 0H${dimensionX + 1.5}M${section.nose - 1} ${rim.depthMm}H${dimensionX + 1.5}`}
+        stroke="var(--line-strong)"
+        strokeWidth="0.8"
+      />
       <g stroke="var(--own)" strokeWidth="1.8">
         <path d={`M${dimensionX} 0V${rim.depthMm}`} />
         <path d={`M${dimensionX - 1} 1l2 -2M${dimensionX - 1} ${rim.depthMm + 1}l2 -2`} />
@@ -61,8 +82,18 @@ export function RimSection({ rim, tyres, label, texts, className }: RimSectionPr
 function Across({ y, half, from }: { y: number; half: number; from?: number }) {
   return (
     <>
-      {from !== undefined && <path d={`M${-half} ${from}V${y + 1.5}M${half} ${from}V${y + 1.5}`} stroke="var(--line-strong)" strokeWidth="0.8" />}
-      <path d={`M${-half} ${y}H${half}M${-half - 0.8} ${y + 0.8}l1.6 -1.6M${half - 0.8} ${y + 0.8}l1.6 -1.6`} stroke="var(--soft)" strokeWidth="1" />
+      {from !== undefined && (
+        <path
+          d={`M${-half} ${from}V${y + 1.5}M${half} ${from}V${y + 1.5}`}
+          stroke="var(--line-strong)"
+          strokeWidth="0.8"
+        />
+      )}
+      <path
+        d={`M${-half} ${y}H${half}M${-half - 0.8} ${y + 0.8}l1.6 -1.6M${half - 0.8} ${y + 0.8}l1.6 -1.6`}
+        stroke="var(--soft)"
+        strokeWidth="1"
+      />
     </>
   )
 }

@@ -33,7 +33,16 @@ export function WheelDrawing({ wheel, label, size = 'full', dimension, legend, c
         label={label}
         marks={
           full
-            ? [{ x: x + 5, y: -rimOuter - 30, text: dimension ?? `${wheel.depthMm}\u00a0mm`, anchor: 'end', own: true }]
+            ? [
+                {
+                  x: x + 5,
+                  y: -rimOuter - 14,
+                  text: dimension ?? `${wheel.depthMm}\u00a0mm`,
+                  anchor: 'end',
+                  above: true,
+                  own: true,
+                },
+              ]
             : []
         }
       >
@@ -54,28 +63,26 @@ export function WheelDrawing({ wheel, label, size = 'full', dimension, legend, c
           </>
         )}
       </DrawingFrame>
-      {legend && (
-        <p className="mt-2 flex flex-wrap gap-x-5 gap-y-1 text-[0.8125rem] text-soft">
-          {(['drive', 'other'] as const).map((side) => (
-            <span key={side} className="inline-flex items-center gap-2">
-              <svg
-                aria-hidden
-                viewBox="0 0 26 4"
-                className="w-6.5 forced-colors:[--left:LinkText]"
-                stroke={side === 'drive' ? 'currentColor' : 'var(--left)'}
-                strokeWidth="2"
-              >
-                <path
-                  d="M0 2H26"
-                  className={side === 'drive' ? 'text-ink' : ''}
-                  stroke={side === 'drive' ? 'currentColor' : 'var(--left)'}
-                />
-              </svg>
-              {legend[side]}
-            </span>
-          ))}
-        </p>
-      )}
+      {legend && <SideLegend {...legend} />}
     </div>
+  )
+}
+
+/** What the two colours of spokes mean. */
+export function SideLegend({ drive, other }: { drive: ReactNode; other: ReactNode }) {
+  return (
+    <p className="mt-2 flex flex-wrap gap-x-5 gap-y-1 text-[0.8125rem] text-soft">
+      {[
+        { words: drive, stroke: 'text-ink' },
+        { words: other, stroke: 'text-(--left) forced-colors:text-[LinkText] print:text-[#3b5b7c]' },
+      ].map(({ words, stroke }) => (
+        <span key={stroke} className="inline-flex items-center gap-2">
+          <svg aria-hidden viewBox="0 0 26 4" className={`w-6.5 ${stroke}`} stroke="currentColor" strokeWidth="2">
+            <path d="M0 2H26" />
+          </svg>
+          {words}
+        </span>
+      ))}
+    </p>
   )
 }

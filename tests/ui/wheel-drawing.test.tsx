@@ -5,7 +5,15 @@ import { describe, expect, it } from 'vitest'
 import { PairDrawing } from '../../src/ui/PairDrawing.tsx'
 import { RimSection } from '../../src/ui/RimSection.tsx'
 import { WheelDrawing } from '../../src/ui/WheelDrawing.tsx'
-import { onCircle, RIM_EDGE_MM, rimSection, spokeLengthMm, spokeLines, tyreCircle, wheelRadii } from '../../src/ui/wheel-geometry.ts'
+import {
+  onCircle,
+  RIM_EDGE_MM,
+  rimSection,
+  spokeLengthMm,
+  spokeLines,
+  tyreCircle,
+  wheelRadii,
+} from '../../src/ui/wheel-geometry.ts'
 
 const rowan = {
   ...{ beadSeatMm: 622, tyreWidthMm: 28, depthMm: 45, spokeCount: 24, crossesLeft: 2, crossesRight: 2 },
@@ -29,13 +37,17 @@ const lengths: [string, number, number, number, number, number, number][] = [
 ]
 
 describe('spokeLines', () => {
-  it.each(lengths)('%s: every spoke as long as the reference says', (_, seatMm, pcdMm, flangeMm, spokeCount, crosses, expected) => {
-    const wheel = {
-      ...{ ...rowan, spokeCount, crossesLeft: crosses, crossesRight: crosses },
-      ...{ pcdLeftMm: pcdMm, pcdRightMm: pcdMm, flangeLeftMm: flangeMm, flangeRightMm: flangeMm },
-    }
-    for (const spoke of spokeLines(wheel, seatMm)) expect(Math.abs(spokeLengthMm(spoke) - expected)).toBeLessThan(0.0051)
-  })
+  it.each(lengths)(
+    '%s: every spoke as long as the reference says',
+    (_, seatMm, pcdMm, flangeMm, spokeCount, crosses, expected) => {
+      const wheel = {
+        ...{ ...rowan, spokeCount, crossesLeft: crosses, crossesRight: crosses },
+        ...{ pcdLeftMm: pcdMm, pcdRightMm: pcdMm, flangeLeftMm: flangeMm, flangeRightMm: flangeMm },
+      }
+      for (const spoke of spokeLines(wheel, seatMm))
+        expect(Math.abs(spokeLengthMm(spoke) - expected)).toBeLessThan(0.0051)
+    },
+  )
 
   it('hangs half of the spokes on either flange, at its own pitch circle and width', () => {
     const spokes = spokeLines(rowan)
@@ -48,18 +60,32 @@ describe('spokeLines', () => {
   })
 
   it('gives each hole of a flange to one spoke only, whatever the count and the crosses', () => {
-    const builds = fc.constantFrom([16, 0], [16, 1], [20, 0], [20, 2], [24, 0], [24, 2], [28, 2], [28, 3], [32, 3], [36, 3])
+    const builds = fc.constantFrom(
+      [16, 0],
+      [16, 1],
+      [20, 0],
+      [20, 2],
+      [24, 0],
+      [24, 2],
+      [28, 2],
+      [28, 3],
+      [32, 3],
+      [36, 3],
+    )
     fc.assert(
       fc.property(builds, ([spokeCount = 24, crosses = 2]) => {
         const spokes = spokeLines({ ...rowan, spokeCount, crossesLeft: crosses, crossesRight: crosses })
-        const holes = new Set(spokes.map(({ hub }) => `${hub.x.toFixed(4)} ${hub.y.toFixed(4)} ${hub.z}`.replaceAll('-0.0000', '0.0000')))
+        const holes = new Set(
+          spokes.map(({ hub }) => `${hub.x.toFixed(4)} ${hub.y.toFixed(4)} ${hub.z}`.replaceAll('-0.0000', '0.0000')),
+        )
         expect(holes.size).toBe(spokeCount)
       }),
     )
   })
 
   it('draws radial spokes straight out from the axle', () => {
-    for (const { hub, rim } of spokeLines({ ...rowan, crossesLeft: 0, crossesRight: 0 })) expect(hub.x * rim.y - hub.y * rim.x).toBeCloseTo(0, 6)
+    for (const { hub, rim } of spokeLines({ ...rowan, crossesLeft: 0, crossesRight: 0 }))
+      expect(hub.x * rim.y - hub.y * rim.x).toBeCloseTo(0, 6)
   })
 })
 
@@ -92,7 +118,12 @@ describe('rimSection and tyreCircle', () => {
   it('leaves a hollow inside every rim of the trade', () => {
     fc.assert(
       fc.property(fc.integer({ min: 18, max: 90 }), fc.integer({ min: 20, max: 36 }), (depthMm, outerWidthMm) => {
-        const { hollow, shoulder } = rimSection({ depthMm, outerWidthMm, innerWidthMm: outerWidthMm - 6, seat: 'hooked' })
+        const { hollow, shoulder } = rimSection({
+          depthMm,
+          outerWidthMm,
+          innerWidthMm: outerWidthMm - 6,
+          seat: 'hooked',
+        })
         expect(hollow.bottom).toBeGreaterThan(hollow.top)
         expect(shoulder).toBeLessThan(depthMm)
       }),
@@ -133,7 +164,14 @@ describe('the drawings', () => {
   })
   it('RimSection carries its dimensions as given', () => {
     const rim = { depthMm: 45, outerWidthMm: 28, innerWidthMm: 21, seat: 'hooked' } as const
-    render(<RimSection rim={rim} tyres={[28, 47]} label="Section" texts={{ depth: '45 mm', outer: '28 mm', inner: '21 mm' }} />)
+    render(
+      <RimSection
+        rim={rim}
+        tyres={[28, 47]}
+        label="Section"
+        texts={{ depth: '45 mm', outer: '28 mm', inner: '21 mm' }}
+      />,
+    )
     const drawn = screen.getByRole('img', { name: 'Section' }).textContent
     for (const text of ['45 mm', '28 mm', '21 mm']) expect(drawn).toContain(text)
   })

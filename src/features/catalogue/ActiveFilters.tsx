@@ -29,7 +29,9 @@ export function ActiveFilters({ filters, onRemove, onClear }: ActiveFiltersProps
     tyreMm: (value) => format.width(Number(value)).text,
   }
   const word = (name: FilterName, value: string) =>
-    name === 'ride' ? t(`advisor:ride.${value}.label`) : t(`filter.chip.${name}`, { value: shown[name]?.(value) ?? value })
+    name === 'ride'
+      ? t(`advisor:ride.${value}.label`)
+      : t(`filter.chip.${name}`, { value: shown[name]?.(value) ?? value })
   return (
     <ul aria-label={t('filter.active')} className="flex flex-wrap items-center gap-2">
       {active.map(({ name, value }) => (

@@ -7,7 +7,8 @@ import type { FilterName, Filters } from './filters.ts'
 import { useLimitText } from './limit-text.ts'
 import { Segments } from './Segments.tsx'
 
-const steps = (from: number, to: number, by: number) => Array.from({ length: Math.floor((to - from) / by) + 1 }, (_, i) => String(from + i * by))
+const steps = (from: number, to: number, by: number) =>
+  Array.from({ length: Math.floor((to - from) / by) + 1 }, (_, i) => String(from + i * by))
 const depths = steps(20, 80, 5)
 const limits = steps(90, 150, 5)
 const spokes = ['20', '24', '28', '32', '36']
@@ -26,14 +27,22 @@ export function FilterForm({ filters, onChange }: FilterFormProps) {
   const segments = (name: 'brake' | 'beadSeatMm' | 'material' | 'seat', words: string, values: readonly string[]) => (
     <Segments
       legend={t(`filter.${name}`)}
-      choices={[{ value: '', label: t('filter.any') }, ...values.map((value) => ({ value, label: t(`filter.${words}.${value}`) }))]}
+      choices={[
+        { value: '', label: t('filter.any') },
+        ...values.map((value) => ({ value, label: t(`filter.${words}.${value}`) })),
+      ]}
       value={filters[name] ?? ''}
       onChange={(value) => {
         onChange({ [name]: value })
       }}
     />
   )
-  const select = (name: FilterName, values: readonly string[], word: (value: string) => string, none = t('filter.any')) => (
+  const select = (
+    name: FilterName,
+    values: readonly string[],
+    word: (value: string) => string,
+    none = t('filter.any'),
+  ) => (
     <Field label={<span className="text-sm">{t(`filter.${name}`)}</span>}>
       {(ids) => (
         <Select
@@ -98,7 +107,8 @@ export function FilterForm({ filters, onChange }: FilterFormProps) {
   )
 }
 
-const withOwn = (values: readonly string[], own: string | undefined) => (own === undefined || values.includes(own) ? values : [...values, own])
+const withOwn = (values: readonly string[], own: string | undefined) =>
+  own === undefined || values.includes(own) ? values : [...values, own]
 
 const TYPING_MS = 250
 

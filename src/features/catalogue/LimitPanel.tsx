@@ -54,16 +54,31 @@ const parts = ['rider', 'clothes', 'bike', 'bags'] as const
 const REACH = 1.18
 
 /** A bar up to the limit; the rider's total stands on it as a red stroke. Without one, the bar names what counts in it. */
-function LimitBeam({ limitKg, totalKg, limit, total }: { limitKg: number; totalKg: number | null; limit: string; total: string }) {
+function LimitBeam({
+  limitKg,
+  totalKg,
+  limit,
+  total,
+}: {
+  limitKg: number
+  totalKg: number | null
+  limit: string
+  total: string
+}) {
   const { t } = useTranslation('catalogue')
   const reach = Math.max(limitKg * REACH, (totalKg ?? 0) * 1.06)
   const at = (kg: number) => `${(kg / reach) * 100}%`
   return (
     <div
       className="relative h-24 forced-color-adjust-none"
-      {...(totalKg === null ? { 'aria-hidden': true } : { role: 'img', 'aria-label': t('wheelset.limitBeam', { total, limit }) })}
+      {...(totalKg === null
+        ? { 'aria-hidden': true }
+        : { role: 'img', 'aria-label': t('wheelset.limitBeam', { total, limit }) })}
     >
-      <div className="absolute start-0 top-9 flex h-7 overflow-hidden border border-within bg-within-wash" style={{ width: at(limitKg) }}>
+      <div
+        className="absolute start-0 top-9 flex h-7 overflow-hidden border border-within bg-within-wash"
+        style={{ width: at(limitKg) }}
+      >
         {totalKg === null &&
           parts.map((part, index) => (
             <span
@@ -73,16 +88,24 @@ function LimitBeam({ limitKg, totalKg, limit, total }: { limitKg: number; totalK
               {t(`wheelset.parts.${part}`)}
             </span>
           ))}
-        {totalKg !== null && <span className="bg-ink/15" style={{ width: `${Math.min(100, (totalKg / limitKg) * 100)}%` }} />}
+        {totalKg !== null && (
+          <span className="bg-ink/15" style={{ width: `${Math.min(100, (totalKg / limitKg) * 100)}%` }} />
+        )}
       </div>
       <div className="absolute top-5 h-15 w-[3px] -translate-x-1/2 bg-within" style={{ left: at(limitKg) }} />
-      <span className="absolute top-[4.9rem] -translate-x-1/2 text-sm font-[650] whitespace-nowrap text-within" style={{ left: at(limitKg) }}>
+      <span
+        className="absolute top-[4.9rem] -translate-x-1/2 text-sm font-[650] whitespace-nowrap text-within"
+        style={{ left: at(limitKg) }}
+      >
         {limit}
       </span>
       {totalKg !== null && (
         <>
           <div className="absolute top-6 h-13 w-[3px] -translate-x-1/2 bg-own" style={{ left: at(totalKg) }} />
-          <span className="absolute top-0 -translate-x-1/2 text-sm font-bold whitespace-nowrap text-own" style={{ left: at(totalKg) }}>
+          <span
+            className="absolute top-0 -translate-x-1/2 text-sm font-bold whitespace-nowrap text-own"
+            style={{ left: at(totalKg) }}
+          >
             {total}
           </span>
         </>

@@ -55,7 +55,9 @@ export function OptionsForm({ set, initial, busy, onPut }: OptionsFormProps) {
             onChange={(code) => {
               setChosen((before) => ({ ...before, [name]: code }))
             }}
-            error={asked && open.includes(name) ? t('wheelset.choose', { label: label(name).toLowerCase() }) : undefined}
+            error={
+              asked && open.includes(name) ? t('wheelset.choose', { label: label(name).toLowerCase() }) : undefined
+            }
           />
         ))}
         {fixed.length > 0 && (

@@ -22,7 +22,9 @@ export function PricePanel({ set }: { set: Wheelset }) {
         <span className="figure text-3xl">{price === undefined ? '–' : format.money(price, currency)}</span>
         {market && (
           <span className="text-sm text-soft">
-            {market.taxIncluded ? t('wheelset.taxIn', { percent: format.percent(market.vatPercent / 100, 1) }) : t('wheelset.taxOut')}
+            {market.taxIncluded
+              ? t('wheelset.taxIn', { percent: format.percent(market.vatPercent / 100, 1) })
+              : t('wheelset.taxOut')}
           </span>
         )}
       </p>

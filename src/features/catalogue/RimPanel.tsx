@@ -10,7 +10,9 @@ export function RimPanel({ set }: { set: Wheelset }) {
   const format = useFormat()
   const { tyres } = useWheelRows()
   const { front, rear } = set
-  const alike = (['depthMm', 'outerWidthMm', 'innerWidthMm', 'seat'] as const).every((fact) => front[fact] === rear[fact])
+  const alike = (['depthMm', 'outerWidthMm', 'innerWidthMm', 'seat'] as const).every(
+    (fact) => front[fact] === rear[fact],
+  )
   const pressureBar = Math.min(front.maxPressureBar, rear.maxPressureBar)
   const pressure = format.pressure(pressureBar, 'down')
   const text = (wheel: WheelFactsView) =>
@@ -27,9 +29,12 @@ export function RimPanel({ set }: { set: Wheelset }) {
           <div className="mt-5 border-t border-line pt-3">
             <p className="text-sm text-soft">{t('wheelset.maxPressure')}</p>
             <p>
-              <span className="figure text-4xl">{pressure.value}</span> <span className="font-semibold text-soft">{pressure.unit}</span>
+              <span className="figure text-4xl">{pressure.value}</span>{' '}
+              <span className="ms-1 font-semibold text-soft">{pressure.unit}</span>
             </p>
-            <p className="mt-1 max-w-[46ch] border-s-[3px] border-near bg-near-wash px-3 py-2 text-sm">{t('wheelset.pressureCaution')}</p>
+            <p className="mt-1 max-w-[46ch] border-s-[3px] border-near bg-near-wash px-3 py-2 text-sm">
+              {t('wheelset.pressureCaution')}
+            </p>
           </div>
         </div>
         <figure>
@@ -40,15 +45,24 @@ export function RimPanel({ set }: { set: Wheelset }) {
                 outer: format.width(wheel.outerWidthMm).text,
                 inner: format.width(wheel.innerWidthMm).text,
               }
-              const [narrow, wide] = [format.width(wheel.tyreMinMm, 'up').text, format.width(wheel.tyreMaxMm, 'down').text]
+              const [narrow, wide] = [
+                format.width(wheel.tyreMinMm, 'up').text,
+                format.width(wheel.tyreMaxMm, 'down').text,
+              ]
               return (
                 <div key={wheel.position}>
                   {!alike && <p className="text-sm font-[650]">{t(`drawing.${wheel.position}`)}</p>}
                   <RimSection
                     rim={wheel}
                     tyres={[wheel.tyreMinMm, wheel.tyreMaxMm]}
-                    label={t('drawing.section', { ...widths, narrow, wide, seat: t(`value.${wheel.seat}`), tyres: tyres(wheel) })}
-                    texts={{ ...widths, narrow: t('drawing.narrow', { width: narrow }), wide: t('drawing.wide', { width: wide }) }}
+                    label={t('drawing.section', {
+                      ...widths,
+                      narrow,
+                      wide,
+                      seat: t(`value.${wheel.seat}`),
+                      tyres: tyres(wheel),
+                    })}
+                    texts={{ ...widths, narrow, wide: t('drawing.wide', { width: wide }) }}
                   />
                 </div>
               )

@@ -12,7 +12,15 @@ interface SegmentsProps<V extends string> {
 }
 
 /** A short choice as a row of joined radio buttons. */
-export function Segments<V extends string>({ legend, choices, value, onChange, stacked = false, error, id }: SegmentsProps<V>) {
+export function Segments<V extends string>({
+  legend,
+  choices,
+  value,
+  onChange,
+  stacked = false,
+  error,
+  id,
+}: SegmentsProps<V>) {
   const name = useId()
   return (
     <fieldset id={id} aria-describedby={error === undefined ? undefined : `${name}-error`}>
@@ -42,7 +50,12 @@ export function Segments<V extends string>({ legend, choices, value, onChange, s
                   onChange(choice.value)
                 }}
               />
-              {stacked && <span aria-hidden className={`size-3.5 flex-none rounded-full border-[1.5px] ${on ? 'border-[4px] border-own' : 'border-strong'}`} />}
+              {stacked && (
+                <span
+                  aria-hidden
+                  className={`size-3.5 flex-none rounded-full border-[1.5px] ${on ? 'border-[4px] border-own' : 'border-strong'}`}
+                />
+              )}
               <span>{choice.label}</span>
             </label>
           )

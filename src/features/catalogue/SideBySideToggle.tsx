@@ -8,7 +8,10 @@ export function SideBySideToggle({ slug, name }: { slug: string; name: string })
   const on = slugs.includes(slug)
   const closed = full && !on
   return (
-    <label className={`inline-flex min-h-11 items-center gap-2.5 text-sm font-semibold ${closed ? 'text-soft' : ''}`} title={closed ? t('compare.full') : undefined}>
+    <label
+      className={`inline-flex min-h-11 items-center gap-2.5 text-sm font-semibold ${closed ? 'text-soft' : ''}`}
+      title={closed ? t('compare.full') : undefined}
+    >
       <input
         type="checkbox"
         className="size-5 flex-none scroll-mb-28 accent-own"

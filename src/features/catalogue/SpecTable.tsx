@@ -30,7 +30,9 @@ export function SpecTable({ set }: { set: Wheelset }) {
               <th scope="row" className="py-2 pe-3 text-start font-medium hyphens-auto text-soft">
                 {label}
               </th>
-              <td className="py-2 pe-3 font-semibold">{front === '' ? <span className="text-soft">{'–'}</span> : front}</td>
+              <td className="py-2 pe-3 font-semibold">
+                {front === '' ? <span className="text-soft">{'–'}</span> : front}
+              </td>
               <td className="py-2 font-semibold">{rear}</td>
             </tr>
           )

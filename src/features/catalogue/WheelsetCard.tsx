@@ -19,17 +19,18 @@ export function WheelsetCard({ set, verdict }: { set: Wheelset; verdict: Wheelse
   const { front, rear } = set
   const price = set.prices[currency]
   const limit = useLimitText()(set.limitKg)
-  const spoken = (a: number, b: number) => (a === b ? t('facts.both', { value: a }) : t('facts.frontRear', { front: a, rear: b }))
+  const spoken = (a: number, b: number) =>
+    a === b ? t('facts.both', { value: a }) : t('facts.frontRear', { front: a, rear: b })
   const stock = stockWord(set)
   const out = verdict !== null && ['over-limit', 'mismatch', 'pressure'].includes(verdict.verdict)
   return (
-    <article className="flex h-full flex-col px-4 pt-4 pb-2 sm:px-5">
+    <article className="row-span-7 grid grid-rows-subgrid gap-y-0 px-4 pt-4 pb-2 sm:px-5">
       <PairDrawing
         front={drawn(set, 'front')}
         rear={drawn(set, 'rear')}
         label=""
         names={{ front: t('drawing.front'), rear: t('drawing.rear') }}
-        className={out ? 'opacity-55' : ''}
+        className={out ? '[&_svg]:opacity-55' : ''}
       />
       <div className="mt-2 flex items-baseline justify-between gap-3">
         <h3 className="text-xl">
@@ -41,25 +42,41 @@ export function WheelsetCard({ set, verdict }: { set: Wheelset; verdict: Wheelse
       </div>
       <p className="text-[0.9375rem] leading-snug text-soft">{set.tagline}</p>
       <dl className="mt-3 grid grid-cols-[auto_auto_auto] justify-between gap-x-2 border-t border-ink pt-2">
-        <Figure label={t('facts.depth')} value={shortPair(front.depthMm, rear.depthMm)} spoken={spoken(front.depthMm, rear.depthMm)} unit="mm" />
+        <Figure
+          label={t('facts.depth')}
+          value={shortPair(front.depthMm, rear.depthMm)}
+          spoken={spoken(front.depthMm, rear.depthMm)}
+          unit="mm"
+        />
         <Figure label={t('facts.limit')} value={limit.value} unit={limit.unit} />
-        <Figure label={t('facts.spokes')} value={`${front.spokeCount}/${rear.spokeCount}`} spoken={spoken(front.spokeCount, rear.spokeCount)} />
+        <Figure
+          label={t('facts.spokes')}
+          value={`${front.spokeCount}/${rear.spokeCount}`}
+          spoken={spoken(front.spokeCount, rear.spokeCount)}
+        />
       </dl>
       <p className="mt-2 text-sm text-soft">
         {[
           format.grams(set.massG),
           t('facts.inner', { width: format.width(rear.innerWidthMm).text }),
-          t('facts.tyres', { from: format.width(rear.tyreMinMm, 'up').value, to: format.width(rear.tyreMaxMm, 'down').text }),
+          t('facts.tyres', {
+            from: format.width(rear.tyreMinMm, 'up').value,
+            to: format.width(rear.tyreMaxMm, 'down').text,
+          }),
         ].join(' · ')}
       </p>
-      {verdict && (
-        <p className="mt-2.5">
-          <RiderVerdict verdict={verdict} />
-        </p>
-      )}
-      <div className="mt-auto flex flex-wrap items-center justify-between gap-x-3 pt-1.5">
+      <div>
+        {verdict && (
+          <p className="mt-2.5">
+            <RiderVerdict verdict={verdict} />
+          </p>
+        )}
+      </div>
+      <div className="flex flex-wrap items-center justify-between gap-x-3 pt-1.5">
         <SideBySideToggle slug={set.slug} name={set.name} />
-        <p className={`text-sm ${stock === 'none' ? 'text-soft' : ''}`}>{t(`stock.${stock}`, { count: set.available })}</p>
+        <p className={`text-sm ${stock === 'none' ? 'text-soft' : ''}`}>
+          {t(`stock.${stock}`, { count: set.available })}
+        </p>
       </div>
     </article>
   )

@@ -20,10 +20,14 @@ export function readFilters(params: URLSearchParams): Filters {
   )
 }
 
-export const readSort = (params: URLSearchParams): Sort | null => sorts.find((one) => one === params.get('sort')) ?? null
+export const readSort = (params: URLSearchParams): Sort | null =>
+  sorts.find((one) => one === params.get('sort')) ?? null
 
 /** @param change a value to set, or '' to take the filter away */
-export function withFilters(params: URLSearchParams, change: Partial<Record<FilterName | 'sort', string>>): URLSearchParams {
+export function withFilters(
+  params: URLSearchParams,
+  change: Partial<Record<FilterName | 'sort', string>>,
+): URLSearchParams {
   const next = new URLSearchParams(params)
   for (const [name, value] of Object.entries(change)) {
     if (value === '') next.delete(name)
@@ -32,4 +36,5 @@ export function withFilters(params: URLSearchParams, change: Partial<Record<Filt
   return next
 }
 
-export const withoutFilters = (params: URLSearchParams) => withFilters(params, Object.fromEntries(filterNames.map((name) => [name, ''])))
+export const withoutFilters = (params: URLSearchParams) =>
+  withFilters(params, Object.fromEntries(filterNames.map((name) => [name, ''])))

@@ -22,7 +22,12 @@ export function firstOptions(set: Wheelset, known: Partial<Record<OptionName, st
     const own = known[name]
     return own !== undefined && own !== null && list.includes(own) ? own : null
   }
-  return { frontAxle: first('frontAxle'), rearAxle: first('rearAxle'), freehub: first('freehub'), rotorMount: first('rotorMount') }
+  return {
+    frontAxle: first('frontAxle'),
+    rearAxle: first('rearAxle'),
+    freehub: first('freehub'),
+    rotorMount: first('rotorMount'),
+  }
 }
 
 export const openOptions = (set: Wheelset, options: Options): OptionName[] => {

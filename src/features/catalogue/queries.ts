@@ -14,7 +14,11 @@ export const wheelsetsQuery = (asked: Asked) =>
       const items: Wheelset[] = []
       let cursor: string | null = null
       do {
-        const params: string = new URLSearchParams({ ...asked, limit: '100', ...(cursor === null ? {} : { cursor }) }).toString()
+        const params: string = new URLSearchParams({
+          ...asked,
+          limit: '100',
+          ...(cursor === null ? {} : { cursor }),
+        }).toString()
         const page: WheelsetList = await api.get(`/api/wheelsets?${params}`, wheelsetList, signal)
         items.push(...page.items)
         cursor = page.nextCursor

@@ -38,7 +38,11 @@ function subscribe(tell: () => void) {
 
 /** Distinct, in order, at most four; anything else in the storage or the address is passed over. */
 export const readSlugs = (values: unknown): string[] =>
-  Array.isArray(values) ? [...new Set(values.filter((one): one is string => typeof one === 'string' && /^[a-z0-9-]{1,80}$/.test(one)))].slice(0, MOST) : []
+  Array.isArray(values)
+    ? [
+        ...new Set(values.filter((one): one is string => typeof one === 'string' && /^[a-z0-9-]{1,80}$/.test(one))),
+      ].slice(0, MOST)
+    : []
 
 function parse(text: string): string[] {
   try {
@@ -48,7 +52,8 @@ function parse(text: string): string[] {
   }
 }
 
-export const sideBySidePath = (slugs: readonly string[]) => (slugs.length === 0 ? '/side-by-side' : `/side-by-side?sets=${slugs.join(',')}`)
+export const sideBySidePath = (slugs: readonly string[]) =>
+  slugs.length === 0 ? '/side-by-side' : `/side-by-side?sets=${slugs.join(',')}`
 
 export function useSideBySide() {
   const text = useSyncExternalStore(subscribe, read)

@@ -55,4 +55,12 @@ export const bothOf = (front: string, rear: string, pair: (values: { front: stri
 export const shortPair = (front: number, rear: number) => (front === rear ? String(rear) : `${front}/${rear}`)
 
 export const stockWord = ({ available, buildKind }: Pick<Wheelset, 'available' | 'buildKind'>) =>
-  available === 0 ? 'none' : buildKind === 'bench' ? 'bench' : available === 1 ? 'last' : available < 4 ? 'few' : 'shelf'
+  available === 0
+    ? 'none'
+    : buildKind === 'bench'
+      ? 'bench'
+      : available === 1
+        ? 'last'
+        : available < 4
+          ? 'few'
+          : 'shelf'

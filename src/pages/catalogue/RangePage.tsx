@@ -5,7 +5,15 @@ import { Link, useSearchParams } from 'react-router-dom'
 import type { Wheelset } from '#contract/catalogue.ts'
 import { ActiveFilters } from '../../features/catalogue/ActiveFilters.tsx'
 import { FilterForm } from '../../features/catalogue/FilterForm.tsx'
-import { readFilters, readSort, sorts, withFilters, withoutFilters, type FilterName, type Sort } from '../../features/catalogue/filters.ts'
+import {
+  readFilters,
+  readSort,
+  sorts,
+  withFilters,
+  withoutFilters,
+  type FilterName,
+  type Sort,
+} from '../../features/catalogue/filters.ts'
 import { wheelsetsQuery } from '../../features/catalogue/queries.ts'
 import { SideBySideTray } from '../../features/catalogue/SideBySideTray.tsx'
 import { WheelsetCard } from '../../features/catalogue/WheelsetCard.tsx'
@@ -51,21 +59,28 @@ export function RangePage() {
       <div className="grid border-t border-ink lg:grid-cols-[17.5rem_minmax(0,1fr)]">
         <aside className="border-line px-5 py-4 max-lg:border-b md:px-9 lg:border-e lg:py-6 lg:pe-4">
           <div className="lg:sticky lg:top-4">
-          <h2 className="mb-3 max-lg:hidden">{t('filter.title')}</h2>
-          <details className="group lg:hidden">
-            <summary className="flex min-h-11 items-center justify-between gap-3 text-lg font-bold">
-              {t('filter.open', { count })}
-              <svg aria-hidden viewBox="0 0 10 6" className="w-3 group-open:rotate-180" fill="none" stroke="currentColor" strokeWidth="1.6">
-                <path d="m1 1 4 4 4-4" />
-              </svg>
-            </summary>
-            <div className="pt-3 pb-2">
+            <h2 className="mb-3 max-lg:hidden">{t('filter.title')}</h2>
+            <details className="group lg:hidden">
+              <summary className="flex min-h-11 items-center justify-between gap-3 text-lg font-bold">
+                {t('filter.open', { count })}
+                <svg
+                  aria-hidden
+                  viewBox="0 0 10 6"
+                  className="w-3 group-open:rotate-180"
+                  fill="none"
+                  stroke="currentColor"
+                  strokeWidth="1.6"
+                >
+                  <path d="m1 1 4 4 4-4" />
+                </svg>
+              </summary>
+              <div className="pt-3 pb-2">
+                <FilterForm filters={filters} onChange={change} />
+              </div>
+            </details>
+            <div className="-ms-1 max-h-[calc(100dvh-4rem)] overflow-y-auto py-1 ps-1 pe-2 max-lg:hidden">
               <FilterForm filters={filters} onChange={change} />
             </div>
-          </details>
-          <div className="-ms-1 max-h-[calc(100dvh-4rem)] overflow-y-auto py-1 ps-1 pe-2 max-lg:hidden">
-            <FilterForm filters={filters} onChange={change} />
-          </div>
           </div>
         </aside>
         <section aria-labelledby="range-list" className="min-w-0 md:pe-[8px]">
@@ -115,7 +130,10 @@ export function RangePage() {
               aria-busy={range.isPlaceholderData}
             >
               {sets.map((set) => (
-                <li key={set.sku} className="border-b border-line sm:border-e sm:nth-[2n]:border-e-0 xl:nth-[2n]:border-e xl:nth-[3n]:border-e-0">
+                <li
+                  key={set.sku}
+                  className="row-span-7 grid grid-rows-subgrid gap-y-0 border-b border-line sm:border-e sm:nth-[2n]:border-e-0 xl:nth-[2n]:border-e xl:nth-[3n]:border-e-0"
+                >
                   <WheelsetCard set={set} verdict={verdicts?.get(set.sku) ?? null} />
                 </li>
               ))}

@@ -10,7 +10,7 @@ import { firstOptions, type Options } from '../../features/catalogue/options.ts'
 import { OptionsForm } from '../../features/catalogue/OptionsForm.tsx'
 import { PricePanel } from '../../features/catalogue/PricePanel.tsx'
 import { wheelsetQuery, wheelsetsQuery } from '../../features/catalogue/queries.ts'
-import { RiderVerdict } from '../../features/catalogue/RiderVerdict.tsx'
+import { RiderVerdict, useVerdictWord } from '../../features/catalogue/RiderVerdict.tsx'
 import { RimPanel } from '../../features/catalogue/RimPanel.tsx'
 import { SideBySideToggle } from '../../features/catalogue/SideBySideToggle.tsx'
 import { SideBySideTray } from '../../features/catalogue/SideBySideTray.tsx'
@@ -27,7 +27,7 @@ import { ButtonLink } from '../../ui/Button.tsx'
 import { Notice } from '../../ui/Notice.tsx'
 import { Sheet, TitleBlock } from '../../ui/Sheet.tsx'
 import { Waiting } from '../../ui/Waiting.tsx'
-import { WheelDrawing } from '../../ui/WheelDrawing.tsx'
+import { SideLegend, WheelDrawing } from '../../ui/WheelDrawing.tsx'
 
 /** One wheelset: drawn, in numbers, with what its limit counts, and the way into the basket. */
 export function WheelsetPage() {
@@ -59,7 +59,7 @@ function Page({ set }: { set: Wheelset }) {
   const { data: range } = useQuery(wheelsetsQuery({ lng: language }))
   return (
     <>
-      <div className="grid lg:grid-cols-[minmax(0,1.35fr)_minmax(0,1fr)]">
+      <div className="grid lg:grid-cols-[minmax(0,1.55fr)_minmax(0,1fr)]">
         <div className="min-w-0 border-line px-5 pt-6 pb-7 md:px-9 lg:border-e">
           <Link to="/range" className="quiet-link inline-flex min-h-11 items-center text-sm">
             {t('wheelset.back')}
@@ -68,6 +68,7 @@ function Page({ set }: { set: Wheelset }) {
           <p className="text-lg text-soft">{set.tagline}</p>
           <Drawings set={set} />
           <p className="mt-5 max-w-[62ch]">{set.description}</p>
+          <PairFacts set={set} />
         </div>
         <div className="min-w-0 px-5 pb-7 max-lg:border-t max-lg:border-line max-lg:pt-6 md:px-9 lg:ps-8 lg:pt-10">
           <Numbers set={set} verdict={verdict} />
@@ -88,13 +89,12 @@ function Page({ set }: { set: Wheelset }) {
         <h2 id="spec" className="mb-4">
           {t('wheelset.spec')}
         </h2>
-        <div className="grid gap-x-12 gap-y-6 lg:grid-cols-[minmax(0,1fr)_minmax(0,1.9fr)]">
-          <PairFacts set={set} />
+        <div className="grid gap-x-12 gap-y-6 lg:grid-cols-[minmax(0,2.1fr)_minmax(0,1fr)] lg:items-start">
           <SpecTable set={set} />
+          <Notice tone="caution" title={t('wheelset.cautionsTitle')}>
+            <p>{t('wheelset.cautions')}</p>
+          </Notice>
         </div>
-        <Notice tone="caution" title={t('wheelset.cautionsTitle')} className="mt-6">
-          <p>{t('wheelset.cautions')}</p>
-        </Notice>
       </section>
       <SideBySideTray sets={range?.items ?? [set]} />
     </>
@@ -107,7 +107,7 @@ function Drawings({ set }: { set: Wheelset }) {
   const { lacing } = useWheelRows()
   return (
     <figure className="mt-2">
-      <div className="grid gap-x-6 gap-y-2 sm:grid-cols-2">
+      <div className="grid grid-cols-2 gap-x-4 sm:gap-x-6">
         {(['front', 'rear'] as const).map((position) => {
           const wheel = set[position]
           const depth = format.depth(wheel.depthMm).text
@@ -122,14 +122,19 @@ function Drawings({ set }: { set: Wheelset }) {
               <WheelDrawing
                 wheel={drawn(set, position)}
                 dimension={depth}
-                legend={{ drive: t('drawing.drive'), other: t('drawing.other') }}
-                label={t(`drawing.wheel_${position}`, { name: set.name, depth, spokes: wheel.spokeCount, lacing: lacing(wheel) })}
+                label={t(`drawing.wheel_${position}`, {
+                  name: set.name,
+                  depth,
+                  spokes: wheel.spokeCount,
+                  lacing: lacing(wheel),
+                })}
               />
             </div>
           )
         })}
       </div>
       <figcaption>
+        <SideLegend drive={t('drawing.drive')} other={t('drawing.other')} />
         <TitleBlock
           className="mt-5"
           items={[
@@ -163,7 +168,8 @@ function Numbers({ set, verdict }: { set: Wheelset; verdict: WheelsetVerdict | n
           <dt className="text-sm text-soft">{t('facts.limit')}</dt>
           <dd className="flex flex-wrap items-baseline gap-x-3">
             <span>
-              <span className="figure text-5xl">{limit.value}</span> <span className="text-lg font-semibold text-soft">{limit.unit}</span>
+              <span className="figure text-5xl">{limit.value}</span>{' '}
+              <span className="ms-1 text-lg font-semibold text-soft">{limit.unit}</span>
             </span>
             {verdict && (
               <span>
@@ -177,7 +183,8 @@ function Numbers({ set, verdict }: { set: Wheelset; verdict: WheelsetVerdict | n
           <div key={label} className="order-last border-t border-line pt-2.5">
             <dt className="text-sm text-soft">{label}</dt>
             <dd className="whitespace-nowrap">
-              <span className="figure text-[1.625rem] sm:text-3xl">{value}</span> <span className="text-sm font-semibold text-soft">{unit}</span>
+              <span className="figure text-[1.625rem] sm:text-3xl">{value}</span>{' '}
+              <span className="ms-0.5 text-sm font-semibold text-soft">{unit}</span>
             </dd>
           </div>
         ))}
@@ -195,6 +202,7 @@ function Buying({ set, verdict }: { set: Wheelset; verdict: WheelsetVerdict | nu
   const { t } = useTranslation('catalogue')
   const format = useFormat()
   const limitText = useLimitText()
+  const word = useVerdictWord()
   const { answers, address } = useKeptFitting()
   const { put, pending, error } = usePutLine()
   const [done, setDone] = useState(false)
@@ -207,14 +215,19 @@ function Buying({ set, verdict }: { set: Wheelset; verdict: WheelsetVerdict | nu
     const over = format.mass(-verdict.marginKg, 'up').text
     return (
       <Notice title={t('wheelset.stopOver', { over })}>
-        <p>{t('wheelset.stopOverText', { total: format.mass(verdict.limitKg - verdict.marginKg, 'up').text, limit: limitText(verdict.limitKg).text })}</p>
+        <p>
+          {t('wheelset.stopOverText', {
+            total: format.mass(verdict.limitKg - verdict.marginKg, 'up').text,
+            limit: limitText(verdict.limitKg).text,
+          })}
+        </p>
         {findings}
       </Notice>
     )
   }
-  if (verdict?.verdict === 'mismatch') {
+  if (verdict?.verdict === 'mismatch' || verdict?.verdict === 'pressure') {
     return (
-      <Notice title={t('wheelset.stopMismatch')}>
+      <Notice title={t('wheelset.stopMismatch', { rule: word(verdict) })}>
         <p>{t('wheelset.stopMismatchText')}</p>
         {findings}
       </Notice>
@@ -232,7 +245,12 @@ function Buying({ set, verdict }: { set: Wheelset; verdict: WheelsetVerdict | nu
   }
   return (
     <>
-      <OptionsForm set={set} initial={firstOptions(set, answers?.bike ?? {})} busy={pending} onPut={(options) => void onPut(options)} />
+      <OptionsForm
+        set={set}
+        initial={firstOptions(set, answers?.bike ?? {})}
+        busy={pending}
+        onPut={(options) => void onPut(options)}
+      />
       <div role="status" className="mt-3 empty:hidden">
         {done && (
           <Notice tone="good" title={t('wheelset.putDone', { name: set.name })}>
@@ -251,24 +269,23 @@ function Buying({ set, verdict }: { set: Wheelset; verdict: WheelsetVerdict | nu
 function PairFacts({ set }: { set: Wheelset }) {
   const { t } = useTranslation(['catalogue', 'advisor'])
   const format = useFormat()
-  const limitText = useLimitText()
   const facts = [
     { label: t('wheelset.rides'), value: format.list(set.rides.map((ride) => t(`advisor:ride.${ride}.label`))) },
+    { label: t('row.brake'), value: t(`value.${set.brake}`) },
     {
       label: t('wheelset.condition'),
-      value: `${t(`wheelset.conditions.${set.useCondition}`)} ${t('wheelset.conditionCode', { number: set.useCondition })}`,
+      value: t(`wheelset.conditions.${set.useCondition}`),
+      more: t('wheelset.conditionCode', { number: set.useCondition }),
     },
     { label: t('wheelset.assist'), value: t(set.assistRated ? 'wheelset.assistYes' : 'wheelset.assistNo') },
-    { label: t('row.brake'), value: t(`value.${set.brake}`) },
-    { label: t('row.limit'), value: limitText(set.limitKg).text },
-    { label: t('row.pairMass'), value: format.grams(set.massG) },
   ]
   return (
-    <dl className="self-start border-t border-ink text-[0.9375rem]">
-      {facts.map(({ label, value }) => (
-        <div key={label} className="border-b border-line py-2">
+    <dl className="mt-6 grid border-t border-line grid-cols-2 gap-x-4 text-[0.9375rem] sm:gap-x-6">
+      {facts.map(({ label, value, more }) => (
+        <div key={label} className="border-b border-line py-2.5">
           <dt className="text-sm text-soft">{label}</dt>
           <dd className="font-semibold">{value}</dd>
+          {more !== undefined && <dd className="text-sm text-soft">{more}</dd>}
         </div>
       ))}
     </dl>
