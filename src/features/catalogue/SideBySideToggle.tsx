@@ -16,7 +16,6 @@ export function SideBySideToggle({ slug, name }: { slug: string; name: string })
         type="checkbox"
         className="size-5 flex-none scroll-mb-28 accent-own"
         aria-label={t('compare.addOne', { name })}
-        aria-description={closed ? t('compare.full') : undefined}
         checked={on}
         disabled={closed}
         onChange={() => {
