@@ -41,13 +41,13 @@ export function FilterForm({ filters, onChange }: FilterFormProps) {
     name: FilterName,
     values: readonly string[],
     word: (value: string) => string,
-    none = t('filter.any'),
+    none = t('filter.free'),
   ) => (
     <Field label={<span className="text-sm">{t(`filter.${name}`)}</span>}>
       {(ids) => (
         <Select
           {...ids}
-          className="min-h-11! py-1.5! text-[0.9375rem]!"
+          className="block min-h-11! py-1.5! text-[0.9375rem]!"
           value={filters[name] ?? ''}
           onChange={(event) => {
             onChange({ [name]: event.target.value })
@@ -81,7 +81,7 @@ export function FilterForm({ filters, onChange }: FilterFormProps) {
   return (
     <form
       role="search"
-      className="grid gap-4"
+      className="grid grid-cols-1 gap-4"
       onSubmit={(event) => {
         event.preventDefault()
       }}
@@ -141,7 +141,7 @@ function Search({ value, onChange }: { value: string; onChange: FilterFormProps[
           type="search"
           maxLength={80}
           autoComplete="off"
-          className="min-h-11! py-1.5!"
+          className="block min-h-11! py-1.5!"
           value={text}
           onChange={(event) => {
             setText(event.target.value)

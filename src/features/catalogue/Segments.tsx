@@ -23,8 +23,8 @@ export function Segments<V extends string>({
 }: SegmentsProps<V>) {
   const name = useId()
   return (
-    <fieldset id={id} aria-describedby={error === undefined ? undefined : `${name}-error`}>
-      <legend className="text-sm font-[650]">{legend}</legend>
+    <fieldset id={id} className="min-w-0" aria-describedby={error === undefined ? undefined : `${name}-error`}>
+      <legend className="text-sm leading-6 font-[650]">{legend}</legend>
       <div className={`mt-1.5 flex border border-strong ${stacked ? 'flex-col' : ''}`}>
         {choices.map((choice, index) => {
           const on = choice.value === value
@@ -38,7 +38,7 @@ export function Segments<V extends string>({
           return (
             <label
               key={choice.value}
-              className={`relative flex min-h-11 flex-1 cursor-pointer items-center gap-2 px-3 py-1.5 text-[0.9375rem] leading-tight has-focus-visible:z-10 has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-own ${stacked ? '' : 'justify-center text-center'} ${between} ${look} ${on ? 'forced-colors:outline-2 forced-colors:-outline-offset-2' : ''}`}
+              className={`relative flex min-h-11 flex-1 cursor-pointer items-center gap-2 px-2.5 py-1.5 text-[0.9375rem] leading-tight has-focus-visible:z-10 has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-own ${stacked ? '' : 'justify-center text-center'} ${between} ${look} ${on ? 'forced-colors:outline-2 forced-colors:-outline-offset-2' : ''}`}
             >
               <input
                 type="radio"

@@ -163,10 +163,10 @@ function Numbers({ set, verdict }: { set: Wheelset; verdict: WheelsetVerdict | n
   ]
   return (
     <>
-      <dl className="grid grid-cols-3 gap-x-3">
+      <dl className="grid grid-cols-[auto_auto_auto] gap-x-3">
         <div className="col-span-3 border-t border-ink py-3">
           <dt className="text-sm text-soft">{t('facts.limit')}</dt>
-          <dd className="flex flex-wrap items-baseline gap-x-3">
+          <dd className="mt-1 flex flex-wrap items-baseline gap-x-3">
             <span>
               <span className="figure text-5xl">{limit.value}</span>{' '}
               <span className="ms-1 text-lg font-semibold text-soft">{limit.unit}</span>
@@ -183,7 +183,7 @@ function Numbers({ set, verdict }: { set: Wheelset; verdict: WheelsetVerdict | n
           <div key={label} className="order-last border-t border-line pt-2.5">
             <dt className="text-sm text-soft">{label}</dt>
             <dd className="whitespace-nowrap">
-              <span className="figure text-[1.625rem] sm:text-3xl">{value}</span>{' '}
+              <span className="figure text-[1.625rem] xl:text-3xl">{value}</span>{' '}
               <span className="ms-0.5 text-sm font-semibold text-soft">{unit}</span>
             </dd>
           </div>
