@@ -4,10 +4,10 @@ import { cents, currency, marketCode } from './common.ts'
 
 const option = z.string().min(1).max(30)
 export const lineOptions = z.strictObject({
-  frontAxle: option.optional(),
-  rearAxle: option.optional(),
-  freehub: option.optional(),
-  rotorMount: option.optional(),
+  frontAxle: option.nullish(),
+  rearAxle: option.nullish(),
+  freehub: option.nullish(),
+  rotorMount: option.nullish(),
 })
 export type LineOptions = z.infer<typeof lineOptions>
 

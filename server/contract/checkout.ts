@@ -80,7 +80,7 @@ export const order = z.object({
       unitCents: cents,
       lineCents: cents,
       taxCents: cents,
-      options: lineOptions.loose(),
+      options: lineOptions,
       state: z.string(),
       limitCheck: z.enum(['within', 'no-margin', 'unconfirmed']),
       limitKg: z.number(),

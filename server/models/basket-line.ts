@@ -6,10 +6,10 @@ import type { Wheelset } from './wheelset.ts'
 
 /** Which axle, gear body and rotor mount the buyer picked; null where the hub leaves no choice. */
 export interface LineOptions {
-  frontAxle: string | null
-  rearAxle: string | null
-  freehub: string | null
-  rotorMount: string | null
+  frontAxle?: string | null | undefined
+  rearAxle?: string | null | undefined
+  freehub?: string | null | undefined
+  rotorMount?: string | null | undefined
 }
 
 export class BasketLine extends Model<InferAttributes<BasketLine>, InferCreationAttributes<BasketLine>> {

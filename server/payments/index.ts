@@ -9,6 +9,7 @@ export interface CheckoutRequest {
   locale: Locale
   lines: { title: string; quantity: number; unitCents: number }[]
   deliveryCents: number
+  deliveryTitle: string
   totalCents: number
   successUrl: string
   cancelUrl: string
