@@ -6,6 +6,7 @@ import { createApp } from './app.ts'
 import { ConfigError, readConfig } from './config.ts'
 import { openDatabase } from './db.ts'
 import type { Deps } from './deps.ts'
+import { initModels } from './models/index.ts'
 import { startJobs } from './jobs/runner.ts'
 import { createPayments } from './payments/create.ts'
 
@@ -13,6 +14,7 @@ function start() {
   const config = readConfig(process.env)
   const log = pino({ level: config.LOG_LEVEL })
   const db = openDatabase(config.DATABASE_URL)
+  initModels(db)
   const deps: Deps = { config, db, payments: createPayments(config), clock: () => new Date(), log }
   const here = path.dirname(fileURLToPath(import.meta.url))
   const app = createApp(deps, path.resolve(here, '../client'))

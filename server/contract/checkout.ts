@@ -37,6 +37,7 @@ export type OrderRequest = z.output<typeof orderRequest>
 export const orderPlaced = z.object({ orderNumber: z.string(), payUrl: z.string(), orderUrl: z.string() })
 export const payReply = z.object({ payUrl: z.string() })
 
+/** In the order of an order's life; `dropped` ends it early. */
 export const orderStates = [
   'holding',
   'placed',
@@ -44,8 +45,6 @@ export const orderStates = [
   'cleared',
   'queued',
   'on-bench',
-  'measured',
-  'boxed',
   'handed-over',
   'arrived',
   'settled',

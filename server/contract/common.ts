@@ -24,7 +24,8 @@ export const cents = z.number().int().min(0)
 export const isoTime = z.string().describe('ISO 8601, UTC')
 
 /** `{ items, nextCursor }`; nextCursor is null on the last page. */
-export const listOf = <T extends z.ZodType>(item: T) => z.object({ items: z.array(item), nextCursor: z.string().nullable() })
+export const listOf = <T extends z.ZodType>(item: T) =>
+  z.object({ items: z.array(item), nextCursor: z.string().nullable() })
 
 /** Why staff change something; kept with the change for good. */
 export const staffReason = z.string().trim().min(5).max(500)

@@ -1,22 +1,8 @@
 /** The support desk: finding an order, everything about it on one page, refunds, notes. */
 import { z } from 'zod'
 import { cents, currency, isoTime, listOf, locale, staffReason } from './common.ts'
-
-/** In the order of an order's life; `dropped` ends it early. */
-export const orderStates = [
-  'holding',
-  'placed',
-  'query',
-  'cleared',
-  'queued',
-  'on-bench',
-  'handed-over',
-  'arrived',
-  'settled',
-  'dropped',
-] as const
-export const orderState = z.enum(orderStates)
-export type OrderState = z.infer<typeof orderState>
+import { lineOptions } from './basket.ts'
+import { orderState } from './checkout.ts'
 
 export const limitChecks = ['within', 'no-margin', 'unconfirmed'] as const
 export const limitCheck = z.enum(limitChecks)
@@ -49,13 +35,6 @@ export const deskOrderRow = z.object({
 })
 export type DeskOrderRow = z.infer<typeof deskOrderRow>
 export const deskOrderList = listOf(deskOrderRow)
-
-const lineOptions = z.object({
-  frontAxle: z.string().nullable(),
-  rearAxle: z.string().nullable(),
-  freehub: z.string().nullable(),
-  rotorMount: z.string().nullable(),
-})
 
 export const deskLine = z.object({
   id: z.number().int(),

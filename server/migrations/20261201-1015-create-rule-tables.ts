@@ -9,7 +9,7 @@ export async function up(q: QueryInterface) {
     `
       id INT UNSIGNED NOT NULL AUTO_INCREMENT PRIMARY KEY,
       name VARCHAR(80) NOT NULL,
-      version INT UNSIGNED NOT NULL,
+      version VARCHAR(20) NOT NULL,
       in_force_from DATETIME(3) NOT NULL,
       data JSON NOT NULL,
       source TEXT NOT NULL,

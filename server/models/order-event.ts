@@ -1,7 +1,7 @@
 /** What happened to an order, when and by whom. Rows are only added. */
 import { DataTypes, Model } from 'sequelize'
 import type { CreationOptional, InferAttributes, InferCreationAttributes, NonAttribute, Sequelize } from 'sequelize'
-import type { OrderState } from './order.ts'
+import type { OrderState } from '#contract/checkout.ts'
 import type { User } from './user.ts'
 
 export class OrderEvent extends Model<InferAttributes<OrderEvent>, InferCreationAttributes<OrderEvent>> {

@@ -3,7 +3,8 @@ import { DataTypes, Model } from 'sequelize'
 import type { CreationOptional, InferAttributes, InferCreationAttributes, NonAttribute, Sequelize } from 'sequelize'
 import type { AdviceSnapshot } from './advice-snapshot.ts'
 import type { LineOptions } from './basket-line.ts'
-import type { Order, OrderState } from './order.ts'
+import type { OrderState } from '#contract/checkout.ts'
+import type { Order } from './order.ts'
 import type { Wheelset } from './wheelset.ts'
 
 export class OrderLine extends Model<InferAttributes<OrderLine>, InferCreationAttributes<OrderLine>> {

@@ -1,4 +1,5 @@
 /** One purchase. Money in minor units: goods + delivery = total with tax inside, or plus tax where the market excludes it. */
+import type { OrderState } from '#contract/checkout.ts'
 import { DataTypes, Model } from 'sequelize'
 import type { CreationOptional, InferAttributes, InferCreationAttributes, NonAttribute, Sequelize } from 'sequelize'
 import type { LedgerEntry } from './ledger-entry.ts'
@@ -7,20 +8,6 @@ import type { OrderLine } from './order-line.ts'
 import type { OutboxMail } from './outbox-mail.ts'
 import type { Refund } from './refund.ts'
 import type { User } from './user.ts'
-
-export const orderStates = [
-  'holding',
-  'placed',
-  'query',
-  'cleared',
-  'queued',
-  'on-bench',
-  'handed-over',
-  'arrived',
-  'settled',
-  'dropped',
-] as const
-export type OrderState = (typeof orderStates)[number]
 
 export interface DeliveryAddress {
   name: string

@@ -5,7 +5,7 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 export class RuleTable extends Model<InferAttributes<RuleTable>, InferCreationAttributes<RuleTable>> {
   declare id: CreationOptional<number>
   declare name: string
-  declare version: number
+  declare version: string
   declare inForceFrom: Date
   declare data: unknown
   declare source: string
@@ -20,7 +20,7 @@ export const initRuleTable = (sequelize: Sequelize) =>
     {
       id: { type: DataTypes.INTEGER.UNSIGNED, autoIncrement: true, primaryKey: true },
       name: { type: DataTypes.STRING(80), allowNull: false },
-      version: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
+      version: { type: DataTypes.STRING(20), allowNull: false },
       inForceFrom: { type: DataTypes.DATE(3), allowNull: false },
       data: { type: DataTypes.JSON, allowNull: false },
       source: { type: DataTypes.TEXT, allowNull: false },

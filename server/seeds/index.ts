@@ -27,7 +27,7 @@ import { catalogue, hubs, rims, spokes } from './catalogue.ts'
 import { limitProof } from './facts.ts'
 import { markets } from './markets.ts'
 import { demoOrders } from './orders.ts'
-import { ruleTables } from './rule-tables.ts'
+import { RULES_VERSION, ruleTables } from './rule-tables.ts'
 import { texts } from './texts.ts'
 import { demoUserRows } from './users.ts'
 
@@ -173,14 +173,14 @@ async function seedRange(transaction: Transaction) {
     { transaction },
   )
   await RuleTable.bulkCreate(
-    numbered(ruleTables.map(({ name, source, label, data }) => ({ name, source, label, data, version: 1 }))).map(
-      (table) => ({
-        ...table,
-        inForceFrom: DEMO_START,
-        state: 'in-force' as const,
-        ...start,
-      }),
-    ),
+    numbered(
+      ruleTables.map(({ name, source, label, data }) => ({ name, source, label, data, version: RULES_VERSION })),
+    ).map((table) => ({
+      ...table,
+      inForceFrom: DEMO_START,
+      state: 'in-force' as const,
+      ...start,
+    })),
     { transaction },
   )
 }

@@ -1,5 +1,5 @@
 /** The way an invented order went: which states, when, who moved it. */
-import type { OrderState } from '../models/order.ts'
+import type { OrderState } from '#contract/checkout.ts'
 import type { Prng } from './prng.ts'
 
 export interface Step {

@@ -4,7 +4,7 @@ import type { LimitImpact } from '#contract/product-desk.ts'
 import type { Deps } from '../../deps.ts'
 import { notFound } from '../../http/errors.ts'
 import { LimitVersion } from '../../models/limit-version.ts'
-import type { OrderState } from '../../models/order.ts'
+import type { OrderState } from '#contract/checkout.ts'
 import { currentLimit } from './limits.ts'
 
 /** More than this many are counted but not listed. */
