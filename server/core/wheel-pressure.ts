@@ -137,14 +137,15 @@ export function wheelPressure(
   if (verdict === 'not-suitable' || bandHalf === null) return { ...base, verdict, pressure: null, widthThatWouldDoMm }
 
   const clip = (bar: number) => Math.min(ceilingBar, Math.max(floorBar, bar))
+  // The band lies around the wanted value and is clipped with it: around the clipped one, more load could lower its edge.
   const startBar = clip(wanted)
   return {
     ...base,
     verdict,
     pressure: {
-      lowBar: clip(startBar * (1 - bandHalf)),
+      lowBar: clip(wanted * (1 - bandHalf)),
       startBar,
-      highBar: clip(startBar * (1 + bandHalf)),
+      highBar: clip(wanted * (1 + bandHalf)),
       ceilingBar,
       ceilingFrom,
       floorBar,
