@@ -47,6 +47,16 @@ export const router = createBrowserRouter([
           { path: 'sign-in', ...page(async () => (await import('../pages/account/SignInPage.tsx')).SignInPage) },
           { path: 'account', ...page(async () => (await import('../pages/account/AccountPage.tsx')).AccountPage) },
           // desks (support-desk, product-desk)
+          {
+            ...page(async () => (await import('./DeskLayout.tsx')).DeskLayout),
+            children: [
+              { path: 'desk/orders', ...page(async () => (await import('../pages/support-desk/DeskOrdersPage.tsx')).DeskOrdersPage) },
+              { path: 'desk/orders/:orderNumber', ...page(async () => (await import('../pages/support-desk/DeskOrderPage.tsx')).DeskOrderPage) },
+              { path: 'product/wheelsets', ...page(async () => (await import('../pages/product-desk/ProductWheelsetsPage.tsx')).ProductWheelsetsPage) },
+              { path: 'product/wheelsets/:sku', ...page(async () => (await import('../pages/product-desk/ProductWheelsetPage.tsx')).ProductWheelsetPage) },
+              { path: 'product/limits', ...page(async () => (await import('../pages/product-desk/LimitsPage.tsx')).LimitsPage) },
+            ],
+          },
           { path: '*', Component: ErrorPage },
         ],
       },

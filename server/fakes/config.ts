@@ -1,0 +1,17 @@
+/** Settings of the stand-ins. They import nothing of the shop: what they know of it comes over the wire. */
+import { z } from 'zod'
+
+const port = z.coerce.number<string>().int().min(1).max(65535)
+const settings = z.object({
+  HOST: z.string().min(1).default('127.0.0.1'),
+  DATA_DIR: z.string().min(1).default('.data'),
+  PUBLIC_URL: z.string().default('http://127.0.0.1:4300'),
+  STRIPE_FAKE_PORT: port.optional(),
+  STRIPE_SECRET_KEY: z.string().default(''),
+  STRIPE_WEBHOOK_SECRET: z.string().default(''),
+  STRIPE_WEBHOOK_URL: z.url().optional(),
+  MAIL_SINK_PORT: port.optional(),
+  SMTP_PORT: port.optional(),
+})
+
+export const readFakesConfig = (env: Record<string, string | undefined>) => settings.parse(env)
