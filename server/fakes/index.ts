@@ -1,0 +1,50 @@
+/** The stand-ins as one process beside the shop: payments on one port, mails on two others. */
+import path from 'node:path'
+import { readFakesConfig } from './config.ts'
+import { createMailSink } from './mail/sink.ts'
+import { createStripeFake } from './stripe/server.ts'
+
+const config = readFakesConfig(process.env)
+const { HOST: host, DATA_DIR, STRIPE_FAKE_PORT, MAIL_SINK_PORT, SMTP_PORT } = config
+
+const running = [
+  ...(STRIPE_FAKE_PORT === undefined
+    ? []
+    : [
+        createStripeFake({
+          port: STRIPE_FAKE_PORT,
+          host,
+          secretKey: config.STRIPE_SECRET_KEY,
+          webhookSecret: config.STRIPE_WEBHOOK_SECRET,
+          webhookUrl: config.STRIPE_WEBHOOK_URL ?? `${config.PUBLIC_URL}/api/webhooks/stripe`,
+          file: path.join(DATA_DIR, 'stripe-fake.json'),
+        }),
+      ]),
+  ...(SMTP_PORT === undefined || MAIL_SINK_PORT === undefined
+    ? []
+    : [
+        createMailSink({
+          smtpPort: SMTP_PORT,
+          webPort: MAIL_SINK_PORT,
+          host,
+          file: path.join(DATA_DIR, 'mails.jsonl'),
+        }),
+      ]),
+]
+
+let stopping = false
+const stop = async () => {
+  if (stopping) return
+  stopping = true
+  await Promise.allSettled(running.map((one) => one.stop()))
+  process.exit(0)
+}
+process.on('SIGTERM', () => void stop())
+process.on('SIGINT', () => void stop())
+
+try {
+  await Promise.all(running.map((one) => one.start()))
+} catch (error) {
+  console.error(`A stand-in cannot listen: ${error instanceof Error ? error.message : String(error)}`)
+  process.exit(1)
+}
