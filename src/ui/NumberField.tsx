@@ -11,6 +11,8 @@ interface NumberFieldProps {
   /** The rider's own number stands large and red. */
   large?: boolean
   name?: string
+  /** For an error summary that points here. */
+  id?: string
   className?: string
 }
 
@@ -29,6 +31,7 @@ export function NumberField({
   onChange,
   large = false,
   name,
+  id,
   className,
 }: NumberFieldProps) {
   const [text, setText] = useState(value === null ? '' : String(value))
@@ -39,7 +42,7 @@ export function NumberField({
     if (parseNumber(text) !== value) setText(value === null ? '' : String(value))
   }
   return (
-    <Field label={label} hint={hint} error={error} className={className}>
+    <Field label={label} hint={hint} error={error} className={className} id={id}>
       {(ids) => (
         <div
           className={`flex max-w-72 border bg-sheet ${error !== undefined ? 'border-2 border-own' : 'border-ink'} focus-within:outline-3 focus-within:outline-offset-2 focus-within:outline-own`}

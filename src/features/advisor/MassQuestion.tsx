@@ -122,7 +122,7 @@ export function MassQuestion({ mass, onChange, asked, controlName, small = false
             take({ ...entry, value }, false)
           }}
           large={!small}
-          name={controlName}
+          id={controlName}
           className={entry.unit === 'st' ? 'w-36' : 'w-56'}
         />
         {entry.unit === 'st' && (
