@@ -34,8 +34,8 @@ export function roundTo(value: number, step: number, rounding: Rounding): number
       : rounding === 'up'
         ? Math.ceil(count - GUARD)
         : Math.floor(count + 0.5 + GUARD)
-  // Dividing by the inverse keeps 47 steps of 0.1 at 4.7 instead of 4.7000000000000001.
-  return step < 1 ? whole / Math.round(1 / step) : whole * step
+  // Dividing by the inverse keeps 47 steps of 0.1 at 4.7 instead of 4.7000000000000001; adding 0 turns the -0 of a rounded-up nothing into 0.
+  return (step < 1 ? whole / Math.round(1 / step) : whole * step) + 0
 }
 
 /**

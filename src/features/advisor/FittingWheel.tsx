@@ -25,7 +25,7 @@ export function FittingWheel({ draft, className }: { draft: Draft; className?: s
   return (
     <figure className={className}>
       <figcaption>
-        <span className="block text-lg font-bold">{t('fitting.drawn.made', { count: made.length })}</span>
+        <span className="block text-lg font-bold">{t(ride === undefined ? 'fitting.drawn.all' : 'fitting.drawn.made', { count: made.length })}</span>
         <span className="text-sm text-soft">{t('fitting.drawn.one', { name: one.name })}</span>
       </figcaption>
       <WheelDrawing

@@ -87,6 +87,7 @@ export function MassQuestion({ mass, onChange, asked, controlName, small = false
         </Field>
         <Button
           kind="quiet"
+          className="px-0! text-start"
           onClick={() => {
             setBanded(false)
             onChange(null)
@@ -203,7 +204,7 @@ export function MassQuestion({ mass, onChange, asked, controlName, small = false
       )}
       <Button
         kind="quiet"
-        className={small ? 'text-sm!' : ''}
+        className={`px-0! text-start ${small ? 'text-sm!' : ''}`}
         onClick={() => {
           setBanded(true)
           onChange(null)
