@@ -24,7 +24,9 @@ export function formatter(language: string, units: Pick<Preferences, 'mass' | 'p
     return found.format(value)
   }
   const shown = (value: number, unit: keyof typeof DIGITS, rounding: Rounding): Shown => {
-    const text = number(inUnit(value, unit, rounding), DIGITS[unit])
+    const rounded = inUnit(value, unit, rounding)
+    // A stated limit of 120 kg is 120, not 120.0; a rider's own sum keeps its tenth.
+    const text = number(rounded, rounding === 'down' && Number.isInteger(rounded) ? 0 : DIGITS[unit])
     return { value: text, unit, text: `${text}\u00a0${unit}` }
   }
   return {

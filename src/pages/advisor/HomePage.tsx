@@ -17,6 +17,10 @@ import { WheelDrawing } from '../../ui/WheelDrawing.tsx'
 const example: RiderAnswers = {
   ride: 'road-long',
   bodyMassKg: 75,
+  kitMassKg: 3,
+  bikeMassKg: 8.2,
+  luggageKg: 0,
+  confidence: 'average',
   brakes: 'disc',
   tyre: { frontWidthMm: 28, rearWidthMm: 28, setup: 'tubeless' },
 }
