@@ -70,6 +70,10 @@ export const basket = z.object({
   totalCents: cents,
   deliveryDaysFrom: z.number().int(),
   deliveryDaysTo: z.number().int(),
+  /** What concerns the basket as a whole; each line has its own besides. */
+  problems: z.array(basketProblem),
   canOrder: z.boolean(),
+  /** The unpaid order that this basket became; its stock is held. Changing the basket leaves that order. */
+  heldOrder: z.object({ orderNumber: z.string(), orderUrl: z.string() }).nullable(),
 })
 export type BasketView = z.infer<typeof basket>

@@ -10,20 +10,35 @@ const BATCH = 20
 /** Seconds until the next try: 5, 10, 20 … up to an hour. */
 const backOff = (attempts: number) => Math.min(3600, 5 * 2 ** (attempts - 1))
 
-export function createMailer({ config, log }: Pick<Deps, 'config' | 'log'>) {
-  const transport = createTransport(config.SMTP_URL, { from: config.MAIL_FROM })
+/** A server that takes the connection and says nothing is given up on well within a job's turn; its own waits are minutes. */
+const PATIENCE_MS = 10_000
+
+/** @param patienceMs how long each step of handing a mail over may take */
+export function createMailer({ config }: Pick<Deps, 'config'>, patienceMs = PATIENCE_MS) {
+  const transport = createTransport(
+    {
+      url: config.SMTP_URL,
+      connectionTimeout: patienceMs,
+      greetingTimeout: patienceMs,
+      socketTimeout: patienceMs,
+      dnsTimeout: patienceMs,
+    },
+    { from: config.MAIL_FROM },
+  )
+  const domain = new URL(config.PUBLIC_URL).hostname
   return {
-    send: (mail: Pick<OutboxMail, 'recipient' | 'subject' | 'text' | 'html'>) =>
+    send: (mail: Pick<OutboxMail, 'kind' | 'ref' | 'recipient' | 'subject' | 'text' | 'html'>) =>
       transport.sendMail({
         to: mail.recipient,
         subject: mail.subject,
         text: mail.text,
         html: mail.html,
+        // The same for every try: a mail that was taken just before its sender died is not shown twice by the reader's program.
+        messageId: `<${mail.kind}.${mail.ref}@${domain}>`,
         headers: { 'Auto-Submitted': 'auto-generated' },
       }),
     close: () => {
       transport.close()
-      log.debug('mail transport closed')
     },
   }
 }

@@ -38,6 +38,7 @@ export interface PaymentEvent {
 }
 
 export interface Payments {
+  /** @throws AppError payment-unavailable (503: nobody can say whether it was done), payment-refused (409: it was not) */
   startCheckout(request: CheckoutRequest): Promise<{ sessionId: string; url: string }>
   readCheckout(sessionId: string): Promise<CheckoutState>
   expireCheckout(sessionId: string): Promise<void>
@@ -47,5 +48,5 @@ export interface Payments {
     paymentIntentId: string
     amountCents: number
     idempotencyKey: string
-  }): Promise<{ refundId: string; done: boolean }>
+  }): Promise<{ refundId: string }>
 }

@@ -59,7 +59,9 @@ export function createStripe(config: Config, clock: () => Date): Payments {
       const refund = await stripe.refunds
         .create({ payment_intent: paymentIntentId, amount: amountCents }, { idempotencyKey })
         .catch(unavailable)
-      return { refundId: refund.id, done: refund.status === 'succeeded' }
+      if (refund.status === 'failed' || refund.status === 'canceled')
+        throw new AppError('payment-refused', 409, { reason: refund.failure_reason ?? refund.status })
+      return { refundId: refund.id }
     },
   }
 }

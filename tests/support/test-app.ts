@@ -64,7 +64,7 @@ export async function testApp({ seed = 'range' }: Filling = {}) {
     db: database.sequelize,
     payments: createPayments(config, clock),
     clock,
-    log: pino({ level: 'silent' }),
+    log: pino({ level: process.env.TEST_LOG ?? 'silent' }),
   }
   const app = createApp(deps, null)
   server.on('request', app)

@@ -1,6 +1,6 @@
 /** Advice from the catalogue and the rules in force. A body mass is private: nothing is stored unless the rider asks for it. */
 import { createHash, randomUUID } from 'node:crypto'
-import { Op } from 'sequelize'
+import { Op, type Transaction } from 'sequelize'
 import type { Advice, RiderAnswers } from '#contract/advisor.ts'
 import { advise } from '#core/advise.ts'
 import { rulesFrom, type Rules } from '#core/rules.ts'
@@ -10,11 +10,15 @@ import { RuleTable } from '../../models/rule-table.ts'
 import { readCatalogue, type StoredWheelset } from '../catalogue/read.ts'
 
 /** The rule tables in force now, newest of each name. */
-async function readRules({ clock }: Pick<Deps, 'clock'>): Promise<{ rules: Rules; version: string }> {
+async function readRules(
+  { clock }: Pick<Deps, 'clock'>,
+  transaction?: Transaction,
+): Promise<{ rules: Rules; version: string }> {
   const rows = await RuleTable.findAll({
     where: { state: ['seconded', 'in-force'], inForceFrom: { [Op.lte]: clock() } },
     order: [['name', 'ASC'], ['inForceFrom', 'ASC'], ['id', 'ASC']], // prettier-ignore
     raw: true,
+    ...(transaction ? { transaction } : {}),
   })
   const newest = [...new Map(rows.map((row) => [row.name, row])).values()]
   const version =
@@ -41,8 +45,16 @@ function versionOf(version: string, rules: Rules, catalogue: readonly StoredWhee
   return `${version}+${digest}`
 }
 
-export async function giveAdvice(deps: Pick<Deps, 'db' | 'clock'>, answers: RiderAnswers): Promise<Advice> {
-  const [catalogue, { rules, version }] = await Promise.all([readCatalogue(deps, 'en'), readRules(deps)])
+/** @param transaction reads on its connection */
+export async function giveAdvice(
+  deps: Pick<Deps, 'db' | 'clock'>,
+  answers: RiderAnswers,
+  transaction?: Transaction,
+): Promise<Advice> {
+  const [catalogue, { rules, version }] = await Promise.all([
+    readCatalogue(deps, 'en', false, transaction),
+    readRules(deps, transaction),
+  ])
   return advise(answers, catalogue, rules, versionOf(version, rules, catalogue))
 }
 

@@ -3,7 +3,9 @@ import { basket, basketRequest } from '#contract/basket.ts'
 import { marketCode } from '#contract/common.ts'
 import { route, type Route } from '../../http/route.ts'
 import { localeOf } from '../../http/texts.ts'
-import { emptyBasket, openBasket, putBasket, readMarket, showBasket } from './service.ts'
+import { findHeldOrder, leaveOrder } from '../checkout/leave-order.ts'
+import { orderUrl } from '../checkout/order-token.ts'
+import { emptyBasket, findBasket, putBasket, readMarket, readRequest, showBasket } from './service.ts'
 
 const feature = 'basket'
 
@@ -18,9 +20,13 @@ export const basketRoutes: Route[] = [
       query: z.strictObject({ market: marketCode.optional() }),
       reply: basket,
     },
-    async ({ deps, req, query }) => {
-      const found = await openBasket(req.session.basketId)
-      return found ? showBasket(deps, found, localeOf(req)) : emptyBasket(await readMarket(query.market ?? 'PT'))
+    async ({ deps, req, query, user }) => {
+      const found = await findBasket({ basketId: req.session.basketId, userId: user?.id ?? null })
+      const held = found && (await findHeldOrder(found.id))
+      if (!found || (found.state === 'ordered' && !held)) return emptyBasket(await readMarket(query.market ?? 'PT'))
+      if (req.session.basketId !== found.id) req.session.basketId = found.id
+      const heldOrder = held && { orderNumber: held.number, orderUrl: orderUrl(deps.config, held.number) }
+      return showBasket(deps, found, localeOf(req), heldOrder)
     },
   ),
   route(
@@ -35,9 +41,16 @@ export const basketRoutes: Route[] = [
     },
     async ({ deps, req, body, user }) => {
       const locale = localeOf(req)
-      const kept = await putBasket(deps, body, { basketId: req.session.basketId, userId: user?.id ?? null, locale })
+      const userId = user?.id ?? null
+      const asked = await readRequest(deps, body, locale)
+      const visitor = { basketId: req.session.basketId, userId }
+      const before = await findBasket(visitor)
+      // An unpaid order of this basket is left: what it holds is what the shopper is changing.
+      const held = before && (await findHeldOrder(before.id))
+      if (held) await leaveOrder(deps, held, 'dropped', { reason: 'basket-changed' })
+      const kept = await putBasket(deps, asked, held ? await findBasket(visitor) : before, { userId, locale })
       req.session.basketId = kept.id
-      return showBasket(deps, kept, locale)
+      return showBasket(deps, kept, locale, null)
     },
   ),
 ]

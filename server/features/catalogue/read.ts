@@ -2,7 +2,7 @@
  * The range as it stands now: every wheelset with its parts, the limit and the prices in force, its words, what can still be sold.
  * Two statements however many wheelsets there are, and no cache: a lowered limit counts from the next call on.
  */
-import { QueryTypes } from 'sequelize'
+import { QueryTypes, type Transaction } from 'sequelize'
 import type { Wheelset } from '#contract/catalogue.ts'
 import type { Locale } from '#contract/common.ts'
 import type { Deps } from '../../deps.ts'
@@ -68,17 +68,27 @@ const PRICES = `
     SELECT 1 FROM prices q WHERE q.wheelset_id = p.wheelset_id AND q.currency = p.currency AND q.valid_from <= :now
       AND (q.valid_from > p.valid_from OR (q.valid_from = p.valid_from AND q.id > p.id)))`
 
-/** @param everything also what is off sale (product desk) */
+/**
+ * @param everything also what is off sale (product desk)
+ * @param transaction reads on its connection: inside a transaction a second connection might never come free
+ */
 export async function readCatalogue(
   { db, clock }: Pick<Deps, 'db' | 'clock'>,
   locale: Locale,
   everything = false,
+  transaction?: Transaction,
 ): Promise<StoredWheelset[]> {
   const replacements = { now: clock(), locale, everything }
-  const rows = await db.query<WheelRow & Record<string, unknown>>(WHEELS, { replacements, type: QueryTypes.SELECT })
+  const inside = transaction ? { transaction } : {}
+  const rows = await db.query<WheelRow & Record<string, unknown>>(WHEELS, {
+    replacements,
+    type: QueryTypes.SELECT,
+    ...inside,
+  })
   const prices = await db.query<{ wheelsetId: number; currency: 'EUR' | 'GBP' | 'USD'; priceCents: number }>(PRICES, {
     replacements,
     type: QueryTypes.SELECT,
+    ...inside,
   })
   const sets = new Map<number, StoredWheelset>()
   for (const row of rows) {

@@ -17,10 +17,13 @@ export function dropOrder(
   return inTransaction(deps.db, async (transaction) => {
     const order = await Order.findByPk(orderId, { transaction, lock: transaction.LOCK.UPDATE })
     if (order?.state !== 'holding') return false
-    await moveOrder(deps, order, move, move === 'dropped' ? buyer : machine, transaction, more)
+    const { basketId } = order
+    // The basket is remembered with the event: should a payment come late after all, it must not be ordered twice.
+    const data = { data: { basketId } }
+    await moveOrder(deps, order, move, move === 'dropped' ? buyer : machine, transaction, { ...more, ...data })
     const lines = await OrderLine.findAll({ where: { orderId }, transaction })
     await release(deps.db, lines, transaction)
-    if (order.basketId !== null) await Basket.update({ state: 'open' }, { where: { id: order.basketId }, transaction })
+    if (basketId !== null) await Basket.update({ state: 'open' }, { where: { id: basketId }, transaction })
     await order.update({ basketId: null, payUrl: null }, { transaction })
     return true
   })

@@ -1,6 +1,7 @@
 /**
- * The key in a guest's order link. Derived from the order's number under the shop's secret (256 bits), so that every mail can carry the same link
- * while the table holds only a digest: a copy of the database opens no order.
+ * The key in a guest's order link: 256 bits, derived from the order's number under the shop's secret, so that every mail and every reply can carry
+ * the same link without the orders table holding it: that keeps a digest. It stands in clear only where the link itself has to: in the mails of the
+ * outbox, and for a day in the kept answer of the ordering call.
  */
 import { createHash, createHmac, timingSafeEqual } from 'node:crypto'
 import type { Config } from '../../config.ts'

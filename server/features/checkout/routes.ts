@@ -7,18 +7,34 @@ import {
   payReply,
   webhookReceived,
 } from '#contract/checkout.ts'
+import type { Deps } from '../../deps.ts'
 import { AppError } from '../../http/errors.ts'
-import { route, type Route } from '../../http/route.ts'
+import { route, type Call, type Route } from '../../http/route.ts'
+import type { SignedIn } from '../../http/session.ts'
 import { localeOf } from '../../http/texts.ts'
-import { Order } from '../../models/order.ts'
-import { dropOrder } from './drop-order.ts'
-import { placeOrder, startPayment } from './place-order.ts'
+import type { Order } from '../../models/order.ts'
+import { leaveOrder } from './leave-order.ts'
+import { withinGuesses } from './order-guesses.ts'
+import { placeOrder } from './place-order.ts'
+import { payPageIsOver, startPayment } from './start-payment.ts'
 import { settleCheckout } from './settle.ts'
 import { findReadable, viewOrder } from './view-order.ts'
 import { takeEvent } from './webhook.ts'
 
 const feature = 'checkout'
 const one = { params: orderParams, query: orderKey }
+
+type OneOrder = Pick<
+  Call<{ orderNumber: string }, { key?: string | undefined }, unknown>,
+  'req' | 'res' | 'params' | 'query'
+> & {
+  deps: Deps
+  user: SignedIn | null
+}
+const readable = async ({ req, res, params, query, user }: OneOrder): Promise<Order> => {
+  await withinGuesses(req, res)
+  return findReadable(params.orderNumber, { user, key: query.key })
+}
 
 export const checkoutRoutes: Route[] = [
   route(
@@ -46,8 +62,7 @@ export const checkoutRoutes: Route[] = [
       ...one,
       reply: order,
     },
-    async ({ deps, params, query, user }) =>
-      viewOrder(deps, await findReadable(params.orderNumber, { user, key: query.key })),
+    async (call) => viewOrder(call.deps, await readable(call)),
   ),
   route(
     {
@@ -59,10 +74,11 @@ export const checkoutRoutes: Route[] = [
       ...one,
       reply: order,
     },
-    async ({ deps, params, query, user }) => {
-      const found = await findReadable(params.orderNumber, { user, key: query.key })
-      if (found.stripeSessionId !== null && found.state === 'holding') await settleCheckout(deps, found.stripeSessionId)
-      return viewOrder(deps, await Order.findByPk(found.id, { rejectOnEmpty: true }))
+    async (call) => {
+      const found = await readable(call)
+      if (found.stripeSessionId !== null && found.state === 'holding')
+        await settleCheckout(call.deps, found.stripeSessionId)
+      return viewOrder(call.deps, await found.reload())
     },
   ),
   route(
@@ -75,9 +91,11 @@ export const checkoutRoutes: Route[] = [
       ...one,
       reply: payReply,
     },
-    async ({ deps, params, query, user }) => {
-      const found = await findReadable(params.orderNumber, { user, key: query.key })
-      return { payUrl: await startPayment(deps, found.id) }
+    async (call) => {
+      const found = await readable(call)
+      if (found.state === 'holding' && payPageIsOver(found, call.deps.clock()))
+        await leaveOrder(call.deps, found, 'lapsed', { reason: 'hold-lapsed' })
+      return { payUrl: await startPayment(call.deps, found.id) }
     },
   ),
   route(
@@ -90,17 +108,12 @@ export const checkoutRoutes: Route[] = [
       ...one,
       reply: order,
     },
-    async ({ deps, params, query, user }) => {
-      const found = await findReadable(params.orderNumber, { user, key: query.key })
-      if (found.state === 'holding') {
-        // The page is closed first, then read: a payment that was quicker wins.
-        if (found.stripeSessionId !== null) {
-          await deps.payments.expireCheckout(found.stripeSessionId)
-          await settleCheckout(deps, found.stripeSessionId)
-        }
-        await dropOrder(deps, found.id, 'dropped', { reason: 'left-by-buyer' })
-      } else if (found.state !== 'dropped') throw new AppError('too-late-to-leave', 409)
-      return viewOrder(deps, await Order.findByPk(found.id, { rejectOnEmpty: true }))
+    async (call) => {
+      const found = await readable(call)
+      if (found.state !== 'holding' && found.state !== 'dropped') throw new AppError('too-late-to-leave', 409)
+      const left =
+        found.state === 'holding' ? await leaveOrder(call.deps, found, 'dropped', { reason: 'left-by-buyer' }) : found
+      return viewOrder(call.deps, left)
     },
   ),
   route(

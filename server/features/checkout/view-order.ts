@@ -8,7 +8,7 @@ import { OrderLine } from '../../models/order-line.ts'
 import { Order } from '../../models/order.ts'
 import { OutboxMail } from '../../models/outbox-mail.ts'
 import { opens } from './order-token.ts'
-import { moneyOf } from './refunds.ts'
+import { moneyOf } from './money.ts'
 
 export interface Reader {
   user: SignedIn | null
