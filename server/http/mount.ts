@@ -7,6 +7,8 @@ import type { Access, Route } from './route.ts'
 import { readUser, type SignedIn } from './session.ts'
 
 const BODY_LIMIT = '100kb'
+/** Issues then carry what was sent: a field that is missing is told from one of the wrong kind. Nothing of it is sent back. */
+const READ = { reportInput: true }
 const readJson = express.json({ limit: BODY_LIMIT, type: 'application/json' })
 const readRaw = express.raw({ limit: '1mb', type: () => true })
 
@@ -28,9 +30,9 @@ export function mountRoutes(app: Express, routes: readonly Route[], deps: Deps) 
   for (const { spec, handle } of routes) {
     const readBody = spec.raw ? [readRaw] : spec.body ? [jsonOnly, readJson] : []
     const work = async (req: Request, res: Response) => {
-      const params = spec.params?.parse(req.params)
-      const query = spec.query ? spec.query.parse(req.query) : undefined
-      const body = spec.body ? spec.body.parse(req.body ?? {}) : undefined
+      const params = spec.params?.parse(req.params, READ)
+      const query = spec.query ? spec.query.parse(req.query, READ) : undefined
+      const body = spec.body ? spec.body.parse(req.body ?? {}, READ) : undefined
       const user = res.locals.user as SignedIn | null
       const call = { deps, req, res, params, query, body, user } as never
       const answer = async () => ({
