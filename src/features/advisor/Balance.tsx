@@ -1,0 +1,164 @@
+import { useState } from 'react'
+import { Link } from 'react-router-dom'
+import type { Advice } from '#contract/advisor.ts'
+import { Button } from '../../ui/Button.tsx'
+import { Verdict } from '../../ui/Verdict.tsx'
+import { standings, useAdviceWords } from './words.ts'
+
+const FEW = 5
+/** Degrees by which a beam tips once the total is past the limit. */
+const TIP = 3
+
+type Judged = Advice['wheelsets'][number]
+
+/** Every offered wheelset as a beam: the total against its limit. Those just past the limit stand below, tipped. */
+export function Balance({ advice }: { advice: Advice }) {
+  const { t, format } = useAdviceWords()
+  const [all, setAll] = useState(false)
+  const { systemMassKg: totalKg, wheelsets } = advice
+  const offered = wheelsets.filter(({ rank }) => rank !== null)
+  const over = wheelsets
+    .filter(({ verdict }) => verdict === 'over-limit')
+    .sort((a, b) => b.limitKg - a.limitKg)
+    .slice(0, 3)
+  if (offered.length + over.length === 0) return null
+  const shown = all ? offered : offered.slice(0, FEW)
+  const endKg = Math.max(totalKg, ...[...offered, ...over].map(({ limitKg }) => limitKg)) * 1.015
+  const total = format.mass(totalKg, 'up').text
+  return (
+    <section>
+      <h2>
+        {offered.length > 0
+          ? t('findings.balance.title', { count: offered.length, total })
+          : t('findings.balance.titleNone', { total })}
+      </h2>
+      <p className="mt-1 text-sm text-soft">{t('findings.balance.text')}</p>
+      {offered.length > 0 && (
+        <ol className="mt-3 border-t border-line">
+          {shown.map((one) => (
+            <Row key={one.sku} judged={one} totalKg={totalKg} endKg={endKg} />
+          ))}
+        </ol>
+      )}
+      {offered.length > FEW && (
+        <Button
+          kind="quiet"
+          className="mt-1 px-0! text-sm!"
+          aria-expanded={all}
+          onClick={() => {
+            setAll(!all)
+          }}
+        >
+          {all ? t('findings.balance.less') : t('findings.balance.more', { count: offered.length - FEW })}
+        </Button>
+      )}
+      {over.length > 0 && (
+        <>
+          <h3 className="mt-4">{t('findings.balance.over')}</h3>
+          <ul className="mt-2 border-t border-line">
+            {over.map((one) => (
+              <Row key={one.sku} judged={one} totalKg={totalKg} endKg={endKg} />
+            ))}
+          </ul>
+        </>
+      )}
+    </section>
+  )
+}
+
+function Row({ judged, totalKg, endKg }: { judged: Judged; totalKg: number; endKg: number }) {
+  const { t, format, verdict } = useAdviceWords()
+  const { name, slug, limitKg, codes, rank, startBar } = judged
+  const over = judged.verdict === 'over-limit'
+  return (
+    <li className="grid grid-cols-[minmax(0,1fr)_auto] items-center gap-x-4 gap-y-1 border-b border-line py-2.5 sm:grid-cols-[8.5rem_minmax(0,1fr)_9.5rem]">
+      <p className="leading-tight">
+        <Link to={`/range/${slug}`} className="text-base font-bold no-underline hover:underline">
+          {name}
+        </Link>
+        {rank === 1 && <span className="block text-xs text-soft">{t('findings.balance.first')}</span>}
+      </p>
+      <Beam
+        judged={judged}
+        totalKg={totalKg}
+        endKg={endKg}
+        label={t('findings.balance.row', {
+          total: format.mass(totalKg, 'up').text,
+          limit: format.mass(limitKg, 'down').text,
+        })}
+      />
+      <p className="text-end max-sm:col-start-2 max-sm:row-start-1">
+        <Verdict standing={standings[judged.verdict]}>{verdict(judged)}</Verdict>
+      </p>
+      {!over && (
+        <p className="col-span-full text-[0.8125rem] leading-snug text-soft">
+          {codes.map((code) => t([`findings.why.${code}`, 'findings.why.other'])).join(' · ')}
+          {startBar && (
+            <>
+              {' · '}
+              {t('findings.balance.start', {
+                front: format.pressure(startBar.front).value,
+                rear: format.pressure(startBar.rear).text,
+              })}
+            </>
+          )}
+        </p>
+      )}
+    </li>
+  )
+}
+
+interface BeamProps {
+  judged: Pick<Judged, 'verdict' | 'limitKg'>
+  totalKg: number
+  endKg: number
+  label: string
+}
+
+const colours = {
+  fits: { fill: 'bg-within/25', end: 'bg-within' },
+  'no-margin': { fill: 'bg-near/25', end: 'bg-near' },
+  'over-limit': { fill: 'bg-soft/30', end: 'bg-stop' },
+  mismatch: { fill: 'bg-soft/20', end: 'bg-soft' },
+  pressure: { fill: 'bg-soft/20', end: 'bg-soft' },
+} as const
+
+/** From nothing to the limit, all beams to one scale; the rider's total as a red mark. Past the limit the beam tips over its end. */
+export function Beam({ judged: { verdict, limitKg }, totalKg, endKg, label }: BeamProps) {
+  const over = totalKg > limitKg
+  const at = (kg: number) => `${(kg / endKg) * 100}%`
+  const { fill, end } = colours[verdict]
+  return (
+    <div role="img" aria-label={label} className="relative h-8 max-sm:col-span-2">
+      <div
+        className="absolute inset-0 transition-transform motion-reduce:transition-none"
+        style={over ? { transform: `rotate(${TIP}deg)`, transformOrigin: `${at(limitKg)} 50%` } : undefined}
+      >
+        <span
+          className={`absolute top-1/2 h-2 -translate-y-1/2 transition-[width] print:border print:border-soft ${fill}`}
+          style={{ width: at(limitKg) }}
+        />
+        {over && (
+          <span
+            className="absolute top-1/2 h-0.5 -translate-y-1/2 bg-own"
+            style={{ left: at(limitKg), width: at(totalKg - limitKg) }}
+          />
+        )}
+        <span className="absolute top-1 h-6 w-0.5 -translate-x-1/2 bg-own transition-[left]" style={{ left: at(totalKg) }} />
+      </div>
+      <span
+        className={`absolute top-1.5 h-5 w-[3px] -translate-x-1/2 transition-[left] ${end}`}
+        style={{ left: at(limitKg) }}
+      />
+      {/* The pivot stands under the limit: left of it the beam lies level. */}
+      <svg
+        aria-hidden
+        viewBox="0 0 10 6"
+        className="absolute -bottom-0.5 h-1.5 w-2.5 -translate-x-1/2 text-ink"
+        style={{ left: at(limitKg) }}
+      >
+        <path d="M5 0 10 6H0Z" fill="currentColor" />
+      </svg>
+    </div>
+  )
+}

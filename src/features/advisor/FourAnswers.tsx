@@ -1,0 +1,211 @@
+import type { ReactNode } from 'react'
+import { Trans } from 'react-i18next'
+import type { Advice } from '#contract/advisor.ts'
+import { ButtonLink } from '../../ui/Button.tsx'
+import { useAdviceWords } from './words.ts'
+import { WithWorking } from './Working.tsx'
+
+/** Pressure, depth, spokes and margin in large numerals, each with its band and its working. */
+export function FourAnswers({ advice }: { advice: Advice }) {
+  return (
+    <div className="grid border-t border-ink sm:grid-cols-2">
+      <Cell>
+        <Pressure advice={advice} />
+      </Cell>
+      {advice.rimDepthMm && (
+        <Cell>
+          <Depth advice={advice} depth={advice.rimDepthMm} />
+        </Cell>
+      )}
+      {advice.spokes && (
+        <Cell>
+          <Spokes advice={advice} spokes={advice.spokes} />
+        </Cell>
+      )}
+      <Cell>
+        <Margin advice={advice} />
+      </Cell>
+    </div>
+  )
+}
+
+const Cell = ({ children }: { children: ReactNode }) => (
+  <section className="border-b border-line py-4 sm:odd:pe-6 sm:nth-[2n]:border-s sm:nth-[2n]:ps-6">{children}</section>
+)
+
+function Figures({ parts, unit }: { parts: readonly { name?: string; value: string }[]; unit?: string }) {
+  return (
+    <p className="mt-1.5 flex flex-wrap items-end gap-x-5 gap-y-1">
+      {parts.map(({ name, value }) => (
+        <span key={name ?? value}>
+          {name !== undefined && <span className="block text-sm leading-tight text-soft">{name} </span>}
+          <span className="figure text-[2.5rem] whitespace-nowrap">{value}</span>
+        </span>
+      ))}
+      {unit !== undefined && <span className="pb-1.5 text-lg font-semibold text-soft">{unit}</span>}
+    </p>
+  )
+}
+
+const Small = ({ children }: { children: ReactNode }) => <p className="mt-1.5 text-sm text-soft">{children}</p>
+
+function Pressure({ advice: { pressure, reasons, notes } }: { advice: Advice }) {
+  const { t, format, start, edge } = useAdviceWords()
+  const label = t('findings.answers.pressure')
+  const both = [
+    { key: 'pressure.front', title: t('common:front'), reason: reasons['pressure.front'] },
+    { key: 'pressure.rear', title: t('common:rear'), reason: reasons['pressure.rear'] },
+  ]
+  if (!pressure) {
+    const outside = notes.some(({ code }) => code === 'outside-model')
+    return (
+      <WithWorking label={label} name={label} reasons={both}>
+        <p className="figure mt-2 text-2xl">
+          {t(outside ? 'findings.answers.noPressureModel' : 'findings.answers.noPressure')}
+        </p>
+        <Small>{t(outside ? 'findings.answers.noPressureModelText' : 'findings.answers.noPressureText')}</Small>
+        {!outside && (
+          <ButtonLink
+            to="#sharpen-tyre"
+            kind="plain"
+            small
+            className="mt-3"
+            onClick={(event) => {
+              event.preventDefault()
+              document.getElementById('sharpen-tyre')?.focus()
+              document.getElementById('sharpen-tyre')?.scrollIntoView({ block: 'center' })
+            }}
+          >
+            {t('findings.answers.noPressureGo')}
+          </ButtonLink>
+        )}
+      </WithWorking>
+    )
+  }
+  const { front, rear } = pressure
+  const ceiling = (bar: number) => format.pressure(bar, 'down').text
+  const from = (code: string) => t([`findings.ceilingFrom.${code}`, 'findings.ceilingFrom.other'])
+  const alike = ceiling(front.ceilingBar) === ceiling(rear.ceilingBar) && front.ceilingFrom === rear.ceilingFrom
+  return (
+    <WithWorking label={label} name={label} reasons={both}>
+      <Figures
+        parts={[
+          { name: t('common:front'), value: start(front).value },
+          { name: t('common:rear'), value: start(rear).value },
+        ]}
+        unit={start(rear).unit}
+      />
+      <Small>
+        {t('findings.answers.band', {
+          frontLow: edge(front.lowBar, front),
+          frontHigh: edge(front.highBar, front),
+          rearLow: edge(rear.lowBar, rear),
+          rearHigh: edge(rear.highBar, rear),
+          unit: start(rear).unit,
+        })}
+      </Small>
+      <p className="mt-0.5 text-sm">
+        {alike
+          ? t('findings.answers.ceilingBoth', { ceiling: ceiling(rear.ceilingBar), from: from(rear.ceilingFrom) })
+          : t('findings.answers.ceiling', {
+              front: ceiling(front.ceilingBar),
+              rear: ceiling(rear.ceilingBar),
+              from: from(front.ceilingBar < rear.ceilingBar ? front.ceilingFrom : rear.ceilingFrom),
+            })}
+      </p>
+    </WithWorking>
+  )
+}
+
+function Depth({ advice: { reasons }, depth }: { advice: Advice; depth: NonNullable<Advice['rimDepthMm']> }) {
+  const { t, format } = useAdviceWords()
+  const range = ({ from, to }: { from: number; to: number }) =>
+    from === to ? format.number(to) : `${format.number(from)}–${format.number(to)}`
+  const label = t('findings.answers.depth')
+  return (
+    <WithWorking
+      label={label}
+      name={label}
+      reasons={[
+        { key: 'rimDepthMm.front', title: t('common:front'), reason: reasons['rimDepthMm.front'] },
+        { key: 'rimDepthMm.rear', title: t('common:rear'), reason: reasons['rimDepthMm.rear'] },
+      ]}
+    >
+      <Figures
+        parts={[
+          { name: t('common:front'), value: range(depth.front) },
+          { name: t('common:rear'), value: range(depth.rear) },
+        ]}
+        unit="mm"
+      />
+      <Small>{t('findings.answers.depthText')}</Small>
+    </WithWorking>
+  )
+}
+
+function Spokes({ advice: { reasons }, spokes }: { advice: Advice; spokes: NonNullable<Advice['spokes']> }) {
+  const { t } = useAdviceWords()
+  const { front, rear } = spokes
+  const label = t('findings.answers.spokes')
+  const more = front.advised > front.min || rear.advised > rear.min
+  return (
+    <WithWorking
+      label={label}
+      name={label}
+      reasons={[
+        { key: 'spokes.front', title: t('common:front'), reason: reasons['spokes.front'] },
+        { key: 'spokes.rear', title: t('common:rear'), reason: reasons['spokes.rear'] },
+      ]}
+    >
+      <Figures
+        parts={[
+          { name: t('common:front'), value: String(front.min) },
+          { name: t('common:rear'), value: String(rear.min) },
+        ]}
+      />
+      <Small>
+        {t(more ? 'findings.answers.spokesText' : 'findings.answers.spokesTextSame', {
+          criterion: t([`findings.governedBy.${rear.governedBy}`, 'findings.governedBy.other']),
+          advised: `${front.advised} / ${rear.advised}`,
+        })}
+      </Small>
+    </WithWorking>
+  )
+}
+
+function Margin({ advice: { wheelsets, reasons, systemMassKg } }: { advice: Advice }) {
+  const { t, format } = useAdviceWords()
+  const first = wheelsets.find(({ rank }) => rank === 1)
+  const label = t('findings.answers.margin')
+  const margin = first && format.mass(first.marginKg, 'down')
+  return (
+    <WithWorking
+      label={label}
+      name={label}
+      reasons={[
+        { key: 'systemMassKg', title: t('fitting.sum.title'), reason: reasons.systemMassKg },
+        { key: 'limit', title: label, reason: reasons.limit },
+        { key: 'loads', title: t('working.loads'), reason: reasons.loads },
+      ]}
+    >
+      {first && margin ? (
+        <>
+          <Figures parts={[{ name: first.name, value: margin.value }]} unit={margin.unit} />
+          <Small>
+            <Trans
+              t={t}
+              i18nKey="findings.answers.marginSum"
+              values={{
+                limit: format.mass(first.limitKg, 'down').text,
+                total: format.mass(systemMassKg, 'up').text,
+              }}
+              components={{ own: <span className="font-bold text-own" /> }}
+            />
+          </Small>
+        </>
+      ) : (
+        <p className="figure mt-2 text-2xl">{t('findings.answers.marginNone')}</p>
+      )}
+    </WithWorking>
+  )
+}
