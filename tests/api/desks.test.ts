@@ -30,7 +30,7 @@ describe('the support desk', () => {
     const seen: string[] = []
     let cursor: string | null = null
     do {
-      const page = await desk
+      const page: { body: unknown } = await desk
         .get('/api/desk/orders')
         .query({ limit: 90, ...(cursor === null ? {} : { cursor }) })
         .expect(200)
@@ -102,14 +102,12 @@ describe('the product desk', () => {
 
   it('a limit change is drafted by one person and seconded by another; then it counts from the next call on', async () => {
     const [author, second] = [await shop.signedIn('product'), await shop.signedIn('product2')]
-    const draft = await author
-      .post('/api/product/limit-changes')
-      .send({
-        sku,
-        limitKg: 100,
-        proof: 'bench report of the test, side load',
-        reason: 'crack found at the test bench',
-      })
+    const draft = await author.post('/api/product/limit-changes').send({
+      sku,
+      limitKg: 100,
+      proof: 'bench report of the test, side load',
+      reason: 'crack found at the test bench',
+    })
     expect(draft.status).toBe(201)
     const { id } = draft.body as { id: number }
     const limit = async () =>
