@@ -9,7 +9,7 @@ import type { Order } from '../models/order.ts'
 import { OutboxMail } from '../models/outbox-mail.ts'
 import { renderMail, type Part } from './html.ts'
 
-export type OrderMailKind = 'receipt' | 'question' | 'refund' | 'dropped' | 'sold-meanwhile'
+export type OrderMailKind = 'receipt' | 'question' | 'refund' | 'sold-meanwhile'
 
 interface Facts {
   /** Refunds: how much, and the refund's own reference. */
@@ -76,6 +76,9 @@ function writeOrderMail(
   ]
   if (kind === 'receipt') {
     parts.push({ kind: 'heading', text: t('mail:sums.heading') }, sums)
+    const { line1, line2, postcode, city, region, country } = order.delivery
+    const place = [order.delivery.name, line1, line2, `${postcode} ${city}`, region, country].filter(Boolean).join(', ')
+    parts.push({ kind: 'rows', rows: [[t('mail:sums.deliveryTo'), place]] })
     parts.push({
       kind: 'text',
       text: t('mail:receipt.delivery', { from: market?.deliveryDaysFrom ?? 0, to: market?.deliveryDaysTo ?? 0 }),
@@ -83,6 +86,7 @@ function writeOrderMail(
     parts.push({ kind: 'text', text: t('mail:receipt.return') })
     parts.push({ kind: 'caution', text: t('mail:receipt.caution') })
   }
+  if (kind === 'refund' && order.state === 'dropped') parts.push({ kind: 'text', text: t('mail:refund.whole') })
   parts.push({ kind: 'link', text: t('mail:openOrder'), url: orderUrl(config, order.number) })
   return renderMail(order.locale, t(key('subject'), values), parts, t('mail:foot'))
 }

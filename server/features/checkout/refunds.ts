@@ -28,8 +28,8 @@ export interface RefundInput {
 
 /**
  * @throws AppError refund-too-much (409, what is left), nothing-to-refund, no-such-line;
- *   payment-refused: the processor said no, the row is marked failed;
- *   payment-unavailable: nobody can say whether it was done, so the row stays asked for, its amount is set aside, and the job asks again with the same key
+ *   refund-refused: the processor said no, the row is marked failed;
+ *   refund-unconfirmed: nobody can say whether it was done, so the row stays asked for, its amount is set aside, and the job asks again with the same key
  */
 export async function refundOrder(deps: Deps, input: RefundInput): Promise<{ refund: Refund; leftCents: number }> {
   const { idempotencyKey, actor } = input
@@ -41,9 +41,16 @@ export async function refundOrder(deps: Deps, input: RefundInput): Promise<{ ref
     const known = await Refund.findOne({ where: { orderId: order.id, idempotencyKey }, transaction })
     return known ? askAgain(known, order, transaction) : ask(deps, order, input, transaction)
   })
-  if (refund.state !== 'done') await carryOut(deps, refund, actor)
+  if (refund.state !== 'done') await carryOut(deps, refund, actor).catch(inRefundWords)
   const { leftCents } = await moneyOf(found.id)
   return { refund, leftCents }
+}
+
+function inRefundWords(error: unknown): never {
+  if (!(error instanceof AppError)) throw error
+  if (error.code === 'payment-refused') throw new AppError('refund-refused', 409, error.data)
+  if (error.code === 'payment-unavailable') throw new AppError('refund-unconfirmed', 503)
+  throw error
 }
 
 async function ask(deps: Deps, order: Order, input: RefundInput, transaction: Transaction): Promise<Refund> {

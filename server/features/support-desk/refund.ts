@@ -7,7 +7,7 @@ import type { SignedIn } from '../../http/session.ts'
 import { refundOrder } from '../checkout/refunds.ts'
 import { findOrder } from './read.ts'
 
-/** @throws AppError refund-too-much, nothing-to-refund, no-such-line, payment-unavailable */
+/** @throws AppError refund-too-much, nothing-to-refund, no-such-line, refund-refused, refund-unconfirmed */
 export async function refundFromDesk(
   deps: Deps,
   actor: SignedIn,

@@ -59,7 +59,11 @@ export function OrderMoney({ money }: { money: DeskMoney }) {
           <ul className="mt-2 text-xs text-soft">
             {money.refunds.map(({ id, reason, authorName, amountCents }) => (
               <li key={id}>
-                {t('money.refundWhy', { amount: amount(amountCents), reason, name: authorName ?? t('nobody') })}
+                {t('money.refundWhy', {
+                  amount: amount(amountCents),
+                  reason: authorName === null ? t([`cause.${reason}`, 'cause.other'], { cause: reason }) : reason,
+                  name: authorName ?? t('nobody'),
+                })}
               </li>
             ))}
           </ul>

@@ -6,6 +6,12 @@ import { useFormat } from '../../lib/format.ts'
 export function OrderTimeline({ events }: { events: readonly DeskEvent[] }) {
   const { t } = useTranslation('support-desk')
   const f = useFormat()
+  // People write sentences; the shop itself writes codes, which the language files put into words.
+  const inWords = (codes: string) =>
+    codes
+      .split(', ')
+      .map((cause) => t([`cause.${cause}`, 'cause.other'], { cause }))
+      .join('; ')
   return (
     <ol>
       {[...events].reverse().map((event) => (
@@ -26,7 +32,11 @@ export function OrderTimeline({ events }: { events: readonly DeskEvent[] }) {
               <> · {t('event.moved', { from: t(`state.${event.fromState}`), to: t(`state.${event.toState}`) })}</>
             )}
           </span>
-          {event.reason !== null && <p className="mt-0.5 break-words whitespace-pre-wrap">{event.reason}</p>}
+          {event.reason !== null && (
+            <p className="mt-0.5 break-words whitespace-pre-wrap">
+              {event.actorName === null ? inWords(event.reason) : event.reason}
+            </p>
+          )}
         </li>
       ))}
     </ol>
