@@ -144,7 +144,10 @@ export function Beam({ judged: { verdict, limitKg }, totalKg, endKg, label }: Be
             style={{ left: at(limitKg), width: at(totalKg - limitKg) }}
           />
         )}
-        <span className="absolute top-1 h-6 w-0.5 -translate-x-1/2 bg-own transition-[left]" style={{ left: at(totalKg) }} />
+        <span
+          className="absolute top-1 h-6 w-0.5 -translate-x-1/2 bg-own transition-[left]"
+          style={{ left: at(totalKg) }}
+        />
       </div>
       <span
         className={`absolute top-1.5 h-5 w-[3px] -translate-x-1/2 transition-[left] ${end}`}

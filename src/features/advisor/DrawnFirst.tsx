@@ -3,8 +3,8 @@ import type { Advice, RiderAnswers } from '#contract/advisor.ts'
 import { usePreferences } from '../../lib/preferences.tsx'
 import { TitleBlock } from '../../ui/Sheet.tsx'
 import { WheelDrawing } from '../../ui/WheelDrawing.tsx'
-import { drawn } from '../catalogue/drawn.ts'
-import { wheelsetsQuery } from '../catalogue/queries.ts'
+import { drawn } from '../../lib/drawn.ts'
+import { wheelsetsQuery } from '../../lib/wheelsets.ts'
 import { useAdviceWords } from './words.ts'
 
 /** The rear wheel of the first-ranked wheelset, from its own data and with the rider's tyre, in its title block. */
@@ -37,7 +37,10 @@ export function DrawnFirst({ advice, answers }: { advice: Advice; answers: Rider
       <TitleBlock
         className="mt-4"
         items={[
-          { label: t('findings.drawn.wheel'), value: t('findings.drawn.value', { name: set.name, count: set.rear.spokeCount }) },
+          {
+            label: t('findings.drawn.wheel'),
+            value: t('findings.drawn.value', { name: set.name, count: set.rear.spokeCount }),
+          },
           { label: t('findings.drawn.total'), value: format.mass(advice.systemMassKg, 'up').text, own: true },
           { label: t('findings.drawn.limit'), value: format.mass(first.limitKg, 'down').text },
           { label: t('findings.drawn.rules'), value: advice.rulesVersion.split('+')[0] },

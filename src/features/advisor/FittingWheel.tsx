@@ -4,8 +4,8 @@ import type { Wheelset } from '#contract/catalogue.ts'
 import type { Draft } from '../../lib/fitting.ts'
 import { usePreferences } from '../../lib/preferences.tsx'
 import { WheelDrawing } from '../../ui/WheelDrawing.tsx'
-import { drawn } from '../catalogue/drawn.ts'
-import { wheelsetsQuery } from '../catalogue/queries.ts'
+import { drawn } from '../../lib/drawn.ts'
+import { wheelsetsQuery } from '../../lib/wheelsets.ts'
 
 /** How far the answers so far have narrowed the range, and one that is left, drawn with the rider's own tyre. */
 export function FittingWheel({ draft, className }: { draft: Draft; className?: string }) {
@@ -25,7 +25,9 @@ export function FittingWheel({ draft, className }: { draft: Draft; className?: s
   return (
     <figure className={className}>
       <figcaption>
-        <span className="block text-lg font-bold">{t(ride === undefined ? 'fitting.drawn.all' : 'fitting.drawn.made', { count: made.length })}</span>
+        <span className="block text-lg font-bold">
+          {t(ride === undefined ? 'fitting.drawn.all' : 'fitting.drawn.made', { count: made.length })}
+        </span>
         <span className="text-sm text-soft">{t('fitting.drawn.one', { name: one.name })}</span>
       </figcaption>
       <WheelDrawing

@@ -7,7 +7,16 @@ import { Button } from '../../ui/Button.tsx'
 import { Field, Select } from '../../ui/Field.tsx'
 import { Notice } from '../../ui/Notice.tsx'
 import { NumberField } from '../../ui/NumberField.tsx'
-import { checkMass, entryOf, LEAST_KG, massBands, MOST_KG, type MassEntry, type MassUnit, type Reading } from './mass-entry.ts'
+import {
+  checkMass,
+  entryOf,
+  LEAST_KG,
+  massBands,
+  MOST_KG,
+  type MassEntry,
+  type MassUnit,
+  type Reading,
+} from './mass-entry.ts'
 
 const units: readonly MassUnit[] = ['kg', 'lb', 'st']
 
@@ -160,7 +169,11 @@ export function MassQuestion({ mass, onChange, asked, controlName, small = false
         </fieldset>
       </div>
       {error !== undefined && (
-        <p id={`${controlName}-error`} role="alert" className="border-s-[3px] border-own ps-2 text-sm font-[650] text-own">
+        <p
+          id={`${controlName}-error`}
+          role="alert"
+          className="border-s-[3px] border-own ps-2 text-sm font-[650] text-own"
+        >
           {error}
         </p>
       )}

@@ -10,7 +10,8 @@ const refusing = new Set(['who-can-help', 'metal-rim-36', 'none-for-bike', 'over
 /** The four cautions that go with every number. */
 export function Cautions() {
   const { t, format } = useAdviceWords()
-  const step = format.pressure(0.1).unit === 'bar' ? `${format.number(0.1, 1)}\u00a0bar` : `${format.number(2)}\u00a0psi`
+  const step =
+    format.pressure(0.1).unit === 'bar' ? `${format.number(0.1, 1)}\u00a0bar` : `${format.number(2)}\u00a0psi`
   return (
     <Notice tone="caution" title={t('findings.cautionsTitle')}>
       <ul className="mt-1 grid gap-1">
@@ -25,7 +26,9 @@ export function Cautions() {
 /** What else holds for this rider, cautions first. */
 export function Notes({ advice }: { advice: Advice }) {
   const { t, note } = useAdviceWords()
-  const notes = advice.notes.filter(({ code, severity }) => severity !== 'stop' && !standing.has(code) && !refusing.has(code))
+  const notes = advice.notes.filter(
+    ({ code, severity }) => severity !== 'stop' && !standing.has(code) && !refusing.has(code),
+  )
   if (notes.length === 0) return null
   const sorted = [...notes].sort((a, b) => Number(a.severity !== 'caution') - Number(b.severity !== 'caution'))
   return (
@@ -56,7 +59,11 @@ function Mark({ caution }: { caution: boolean }) {
       stroke="currentColor"
       strokeWidth="1.8"
     >
-      {caution ? <path d="M8 2 15 14H1ZM8 6.5V10M8 11.4v.8" /> : <path d="M8 1.5A6.5 6.5 0 1 1 8 14.5 6.5 6.5 0 0 1 8 1.5ZM8 7v4.5M8 4.3v1" />}
+      {caution ? (
+        <path d="M8 2 15 14H1ZM8 6.5V10M8 11.4v.8" />
+      ) : (
+        <path d="M8 1.5A6.5 6.5 0 1 1 8 14.5 6.5 6.5 0 0 1 8 1.5ZM8 7v4.5M8 4.3v1" />
+      )}
     </svg>
   )
 }

@@ -26,7 +26,9 @@ const looks: Record<Ride, Look> = {
   gravel: {
     tyre: 'wide',
     bars: 'drop',
-    ground: <path d="M4 29.6h.1M9 30.4h.1M14 29.6h.1M20 30.4h.1M26 29.6h.1M32 30.4h.1M38 29.6h.1M44 30.4h.1M50 29.6h.1" />,
+    ground: (
+      <path d="M4 29.6h.1M9 30.4h.1M14 29.6h.1M20 30.4h.1M26 29.6h.1M32 30.4h.1M38 29.6h.1M44 30.4h.1M50 29.6h.1" />
+    ),
   },
   bikepacking: {
     tyre: 'wide',

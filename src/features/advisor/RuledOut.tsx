@@ -9,7 +9,7 @@ export function RuledOut({ advice, open = false }: { advice: Advice; open?: bool
   const { t } = useAdviceWords()
   const out = advice.wheelsets.filter(({ rank }) => rank === null)
   if (out.length === 0) return null
-  const groups = [...Map.groupBy(out, ({ codes }) => codes[0] ?? 'other')].sort(
+  const groups = [...gathered(out, ({ codes }) => codes[0] ?? 'other')].sort(
     ([a, one], [b, other]) => weight(a) - weight(b) || one.length - other.length,
   )
   return (
@@ -46,8 +46,14 @@ const order = ['system-mass', 'pressure-not-suitable', 'tyre-too-narrow-for-rim'
 const weight = (code: string) => (code === 'use' || code === 'brake' ? 99 : (order.indexOf(code) + 50) % 50)
 
 const byChange = (sets: readonly Judged[]) => [
-  ...Map.groupBy(sets, ({ nearestChange }) => JSON.stringify(nearestChange ?? null)).values(),
+  ...gathered(sets, ({ nearestChange }) => JSON.stringify(nearestChange ?? null)).values(),
 ]
+
+function gathered(sets: readonly Judged[], by: (one: Judged) => string) {
+  const groups = new Map<string, Judged[]>()
+  for (const one of sets) groups.set(by(one), [...(groups.get(by(one)) ?? []), one])
+  return groups
+}
 
 function Way({ sets, totalKg }: { sets: readonly Judged[]; totalKg: number }) {
   const { t, format, field, answer } = useAdviceWords()

@@ -71,10 +71,10 @@ function Drawing({ points, advised, label }: DrawingProps) {
   const x = scaleLinear([least, most], [EDGE.left, width - EDGE.right])
   const bottom = HEIGHT - EDGE.bottom
   const watts = scaleLinear([0, Math.max(1, ...points.map(({ wattsHigh }) => wattsHigh))], [bottom, EDGE.top]).nice(4)
-  const gust = scaleLinear([0, Math.max(...points.map(({ gustMomentNm }) => gustMomentNm)) * 1.12], [
-    bottom,
-    EDGE.top,
-  ]).nice(4)
+  const gust = scaleLinear(
+    [0, Math.max(...points.map(({ gustMomentNm }) => gustMomentNm)) * 1.12],
+    [bottom, EDGE.top],
+  ).nice(4)
   const path = (y: (one: Point) => number) =>
     line<Point>((one) => x(one.depthMm), y).curve(curveMonotoneX)([...points]) ?? ''
   const band =
@@ -86,14 +86,30 @@ function Drawing({ points, advised, label }: DrawingProps) {
   // A range of one depth is still a stripe one can see.
   const from = Math.max(EDGE.left, x(advised.from) - (advised.from === advised.to ? 4 : 0))
   const stripe = Math.max(8, Math.min(x(advised.to), width - EDGE.right) - from)
-  const ticks = spaced([...new Set([least, advised.from, advised.to, ...depths])], [advised.from, advised.to, least, most], x)
+  const ticks = spaced(
+    [...new Set([least, advised.from, advised.to, ...depths])],
+    [advised.from, advised.to, least, most],
+    x,
+  )
   const near = points.at(-2) ?? points.at(-1)
   const early = points[Math.min(2, points.length - 1)]
   return (
     <div ref={ref} className="mt-2">
-      <svg role="img" aria-label={label} viewBox={`0 0 ${width} ${HEIGHT}`} width={width} height={HEIGHT} className="block max-w-full text-[13px] tabular-nums">
+      <svg
+        role="img"
+        aria-label={label}
+        viewBox={`0 0 ${width} ${HEIGHT}`}
+        width={width}
+        height={HEIGHT}
+        className="block max-w-full text-[13px] tabular-nums"
+      >
         <rect x={from} y={EDGE.top - 16} width={stripe} height={bottom - EDGE.top + 16} fill="var(--own-wash)" />
-        <text x={from + stripe / 2} y={EDGE.top - 20} textAnchor={from + stripe / 2 < 70 ? 'start' : 'middle'} className="fill-own font-[650]">
+        <text
+          x={from + stripe / 2}
+          y={EDGE.top - 20}
+          textAnchor={from + stripe / 2 < 70 ? 'start' : 'middle'}
+          className="fill-own font-[650]"
+        >
           {t('findings.tradeOff.advised')}
         </text>
         {watts.ticks(4).map((tick) => (
@@ -111,7 +127,13 @@ function Drawing({ points, advised, label }: DrawingProps) {
         ))}
         <path d={band} fill="var(--within)" opacity="0.16" />
         <path d={path((one) => watts(one.wattsSaved))} fill="none" stroke="var(--within)" strokeWidth="2.6" />
-        <path d={path((one) => gust(one.gustMomentNm))} fill="none" stroke="var(--ink)" strokeWidth="2" strokeDasharray="6 4" />
+        <path
+          d={path((one) => gust(one.gustMomentNm))}
+          fill="none"
+          stroke="var(--ink)"
+          strokeWidth="2"
+          strokeDasharray="6 4"
+        />
         {near && (
           <text x={x(near.depthMm)} y={watts(near.wattsLow) + 16} textAnchor="end" className="fill-within font-[650]">
             {t('findings.tradeOff.watts')}, W
@@ -126,7 +148,12 @@ function Drawing({ points, advised, label }: DrawingProps) {
         {ticks.map((depth) => (
           <g key={depth}>
             <path d={`M${x(depth)} ${bottom}v4`} stroke="var(--line-strong)" />
-            <text x={x(depth)} y={bottom + 18} textAnchor="middle" className={depth === advised.from || depth === advised.to ? 'fill-own font-[650]' : 'fill-soft'}>
+            <text
+              x={x(depth)}
+              y={bottom + 18}
+              textAnchor="middle"
+              className={depth === advised.from || depth === advised.to ? 'fill-own font-[650]' : 'fill-soft'}
+            >
               {depth}
             </text>
           </g>

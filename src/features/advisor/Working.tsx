@@ -42,7 +42,10 @@ export function WithWorking({ label, name, reasons, children }: WithWorkingProps
       {children}
       <div id={id} hidden={!open}>
         {open &&
-          shown.map(({ key, title, reason }) => reason && <Reasoning key={key} kind={reasonKind(key)} title={title} reason={reason} />)}
+          shown.map(
+            ({ key, title, reason }) =>
+              reason && <Reasoning key={key} kind={reasonKind(key)} title={title} reason={reason} />,
+          )}
         {open && (
           <Link to="/working" className="quiet-link mt-2 inline-block text-sm">
             {t('working.more')}
@@ -78,7 +81,8 @@ function Reasoning({ kind, title, reason }: { kind: string; title: string | unde
         ))}
       </dl>
       <p className="mt-2">
-        <span className="font-[650]">{t('working.source')}</span> {t(`working.sources.${kind}`, { defaultValue: source })}{' '}
+        <span className="font-[650]">{t('working.source')}</span>{' '}
+        {t(`working.sources.${kind}`, { defaultValue: source })}{' '}
         <span className="border border-strong px-1.5 text-xs font-[650] whitespace-nowrap">
           {t(`working.labels.${label}.name`)}
         </span>
