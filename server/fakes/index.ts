@@ -5,10 +5,10 @@ import { createMailSink } from './mail/sink.ts'
 import { createStripeFake } from './stripe/server.ts'
 
 const config = readFakesConfig(process.env)
-const { HOST: host, DATA_DIR, STRIPE_FAKE_PORT, MAIL_SINK_PORT, SMTP_PORT } = config
+const { HOST: host, DATA_DIR, PAYMENTS, STRIPE_FAKE_PORT, MAIL_SINK_PORT, SMTP_PORT } = config
 
 const running = [
-  ...(STRIPE_FAKE_PORT === undefined
+  ...(PAYMENTS === 'stripe' || STRIPE_FAKE_PORT === undefined
     ? []
     : [
         createStripeFake({

@@ -2,7 +2,7 @@
 import { randomUUID } from 'node:crypto'
 import type { BasketView } from '../../server/contract/basket.ts'
 import type { OrderView } from '../../server/contract/checkout.ts'
-import type { Faults } from '../../server/fakes/stripe/events.ts'
+import type { Faults } from '../../server/fakes/stripe/control.ts'
 import { LedgerEntry } from '../../server/models/ledger-entry.ts'
 import { Order } from '../../server/models/order.ts'
 import { Stock } from '../../server/models/stock.ts'

@@ -1,20 +1,13 @@
 /** Signed events on their way to the shop: at least once, never in the way of a reply, tried again when the shop does not take them. */
 import { createHmac } from 'node:crypto'
+import { noFaults, type Faults } from './control.ts'
 import type { StripeEvent } from './state.ts'
 import { eventView } from './views.ts'
-
-export interface Faults {
-  deliver: 'normal' | 'drop' | 'duplicate'
-  delayMs: number
-  wrongSignature: boolean
-  /** The next creating call is carried out, but its reply is cut off. */
-  loseReply: boolean
-}
 
 const RETRY_MS = [1_000, 5_000, 20_000]
 
 export class Deliveries {
-  faults: Faults = { deliver: 'normal', delayMs: 0, wrongSignature: false, loseReply: false }
+  readonly faults: Faults = noFaults()
   private readonly url: string
   private readonly secret: string
   private readonly clock: () => Date

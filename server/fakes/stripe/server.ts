@@ -2,24 +2,18 @@
  * A local stand-in for Stripe: the part of its public wire protocol that a shop with hosted checkout uses, spoken to the real SDK. No money moves.
  * It lives apart from the shop and is chosen only by name in the settings.
  */
-import { createHash } from 'node:crypto'
 import type { Server } from 'node:http'
 import type { AddressInfo } from 'node:net'
-import express, { type Express, type NextFunction, type Request, type Response } from 'express'
-import { Deliveries, type Faults } from './events.ts'
-import { formAt, listAt, readForm, textAt, wordsAt, type Form } from './forms.ts'
+import express, { type Express, type Request } from 'express'
+import { mountControl } from './control.ts'
+import { absent, answerErrors, invalid, missing, Refusal } from './errors.ts'
+import { Deliveries } from './events.ts'
+import { listAt, readForm, textAt, wordsAt, type Form } from './forms.ts'
+import { Once } from './idempotency.ts'
 import { mountPayPage } from './pay-page.ts'
-import { newId, State, type Session } from './state.ts'
-import {
-  chargeView,
-  eventView,
-  intentView,
-  lineItemsView,
-  newestFirst,
-  page,
-  refundView,
-  sessionView,
-} from './views.ts'
+import { readSessionForm } from './session-form.ts'
+import { newId, State, type Refund, type Session } from './state.ts'
+import { chargeView, eventView, intentView, lineItemsView, page, refundView, sessionView } from './views.ts'
 
 export interface StripeFakeOptions {
   port: number
@@ -32,28 +26,13 @@ export interface StripeFakeOptions {
   clock?: () => Date
 }
 
-/** An error object of the protocol. */
-class Refusal extends Error {
-  readonly status: number
-  readonly body: Record<string, unknown>
-  constructor(status: number, type: string, message: string, more: Record<string, unknown> = {}) {
-    super(message)
-    this.status = status
-    this.body = { error: { type, message, ...more } }
-  }
-}
-const invalid = (message: string, param?: string, code?: string) =>
-  new Refusal(400, 'invalid_request_error', message, { ...(param ? { param } : {}), ...(code ? { code } : {}) })
-const missing = (id: string) =>
-  new Refusal(404, 'invalid_request_error', `No such object: ${id}`, { code: 'resource_missing', param: 'id' })
-
 export function createStripeFake(options: StripeFakeOptions) {
   const clock = options.clock ?? (() => new Date())
   const now = () => Math.floor(clock().getTime() / 1000)
   const state = new State(options.file ?? null)
   const deliveries = new Deliveries(options.webhookUrl, options.webhookSecret, clock)
   const { memory } = state
-  const running = new Set<string>()
+  const once = new Once(state, deliveries.faults, now)
   let origin = ''
   let server: Server | undefined
   let timer: NodeJS.Timeout | undefined
@@ -74,71 +53,31 @@ export function createStripeFake(options: StripeFakeOptions) {
   }
   const findSession = (id: string) => {
     expireDue()
-    const session = memory.sessions[id]
-    if (!session) throw missing(id)
-    return session
+    return known(memory.sessions, id)
   }
 
   function createSession(form: Form) {
-    const lines = listAt(form, 'line_items').map((item, index) => {
-      const text = (...path: string[]) => {
-        const value = formAt(item, ...path)
-        return typeof value === 'string' ? value : null
-      }
-      const amount = Number(text('price_data', 'unit_amount'))
-      const quantity = Number(text('quantity') ?? '1')
-      const name = text('price_data', 'product_data', 'name')
-      if (name === null)
-        throw invalid(
-          'Missing required param: name.',
-          `line_items[${index}][price_data][product_data][name]`,
-          'parameter_missing',
-        )
-      if (!Number.isInteger(amount) || amount < 0)
-        throw invalid('Invalid integer.', `line_items[${index}][price_data][unit_amount]`, 'parameter_invalid_integer')
-      if (!Number.isInteger(quantity) || quantity < 1)
-        throw invalid('Invalid integer.', `line_items[${index}][quantity]`, 'parameter_invalid_integer')
-      return { name, unitAmount: amount, quantity, currency: text('price_data', 'currency') ?? '' }
-    })
-    if (textAt(form, 'mode') !== 'payment') throw invalid('Only payment mode is spoken here.', 'mode')
-    if (lines.length === 0) throw invalid('Missing required param: line_items.', 'line_items', 'parameter_missing')
-    const currency = lines[0]?.currency ?? ''
-    if (!/^[a-z]{3}$/.test(currency) || lines.some((line) => line.currency !== currency))
-      throw invalid('Invalid currency.', 'currency')
-    const successUrl = textAt(form, 'success_url')
-    if (successUrl === null) throw invalid('Missing required param: success_url.', 'success_url', 'parameter_missing')
-    const expiresAt = Number(textAt(form, 'expires_at') ?? now() + 86_400)
-    if (!(expiresAt >= now() + 30 * 60 && expiresAt <= now() + 86_400))
-      throw invalid('expires_at must be between 30 minutes and 24 hours from now.', 'expires_at')
-    const session: Session = {
-      id: newId('cs_test'),
-      created: now(),
-      expiresAt,
-      status: 'open',
-      paid: false,
-      currency,
-      lines: lines.map(({ name, unitAmount, quantity }) => ({ name, unitAmount, quantity })),
-      clientReferenceId: textAt(form, 'client_reference_id'),
-      customerEmail: textAt(form, 'customer_email'),
-      locale: textAt(form, 'locale') ?? 'auto',
-      metadata: wordsAt(form, 'metadata'),
-      intentMetadata: wordsAt(form, 'payment_intent_data', 'metadata'),
-      intentId: null,
-      successUrl,
-      cancelUrl: textAt(form, 'cancel_url') ?? successUrl,
-    }
+    const asked = readSessionForm(form, now())
+    const session: Session = { ...asked, id: newId('cs_test'), status: 'open', paid: false, intentId: null }
     memory.sessions[session.id] = session
+    return sessionView(session, payUrl(session))
+  }
+
+  function expireSession(id: string) {
+    const session = findSession(id)
+    if (session.status !== 'open')
+      throw invalid(`Only Checkout Sessions with a status of open can be expired; this one is ${session.status}.`)
+    session.status = 'expired'
+    emit('checkout.session.expired', sessionView(session, payUrl(session)))
     return sessionView(session, payUrl(session))
   }
 
   function createRefund(form: Form) {
     const intentId = textAt(form, 'payment_intent')
-    const chargeId = textAt(form, 'charge') ?? (intentId === null ? null : (memory.intents[intentId]?.chargeId ?? null))
-    const charge = chargeId === null ? undefined : memory.charges[chargeId]
-    if (!charge)
-      throw intentId !== null || chargeId !== null
-        ? missing(intentId ?? chargeId ?? '')
-        : invalid('Name a charge or a payment_intent.', 'charge')
+    const named = textAt(form, 'charge') ?? intentId
+    if (named === null) throw absent('charge')
+    const charge = memory.charges[intentId === null ? named : (memory.intents[intentId]?.chargeId ?? '')]
+    if (!charge) throw missing(named, intentId === null ? 'charge' : 'payment_intent')
     const left = charge.amount - charge.refunded
     if (left === 0)
       throw invalid(`Charge ${charge.id} has already been refunded.`, undefined, 'charge_already_refunded')
@@ -147,60 +86,20 @@ export function createStripeFake(options: StripeFakeOptions) {
       throw invalid('Invalid integer.', 'amount', 'parameter_invalid_integer')
     if (amount > left)
       throw invalid(`Refund amount (${amount}) is greater than unrefunded amount on charge (${left}).`, 'amount')
-    const refund = {
+    const refund: Refund = {
       id: newId('re'),
       created: now(),
       amount,
       currency: charge.currency,
       chargeId: charge.id,
       intentId: charge.intentId,
+      metadata: wordsAt(form, 'metadata'),
+      reason: textAt(form, 'reason'),
     }
     memory.refunds[refund.id] = refund
     charge.refunded += amount
     emit('charge.refunded', chargeView(charge))
     return refundView(refund)
-  }
-
-  /** First run kept once it began, faults included; a refusal of the parameters is not kept. */
-  function once(req: Request, res: Response, work: (form: Form) => unknown) {
-    const key = req.get('idempotency-key')
-    const body = String(req.body ?? '')
-    const fingerprint = createHash('sha256').update(`${req.path} ${body}`).digest('hex')
-    const kept = key === undefined ? undefined : memory.replies[key]
-    if (kept) {
-      if (kept.fingerprint !== fingerprint)
-        throw new Refusal(
-          400,
-          'idempotency_error',
-          'Keys for idempotent requests can only be used with the same parameters.',
-        )
-      res.set('Idempotent-Replayed', 'true').status(kept.status).json(kept.body)
-      return
-    }
-    if (key !== undefined && running.has(key))
-      throw new Refusal(409, 'idempotency_error', 'A request with this key is in progress.', {
-        code: 'idempotency_key_in_use',
-      })
-    if (key !== undefined) running.add(key)
-    try {
-      let form: Form
-      try {
-        form = readForm(body)
-      } catch {
-        throw invalid('Malformed parameters.')
-      }
-      const reply = work(form)
-      if (key !== undefined) memory.replies[key] = { fingerprint, status: 200, body: reply }
-      state.save()
-      if (deliveries.faults.loseReply) {
-        deliveries.faults.loseReply = false
-        req.socket.destroy()
-        return
-      }
-      res.json(reply)
-    } finally {
-      if (key !== undefined) running.delete(key)
-    }
   }
 
   const app: Express = express()
@@ -215,72 +114,70 @@ export function createStripeFake(options: StripeFakeOptions) {
     next()
   })
   app.post('/v1/checkout/sessions', (req, res) => {
-    once(req, res, createSession)
+    once.run(req, res, createSession)
   })
   app.get('/v1/checkout/sessions', (req, res) => {
     expireDue()
-    res.json(
-      page('/v1/checkout/sessions', newestFirst(state).sessions, (one) => sessionView(one, payUrl(one)), req.query),
+    const query = queryOf(req)
+    const [status, intent] = [textAt(query, 'status'), textAt(query, 'payment_intent')]
+    const found = newestFirst(memory.sessions).filter(
+      (one) => (status === null || one.status === status) && (intent === null || one.intentId === intent),
     )
+    res.json(page('/v1/checkout/sessions', found, (one) => sessionView(one, payUrl(one)), query))
   })
   app.get('/v1/checkout/sessions/:id', (req, res) => {
     const session = findSession(req.params.id)
-    const wanted = JSON.stringify(req.query).includes('payment_intent')
-    const intent = wanted && session.intentId !== null ? (memory.intents[session.intentId] ?? null) : null
+    const expand = listAt(queryOf(req), 'expand')
+    const other = expand.find((field) => field !== 'payment_intent')
+    if (other !== undefined) throw invalid('This property cannot be expanded.', 'expand')
+    const intent = expand.length > 0 && session.intentId !== null ? (memory.intents[session.intentId] ?? null) : null
     res.json(sessionView(session, payUrl(session), intent))
   })
   app.get('/v1/checkout/sessions/:id/line_items', (req, res) => {
     res.json(lineItemsView(findSession(req.params.id)))
   })
   app.post('/v1/checkout/sessions/:id/expire', (req, res) => {
-    once(req, res, () => {
-      const session = findSession(req.params.id)
-      if (session.status !== 'open')
-        throw invalid(`Only Checkout Sessions with a status of open can be expired; this one is ${session.status}.`)
-      session.status = 'expired'
-      emit('checkout.session.expired', sessionView(session, payUrl(session)))
-      return sessionView(session, payUrl(session))
-    })
+    once.run(req, res, () => expireSession(req.params.id))
   })
   app.get('/v1/payment_intents/:id', (req, res) => {
-    const intent = memory.intents[req.params.id]
-    if (!intent) throw missing(req.params.id)
-    res.json(intentView(intent))
+    res.json(intentView(known(memory.intents, req.params.id)))
   })
   app.get('/v1/charges/:id', (req, res) => {
-    const charge = memory.charges[req.params.id]
-    if (!charge) throw missing(req.params.id)
-    res.json(chargeView(charge))
+    res.json(chargeView(known(memory.charges, req.params.id)))
   })
   app.post('/v1/refunds', (req, res) => {
-    once(req, res, createRefund)
+    once.run(req, res, createRefund)
+  })
+  app.get('/v1/refunds', (req, res) => {
+    const query = queryOf(req)
+    const [charge, intent] = [textAt(query, 'charge'), textAt(query, 'payment_intent')]
+    const found = newestFirst(memory.refunds).filter(
+      (one) => (charge === null || one.chargeId === charge) && (intent === null || one.intentId === intent),
+    )
+    res.json(page('/v1/refunds', found, refundView, query))
   })
   app.get('/v1/refunds/:id', (req, res) => {
-    const refund = memory.refunds[req.params.id]
-    if (!refund) throw missing(req.params.id)
-    res.json(refundView(refund))
+    res.json(refundView(known(memory.refunds, req.params.id)))
   })
   app.get('/v1/events', (req, res) => {
     expireDue()
-    const { type } = req.query
-    const since = Number((/created\[gte\]=(\d+)/.exec(decodeURIComponent(req.originalUrl)) ?? [])[1] ?? 0)
-    const found = newestFirst(state).events.filter(
-      (event) => event.created >= since && (typeof type !== 'string' || event.type === type),
-    )
-    res.json(page('/v1/events', found, eventView, req.query))
+    const query = queryOf(req)
+    const type = textAt(query, 'type')
+    const types = type === null ? listAt(query, 'types') : [type]
+    const since = Number(textAt(query, 'created', 'gte') ?? 0)
+    const found = [...memory.events]
+      .reverse()
+      .filter((event) => event.created >= since && (types.length === 0 || types.includes(event.type)))
+    res.json(page('/v1/events', found, eventView, query))
   })
   app.use('/v1', (req) => {
     throw new Refusal(404, 'invalid_request_error', `Unrecognized request URL (${req.method}: ${req.path}).`)
   })
-  // Faults on order, for tests. Only callers on this machine reach it, as the stand-in listens on loopback.
-  app.post('/control/faults', express.json(), (req, res) => {
-    Object.assign(deliveries.faults, req.body as Partial<Faults>)
-    res.json(deliveries.faults)
-  })
+  mountControl(app, deliveries.faults)
   mountPayPage(app, {
     find: (id) => {
       expireDue()
-      return memory.sessions[id] ?? null
+      return Object.hasOwn(memory.sessions, id) ? (memory.sessions[id] ?? null) : null
     },
     pay: (session) => {
       if (!state.pay(session, now())) return
@@ -293,14 +190,7 @@ export function createStripeFake(options: StripeFakeOptions) {
       if (intent) emit('payment_intent.payment_failed', intentView(intent))
     },
   })
-  app.use((error: unknown, _req: Request, res: Response, next: NextFunction) => {
-    if (res.headersSent) {
-      next(error)
-      return
-    }
-    if (error instanceof Refusal) res.status(error.status).json(error.body)
-    else res.status(500).json({ error: { type: 'api_error', message: 'The stand-in failed.' } })
-  })
+  app.use(answerErrors)
 
   return {
     start: () =>
@@ -330,3 +220,23 @@ export function createStripeFake(options: StripeFakeOptions) {
     },
   }
 }
+
+function queryOf(req: Request): Form {
+  try {
+    return readForm(req.originalUrl.split('?')[1] ?? '')
+  } catch {
+    throw invalid('Malformed parameters.')
+  }
+}
+
+function known<T>(kind: Record<string, T>, id: string): T {
+  const found = Object.hasOwn(kind, id) ? kind[id] : undefined
+  if (!found) throw missing(id)
+  return found
+}
+
+/** In one second several may be made: the later one in memory is the newer. */
+const newestFirst = <T extends { created: number }>(kind: Record<string, T>) =>
+  Object.values(kind)
+    .reverse()
+    .sort((a, b) => b.created - a.created)

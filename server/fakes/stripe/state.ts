@@ -49,6 +49,8 @@ export interface Refund {
   currency: string
   chargeId: string
   intentId: string
+  metadata: Record<string, string>
+  reason: string | null
 }
 export interface StripeEvent {
   id: string
@@ -57,6 +59,7 @@ export interface StripeEvent {
   object: Record<string, unknown>
 }
 export interface KeptReply {
+  at: number
   fingerprint: string
   status: number
   body: unknown

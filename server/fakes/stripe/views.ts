@@ -1,5 +1,7 @@
 /** The objects as the SDK expects them on the wire. Only the fields that the public reference names and the shop or its tests read. */
-import { amountOf, type Charge, type Intent, type Refund, type Session, type State, type StripeEvent } from './state.ts'
+import { invalid, missing } from './errors.ts'
+import { textAt, type Form } from './forms.ts'
+import { amountOf, type Charge, type Intent, type Refund, type Session, type StripeEvent } from './state.ts'
 
 type Json = Record<string, unknown>
 
@@ -62,8 +64,9 @@ export const refundView = (refund: Refund): Json => ({
   charge: refund.chargeId,
   created: refund.created,
   currency: refund.currency,
-  metadata: {},
+  metadata: refund.metadata,
   payment_intent: refund.intentId,
+  reason: refund.reason,
   status: 'succeeded',
 })
 
@@ -94,21 +97,22 @@ export const eventView = (event: StripeEvent): Json => ({
   type: event.type,
 })
 
-/** Newest first, after a cursor, at most 100. */
+/**
+ * One page of a list: newest first, after a cursor, 10 unless asked for, at most 100.
+ * @throws Refusal where nothing in the list has the cursor's id
+ */
 export function page<T extends { id: string }>(
   url: string,
   items: readonly T[],
   view: (item: T) => Json,
-  query: Record<string, unknown>,
+  query: Form,
 ): Json {
-  const limit = Math.min(100, Math.max(1, Number(query.limit ?? 10) || 10))
-  const after =
-    typeof query.starting_after === 'string' ? items.findIndex(({ id }) => id === query.starting_after) + 1 : 0
-  const shown = items.slice(after, after + limit)
-  return { object: 'list', url, has_more: after + shown.length < items.length, data: shown.map(view) }
+  const limit = Number(textAt(query, 'limit') ?? 10)
+  if (!Number.isInteger(limit) || limit < 1 || limit > 100)
+    throw invalid('limit is a whole number from 1 to 100.', 'limit', 'parameter_invalid_integer')
+  const cursor = textAt(query, 'starting_after')
+  const before = cursor === null ? -1 : items.findIndex(({ id }) => id === cursor)
+  if (cursor !== null && before < 0) throw missing(cursor, 'starting_after')
+  const shown = items.slice(before + 1, before + 1 + limit)
+  return { object: 'list', url, has_more: before + 1 + shown.length < items.length, data: shown.map(view) }
 }
-
-export const newestFirst = (state: State) => ({
-  sessions: Object.values(state.memory.sessions).sort((a, b) => b.created - a.created),
-  events: [...state.memory.events].reverse(),
-})

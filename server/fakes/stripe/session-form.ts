@@ -1,0 +1,72 @@
+/** What a checkout session asks for, read from its form and checked as the processor checks it. */
+import { absent, invalid } from './errors.ts'
+import { formAt, listAt, textAt, wordsAt, type Form } from './forms.ts'
+import type { LineItem, Session } from './state.ts'
+
+const NEAREST_S = 30 * 60
+const FURTHEST_S = 24 * 3600
+
+/**
+ * @param now Unix seconds
+ * @throws Refusal naming the parameter
+ */
+export function readSessionForm(form: Form, now: number): Omit<Session, 'id' | 'status' | 'paid' | 'intentId'> {
+  if (textAt(form, 'mode') !== 'payment') throw invalid('Only payment mode is spoken here.', 'mode')
+  const items = listAt(form, 'line_items')
+  if (items.length === 0) throw absent('line_items')
+  const lines = items.map(readLine)
+  const currency = lines[0]?.currency ?? ''
+  const odd = lines.findIndex((line) => line.currency !== currency || !/^[a-z]{3}$/.test(line.currency))
+  if (odd >= 0) throw invalid('Invalid currency.', `line_items[${odd}][price_data][currency]`)
+  const successUrl = readUrl(form, 'success_url')
+  if (successUrl === null) throw absent('success_url')
+  const expiresAt = Number(textAt(form, 'expires_at') ?? now + FURTHEST_S)
+  if (!Number.isInteger(expiresAt) || expiresAt < now + NEAREST_S || expiresAt > now + FURTHEST_S)
+    throw invalid('expires_at must be between 30 minutes and 24 hours from now.', 'expires_at')
+  return {
+    created: now,
+    expiresAt,
+    currency,
+    lines: lines.map(({ name, unitAmount, quantity }) => ({ name, unitAmount, quantity })),
+    clientReferenceId: textAt(form, 'client_reference_id'),
+    customerEmail: textAt(form, 'customer_email'),
+    locale: textAt(form, 'locale') ?? 'auto',
+    metadata: wordsAt(form, 'metadata'),
+    intentMetadata: wordsAt(form, 'payment_intent_data', 'metadata'),
+    successUrl,
+    cancelUrl: readUrl(form, 'cancel_url') ?? successUrl,
+  }
+}
+
+function readLine(item: Form | string, index: number): LineItem & { currency: string } {
+  const param = (...path: string[]) => `line_items[${index}]${path.map((part) => `[${part}]`).join('')}`
+  const text = (...path: string[]) => {
+    const value = formAt(item, ...path)
+    return typeof value === 'string' && value !== '' ? value : null
+  }
+  const whole = (least: number, value: string, ...path: string[]) => {
+    const number = Number(value)
+    if (!Number.isSafeInteger(number) || number < least)
+      throw invalid(`Invalid integer: ${value}`, param(...path), 'parameter_invalid_integer')
+    return number
+  }
+  const needed = (...path: string[]) => {
+    const value = text(...path)
+    if (value === null) throw absent(param(...path))
+    return value
+  }
+  return {
+    name: needed('price_data', 'product_data', 'name'),
+    unitAmount: whole(0, needed('price_data', 'unit_amount'), 'price_data', 'unit_amount'),
+    quantity: whole(1, text('quantity') ?? '1', 'quantity'),
+    currency: needed('price_data', 'currency'),
+  }
+}
+
+/** These end in links and redirects of the payment page: web addresses only. */
+function readUrl(form: Form, param: string): string | null {
+  const url = textAt(form, param)
+  if (url !== null && !/^https?:$/.test(URL.parse(url)?.protocol ?? ''))
+    throw invalid('Not a valid URL', param, 'url_invalid')
+  return url
+}
