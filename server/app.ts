@@ -9,7 +9,7 @@ import { pinoHttp } from 'pino-http'
 import type { Deps } from './deps.ts'
 import { AppError } from './http/errors.ts'
 import { mountRoutes } from './http/mount.ts'
-import { problemHandler } from './http/problem.ts'
+import { problemHandler, requestId } from './http/problem.ts'
 import { sameSiteOnly } from './http/same-site.ts'
 import { sessionMiddleware } from './http/session.ts'
 import { routes } from './routes.ts'
@@ -34,11 +34,11 @@ export function createApp(deps: Deps, clientDir: string | null): Express {
         }),
         res: (res: { statusCode: number }) => ({ status: res.statusCode }),
       },
-      autoLogging: { ignore: (req) => req.url?.startsWith('/api/health') ?? false },
+      autoLogging: { ignore: (req) => req.url.startsWith('/api/health') },
     }),
   )
   app.use((req, res, next) => {
-    res.set('X-Request-Id', String(req.id))
+    res.set('X-Request-Id', requestId(req))
     next()
   })
   app.use(

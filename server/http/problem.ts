@@ -8,6 +8,9 @@ import type { Problem } from '#contract/common.ts'
 import { AppError, type FieldError } from './errors.ts'
 import { localeOf, textsIn } from './texts.ts'
 
+/** The id that app.ts gives every request; a person may quote it. */
+export const requestId = (req: Request) => (typeof req.id === 'string' ? req.id : '')
+
 const connectionCodes = new Set([
   'ECONNREFUSED',
   'ECONNRESET',
@@ -87,7 +90,7 @@ function sendProblem(req: Request, res: Response, error: AppError) {
     detail: t([`errors:${error.code}.detail`, 'errors:unknown.detail'], error.data),
     instance: req.originalUrl.split('?')[0] ?? '',
     code: error.code,
-    requestId: String(req.id),
+    requestId: requestId(req),
     ...(Object.keys(error.data).length > 0 ? { data: error.data } : {}),
     ...(fields
       ? {

@@ -60,7 +60,7 @@ export function route<
   Q extends Schema | undefined = undefined,
   B extends Schema | undefined = undefined,
 >(spec: RouteSpec<P, Q, B, R>, handle: (call: Call<Out<P>, Out<Q>, Out<B>>) => Promise<z.input<R> | undefined>): Route {
-  return { spec, handle: handle as Route['handle'] }
+  return { spec, handle: handle }
 }
 
 /** The signed-in person of a route whose `access` names roles. */

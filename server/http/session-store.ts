@@ -38,12 +38,16 @@ export class SqlSessionStore extends Store {
          ON DUPLICATE KEY UPDATE user_id = VALUES(user_id), data = VALUES(data), expires_at = VALUES(expires_at)`,
         { replacements: [hash(sid), userId, JSON.stringify(session), this.expiry()] },
       )
-      .then(() => done?.(), done)
+      .then(() => done?.())
+      .catch((error: unknown) => done?.(error))
   }
 
   override destroy(sid: string, done?: (error?: unknown) => void) {
     this.touched.delete(sid)
-    this.db.query('DELETE FROM sessions WHERE sid_hash = ?', { replacements: [hash(sid)] }).then(() => done?.(), done)
+    this.db
+      .query('DELETE FROM sessions WHERE sid_hash = ?', { replacements: [hash(sid)] })
+      .then(() => done?.())
+      .catch((error: unknown) => done?.(error))
   }
 
   override touch(sid: string, _session: SessionData, done?: () => void) {

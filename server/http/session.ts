@@ -40,8 +40,7 @@ export function sessionMiddleware({ config, db, clock }: Deps): RequestHandler {
 
 export async function readUser(userId: number | undefined): Promise<SignedIn | null> {
   if (userId === undefined) return null
-  const user = await User.findByPk(userId, { raw: true, attributes: ['id', 'email', 'name', 'role', 'locale'] })
-  return user as SignedIn | null
+  return User.findByPk(userId, { raw: true, attributes: ['id', 'email', 'name', 'role', 'locale'] })
 }
 
 /** A fresh session id on every change of person: an id planted before sign-in is worth nothing after it. The basket moves along. */

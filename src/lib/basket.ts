@@ -64,7 +64,7 @@ export function usePutLine() {
   const putLines = usePutLines()
   const mutation = useMutation({
     mutationFn: async (line: Line) => {
-      const present = linesOf(await client.fetchQuery({ ...basketQuery(market), staleTime: 0 }))
+      const present = linesOf(await client.query({ ...basketQuery(market), staleTime: 0 }))
       const adviceId = answers ? (await keepAdvice(answers)).adviceId : undefined
       const others = present.filter(({ sku }) => sku !== line.sku)
       return putLines.mutateAsync([...others, adviceId === undefined ? line : { ...line, adviceId }])

@@ -77,7 +77,7 @@ function checked(draft: Tree): Draft {
       const one = shape[name]?.safeParse(value)
       return one?.success ? [[name, one.data]] : []
     }),
-  ) as Draft
+  )
 }
 
 function put(tree: Tree, path: string, value: unknown) {
@@ -100,9 +100,10 @@ function take(tree: Tree, path: string): unknown {
 export function writeDraft(draft: Draft, into = new URLSearchParams()): URLSearchParams {
   const params = new URLSearchParams(into)
   for (const [short, path] of inAddress) {
-    const value = take(draft as Tree, path)
-    if (value === undefined || value === null) params.delete(short)
-    else params.set(short, value === true ? 'yes' : value === false ? 'no' : String(value))
+    const value = take(draft, path)
+    if (typeof value === 'boolean') params.set(short, value ? 'yes' : 'no')
+    else if (typeof value === 'string' || typeof value === 'number') params.set(short, String(value))
+    else params.delete(short)
   }
   if (draft.tyre === null) params.set('tyre', 'unknown')
   else params.delete('tyre')

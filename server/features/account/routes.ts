@@ -11,6 +11,9 @@ const feature = 'account'
 const everyRole = ['rider', 'support', 'product', 'admin'] as const
 const bikeId = z.object({ bikeId: z.coerce.number<string>().int().min(1) })
 
+const emailOf = (body: unknown) =>
+  signIn.shape.email.safeParse((body as { email?: unknown } | undefined)?.email).data?.toLowerCase() ?? ''
+
 /** Failed sign-ins are counted by caller and account; good ones are not, so nobody can shut out somebody else from elsewhere. */
 const limiter = rateLimit({
   windowMs: 5 * 60_000,
@@ -18,8 +21,7 @@ const limiter = rateLimit({
   standardHeaders: 'draft-8',
   legacyHeaders: false,
   skipSuccessfulRequests: true,
-  keyGenerator: (req) =>
-    `${req.ip ?? ''} ${String((req.body as { email?: unknown } | undefined)?.email ?? '').toLowerCase()}`,
+  keyGenerator: (req) => `${req.ip ?? ''} ${emailOf(req.body)}`,
   validate: { keyGeneratorIpFallback: false },
   handler: (_req, _res, next) => {
     next(new AppError('too-many-tries', 429))

@@ -23,7 +23,7 @@ async function readRules(
   const newest = [...new Map(rows.map((row) => [row.name, row])).values()]
   const version =
     newest
-      .map((row) => String(row.version))
+      .map((row) => row.version)
       .sort()
       .at(-1) ?? 'none'
   return { rules: rulesFrom(newest), version }

@@ -142,7 +142,7 @@ function emptySet(row: WheelRow): StoredWheelset {
     limitProof,
     massG: 0,
     prices: {},
-    available: Math.max(0, Number(row.available ?? 0)),
+    available: Math.max(0, row.available ?? 0),
     // Filled by the two rows that follow; a set that lacks one is dropped.
     front: undefined as never,
     rear: undefined as never,

@@ -35,8 +35,8 @@ export async function moveOrder(
   const toState = nextState(order.state, move)
   if (toState === null) return false
   const fromState = order.state
-  await order.update({ state: toState as typeof order.state }, { transaction })
-  await OrderLine.update({ state: toState as typeof order.state }, { where: { orderId: order.id }, transaction })
+  await order.update({ state: toState }, { transaction })
+  await OrderLine.update({ state: toState }, { where: { orderId: order.id }, transaction })
   await OrderEvent.create(
     {
       orderId: order.id,

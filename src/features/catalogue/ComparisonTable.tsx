@@ -5,7 +5,7 @@ import type { Wheelset } from '#contract/catalogue.ts'
 import type { WheelsetVerdict } from '../../lib/fitting.ts'
 import { PairDrawing } from '../../ui/PairDrawing.tsx'
 import { decidingRow, useComparisonRows } from './comparison.ts'
-import { drawn } from './drawn.ts'
+import { drawn } from '../../lib/drawn.ts'
 import { RiderVerdict } from './RiderVerdict.tsx'
 
 interface ComparisonTableProps {

@@ -3,7 +3,7 @@ import { useTranslation } from 'react-i18next'
 import type { Wheelset } from '#contract/catalogue.ts'
 import { useFormat } from '../../lib/format.ts'
 import { usePreferences } from '../../lib/preferences.tsx'
-import { marketsQuery } from './queries.ts'
+import { marketsQuery } from '../../lib/wheelsets.ts'
 import { stockWord } from './wheel-rows.ts'
 
 /** Price with its tax in words, delivery, and whether there is one. */

@@ -1,5 +1,5 @@
 import { zodResolver } from '@hookform/resolvers/zod'
-import { useEffect, useRef } from 'react'
+import { useEffect } from 'react'
 import { useForm, type FieldPath } from 'react-hook-form'
 import { useTranslation } from 'react-i18next'
 import { z } from 'zod'
@@ -20,6 +20,7 @@ const form = z.object({
   phone: z.preprocess(emptyAsMissing, delivery.shape.phone),
   limitAcknowledged: z.boolean().optional(),
 })
+const controlId = (name: string) => `till-${name}`
 export type DeliveryInput = z.output<typeof form>
 
 /** What is typed stays over a reload and a refusal; it is forgotten with the window. */
@@ -68,7 +69,6 @@ export function DeliveryForm({ country, email, mustAcknowledge, limits, payLabel
     [subscribe],
   )
   const { errors, submitCount } = formState
-  const ids = useRef(new Map<string, string>())
   type Name = FieldPath<z.input<typeof form>>
   const field = (
     name: Exclude<Name, 'limitAcknowledged'>,
@@ -76,19 +76,19 @@ export function DeliveryForm({ country, email, mustAcknowledge, limits, payLabel
     more: { type?: string; hint?: string; className?: string } = {},
   ) => (
     <Field
+      id={controlId(name)}
       label={t(`field.${name}`)}
       hint={more.hint}
       error={errors[name] && t(`wrong.${name}`)}
       className={more.className}
     >
-      {(control) => {
-        ids.current.set(name, control.id)
-        return <TextInput {...control} {...register(name)} type={more.type ?? 'text'} autoComplete={autoComplete} />
-      }}
+      {(control) => (
+        <TextInput {...control} {...register(name)} type={more.type ?? 'text'} autoComplete={autoComplete} />
+      )}
     </Field>
   )
   const problems = Object.keys(errors).map((name) => ({
-    controlId: ids.current.get(name) ?? null,
+    controlId: controlId(name),
     message: t(`wrong.${name}`),
   }))
   return (
@@ -128,15 +128,9 @@ export function DeliveryForm({ country, email, mustAcknowledge, limits, payLabel
           >
             <input
               type="checkbox"
+              id={controlId('limitAcknowledged')}
               className="mt-1 size-5 flex-none accent-(--own)"
               {...register('limitAcknowledged')}
-              ref={(element) => {
-                register('limitAcknowledged').ref(element)
-                if (element) {
-                  element.id = 'limit-acknowledged'
-                  ids.current.set('limitAcknowledged', element.id)
-                }
-              }}
             />
             <span>{t('acknowledge', { limits })}</span>
           </label>

@@ -36,9 +36,7 @@ export function SignInPage() {
             {(['rider', 'support', 'product', 'product2', 'admin'] as const).map((who) => (
               <div key={who}>
                 <dt className="text-sm text-soft">{t(`signIn.roles.${who}`)}</dt>
-                <dd className="text-sm break-all">
-                  {who}@felloe.example · {who}-demo-2026
-                </dd>
+                <dd className="text-sm break-all">{t('signIn.demoLine', { who })}</dd>
               </div>
             ))}
           </dl>

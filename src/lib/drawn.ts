@@ -1,5 +1,5 @@
 import type { Wheelset, WheelFactsView } from '#contract/catalogue.ts'
-import type { DrawnWheel } from '../../ui/WheelLines.tsx'
+import type { DrawnWheel } from '../ui/WheelLines.tsx'
 
 /** Everyday road width where the rim takes it, else the narrowest that it takes. */
 const EVERYDAY_TYRE_MM = 28

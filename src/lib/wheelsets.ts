@@ -2,7 +2,7 @@
 import { keepPreviousData, queryOptions } from '@tanstack/react-query'
 import { marketList, wheelset, wheelsetList, type Wheelset, type WheelsetList } from '#contract/catalogue.ts'
 import type { Locale } from '#contract/common.ts'
-import { api } from '../../lib/api.ts'
+import { api } from './api.ts'
 
 export type Asked = Record<string, string>
 
