@@ -6,8 +6,9 @@ import { Verdict } from '../../ui/Verdict.tsx'
 import { standings, useAdviceWords } from './words.ts'
 
 const FEW = 5
-/** Degrees by which a beam tips once the total is past the limit. */
-const TIP = 3
+/** How far a tipped beam's near end lifts, and the least by which its far end sinks, px. */
+const LIFT = 9
+const LEAST_SUNK = 3
 
 type Judged = Advice['wheelsets'][number]
 
@@ -25,6 +26,11 @@ export function Balance({ advice }: { advice: Advice }) {
   const shown = all ? offered : offered.slice(0, FEW)
   const endKg = Math.max(totalKg, ...[...offered, ...over].map(({ limitKg }) => limitKg)) * 1.015
   const total = format.mass(totalKg, 'up').text
+  // What holds for all of them is said once.
+  const shared =
+    offered.length > 1
+      ? (offered[0]?.codes ?? []).filter((code) => offered.every(({ codes }) => codes.includes(code)))
+      : []
   return (
     <section>
       <h2>
@@ -33,10 +39,17 @@ export function Balance({ advice }: { advice: Advice }) {
           : t('findings.balance.titleNone', { total })}
       </h2>
       <p className="mt-1 text-sm text-soft">{t('findings.balance.text')}</p>
+      {shared.length > 0 && (
+        <p className="mt-1 text-sm text-soft">
+          {t('findings.balance.shared', {
+            codes: format.list(shared.map((code) => t([`findings.why.${code}`, 'findings.why.other']))),
+          })}
+        </p>
+      )}
       {offered.length > 0 && (
         <ol className="mt-3 border-t border-line">
           {shown.map((one) => (
-            <Row key={one.sku} judged={one} totalKg={totalKg} endKg={endKg} />
+            <Row key={one.sku} judged={one} totalKg={totalKg} endKg={endKg} shared={shared} />
           ))}
         </ol>
       )}
@@ -57,7 +70,7 @@ export function Balance({ advice }: { advice: Advice }) {
           <h3 className="mt-4">{t('findings.balance.over')}</h3>
           <ul className="mt-2 border-t border-line">
             {over.map((one) => (
-              <Row key={one.sku} judged={one} totalKg={totalKg} endKg={endKg} />
+              <Row key={one.sku} judged={one} totalKg={totalKg} endKg={endKg} shared={shared} />
             ))}
           </ul>
         </>
@@ -66,10 +79,31 @@ export function Balance({ advice }: { advice: Advice }) {
   )
 }
 
-function Row({ judged, totalKg, endKg }: { judged: Judged; totalKg: number; endKg: number }) {
+function Row({
+  judged,
+  totalKg,
+  endKg,
+  shared,
+}: {
+  judged: Judged
+  totalKg: number
+  endKg: number
+  shared: readonly string[]
+}) {
   const { t, format, verdict } = useAdviceWords()
   const { name, slug, limitKg, codes, rank, startBar } = judged
   const over = judged.verdict === 'over-limit'
+  const why = [
+    ...codes.filter((code) => !shared.includes(code)).map((code) => t([`findings.why.${code}`, 'findings.why.other'])),
+    ...(startBar
+      ? [
+          t('findings.balance.start', {
+            front: format.pressure(startBar.front).value,
+            rear: format.pressure(startBar.rear).text,
+          }),
+        ]
+      : []),
+  ]
   return (
     <li className="grid grid-cols-[minmax(0,1fr)_auto] items-center gap-x-4 gap-y-1 border-b border-line py-2.5 sm:grid-cols-[8.5rem_minmax(0,1fr)_9.5rem]">
       <p className="leading-tight">
@@ -90,19 +124,8 @@ function Row({ judged, totalKg, endKg }: { judged: Judged; totalKg: number; endK
       <p className="text-end max-sm:col-start-2 max-sm:row-start-1">
         <Verdict standing={standings[judged.verdict]}>{verdict(judged)}</Verdict>
       </p>
-      {!over && (
-        <p className="col-span-full text-[0.8125rem] leading-snug text-soft">
-          {codes.map((code) => t([`findings.why.${code}`, 'findings.why.other'])).join(' · ')}
-          {startBar && (
-            <>
-              {' · '}
-              {t('findings.balance.start', {
-                front: format.pressure(startBar.front).value,
-                rear: format.pressure(startBar.rear).text,
-              })}
-            </>
-          )}
-        </p>
+      {!over && why.length > 0 && (
+        <p className="col-span-full text-[0.8125rem] leading-snug text-soft">{why.join(' · ')}</p>
       )}
     </li>
   )
@@ -116,49 +139,42 @@ interface BeamProps {
 }
 
 const colours = {
-  fits: { fill: 'bg-within/25', end: 'bg-within' },
-  'no-margin': { fill: 'bg-near/25', end: 'bg-near' },
-  'over-limit': { fill: 'bg-soft/30', end: 'bg-stop' },
-  mismatch: { fill: 'bg-soft/20', end: 'bg-soft' },
-  pressure: { fill: 'bg-soft/20', end: 'bg-soft' },
+  fits: { fill: 'text-within/30', end: 'bg-within' },
+  'no-margin': { fill: 'text-near/35', end: 'bg-near' },
+  'over-limit': { fill: 'text-soft/40', end: 'bg-stop' },
+  mismatch: { fill: 'text-soft/30', end: 'bg-soft' },
+  pressure: { fill: 'text-soft/30', end: 'bg-soft' },
 } as const
 
-/** From nothing to the limit, all beams to one scale; the rider's total as a red mark. Past the limit the beam tips over its end. */
+/**
+ * From nothing to the limit, all beams to one scale; the rider's total as a red mark. Past the limit the beam tips over its end:
+ * the near side lifts, the total hangs beyond the pivot.
+ */
 export function Beam({ judged: { verdict, limitKg }, totalKg, endKg, label }: BeamProps) {
   const over = totalKg > limitKg
-  const at = (kg: number) => `${(kg / endKg) * 100}%`
+  const at = (kg: number) => (kg / endKg) * 100
   const { fill, end } = colours[verdict]
+  const sunk = over ? Math.max(LEAST_SUNK, (LIFT * (totalKg - limitKg)) / limitKg) : 0
   return (
-    <div role="img" aria-label={label} className="relative h-8 max-sm:col-span-2">
-      <div
-        className="absolute inset-0 transition-transform motion-reduce:transition-none"
-        style={over ? { transform: `rotate(${TIP}deg)`, transformOrigin: `${at(limitKg)} 50%` } : undefined}
+    <div role="img" aria-label={label} className="relative h-9 max-sm:col-span-2">
+      <svg
+        aria-hidden
+        viewBox="0 0 100 36"
+        preserveAspectRatio="none"
+        className="absolute inset-0 size-full overflow-visible"
       >
-        <span
-          className={`absolute top-1/2 h-2 -translate-y-1/2 transition-[width] print:border print:border-soft ${fill}`}
-          style={{ width: at(limitKg) }}
-        />
-        {over && (
-          <span
-            className="absolute top-1/2 h-0.5 -translate-y-1/2 bg-own"
-            style={{ left: at(limitKg), width: at(totalKg - limitKg) }}
-          />
-        )}
-        <span
-          className="absolute top-1 h-6 w-0.5 -translate-x-1/2 bg-own transition-[left]"
-          style={{ left: at(totalKg) }}
-        />
-      </div>
-      <span
-        className={`absolute top-1.5 h-5 w-[3px] -translate-x-1/2 transition-[left] ${end}`}
-        style={{ left: at(limitKg) }}
-      />
-      {/* The pivot stands under the limit: left of it the beam lies level. */}
+        <g className="[&_*]:[vector-effect:non-scaling-stroke]" stroke="currentColor">
+          <path d={`M0 ${17 - (over ? LIFT : 0)}L${at(limitKg)} 17`} className={fill} strokeWidth="8" />
+          {over && <path d={`M${at(limitKg)} 17L${at(totalKg)} ${17 + sunk}`} className="text-own" strokeWidth="2" />}
+          <path d={`M${at(totalKg)} ${6 + sunk}v22`} className="text-own" strokeWidth="2" />
+        </g>
+      </svg>
+      <span className={`absolute top-[7px] h-5 w-[3px] -translate-x-1/2 ${end}`} style={{ left: `${at(limitKg)}%` }} />
       <svg
         aria-hidden
         viewBox="0 0 10 6"
-        className="absolute -bottom-0.5 h-1.5 w-2.5 -translate-x-1/2 text-ink"
-        style={{ left: at(limitKg) }}
+        className="absolute bottom-0 h-1.5 w-2.5 -translate-x-1/2 text-ink"
+        style={{ left: `${at(limitKg)}%` }}
       >
         <path d="M5 0 10 6H0Z" fill="currentColor" />
       </svg>

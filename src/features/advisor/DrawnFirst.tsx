@@ -21,7 +21,11 @@ export function DrawnFirst({ advice, answers }: { advice: Advice; answers: Rider
       <figcaption className="text-sm leading-snug">
         <span className="block font-[650]">{t('findings.drawn.caption')}</span>
         <span className="text-soft">
-          {set.beadSeatMm} · {format.width(wheel.tyreWidthMm).text} · {set.rear.spokeCount}
+          {t('findings.drawn.facts', {
+            size: set.beadSeatMm,
+            tyre: format.width(wheel.tyreWidthMm).text,
+            spokes: set.rear.spokeCount,
+          })}
         </span>
       </figcaption>
       <WheelDrawing

@@ -34,15 +34,21 @@ const Cell = ({ children }: { children: ReactNode }) => (
 )
 
 function Figures({ parts, unit }: { parts: readonly { name?: string; value: string }[]; unit?: string }) {
+  // Ranges are twice as long as figures and still have to stand in one line.
+  const long = parts.some(({ value }) => value.length > 4)
   return (
-    <p className="mt-1.5 flex flex-wrap items-end gap-x-5 gap-y-1">
-      {parts.map(({ name, value }) => (
-        <span key={name ?? value}>
-          {name !== undefined && <span className="block text-sm leading-tight text-soft">{name} </span>}
-          <span className="figure text-[2.5rem] whitespace-nowrap">{value}</span>
-        </span>
-      ))}
-      {unit !== undefined && <span className="pb-1.5 text-lg font-semibold text-soft">{unit}</span>}
+    <p className="mt-1.5 flex flex-wrap items-end gap-x-2 gap-y-1">
+      <span className={`flex ${long ? 'gap-x-4' : 'gap-x-6'}`}>
+        {parts.map(({ name, value }) => (
+          <span key={name ?? value}>
+            {name !== undefined && <span className="block text-sm leading-tight text-soft">{name} </span>}
+            <span className={`figure whitespace-nowrap ${long ? 'text-[2rem]' : 'text-[2.5rem]'}`}>{value}</span>
+          </span>
+        ))}
+      </span>
+      {unit !== undefined && (
+        <span className={`${long ? 'pb-0.5' : 'pb-1.5'} text-lg font-semibold text-soft`}>{unit}</span>
+      )}
     </p>
   )
 }
@@ -66,14 +72,16 @@ function Pressure({ advice: { pressure, reasons, notes } }: { advice: Advice }) 
         <Small>{t(outside ? 'findings.answers.noPressureModelText' : 'findings.answers.noPressureText')}</Small>
         {!outside && (
           <ButtonLink
-            to="#sharpen-tyre"
+            to="#group-tyre"
             kind="plain"
             small
             className="mt-3"
             onClick={(event) => {
               event.preventDefault()
-              document.getElementById('sharpen-tyre')?.focus()
-              document.getElementById('sharpen-tyre')?.scrollIntoView({ block: 'center' })
+              const group = document.getElementById('group-tyre')
+              if (group instanceof HTMLDetailsElement) group.open = true
+              group?.scrollIntoView({ block: 'start' })
+              document.getElementById('sharpen-tyre.frontWidthMm')?.focus({ preventScroll: true })
             }}
           >
             {t('findings.answers.noPressureGo')}

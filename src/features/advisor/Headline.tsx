@@ -32,7 +32,7 @@ export function useHeadline(advice: Advice | undefined): string {
 }
 
 /** For whom it was worked out: the rider's own answers in red, everything else said as assumed further down. */
-export function Lede({ answers }: { answers: RiderAnswers }) {
+export function Lede({ answers, figures }: { answers: RiderAnswers; figures: boolean }) {
   const { t, format } = useAdviceWords()
   const { bodyMassKg, bodyMassBandKg, ride, brakes, tyre } = answers
   const mass =
@@ -59,7 +59,8 @@ export function Lede({ answers }: { answers: RiderAnswers }) {
           tyres,
         }}
         components={{ own }}
-      />
+      />{' '}
+      {figures && t('findings.ledeWorking')}
     </p>
   )
 }

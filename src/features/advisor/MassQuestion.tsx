@@ -122,7 +122,7 @@ export function MassQuestion({ mass, onChange, asked, controlName, small = false
         : undefined
   const asking = check.verdict === 'ask' && !confirmed
   return (
-    <div className="grid justify-items-start gap-4">
+    <div className={`grid grid-cols-1 justify-items-start gap-4 ${small ? '[&_input]:text-own' : ''}`}>
       <div className="flex flex-wrap items-end gap-x-3 gap-y-3">
         <NumberField
           label={t('fitting.mass.label')}

@@ -41,7 +41,7 @@ export function Sharpen({ advice, draft, setDraft, mass, setMass, summary }: Sha
               key={`${name}${wide}`}
               open={wide}
               id={`group-${name}`}
-              className="group border-line px-5 max-md:not-first:border-t md:px-9 md:py-5 md:not-first:border-s xl:px-6 xl:first:ps-9 xl:last:pe-9 md:max-xl:nth-[n+3]:border-t md:max-xl:odd:border-s-0"
+              className="group min-w-0 border-line px-5 max-md:not-first:border-t md:px-9 md:py-5 md:not-first:border-s xl:px-6 xl:first:ps-9 xl:last:pe-9 md:max-xl:nth-[n+3]:border-t md:max-xl:odd:border-s-0"
             >
               <summary
                 id={name === 'tyre' ? 'sharpen-tyre' : undefined}
@@ -56,7 +56,7 @@ export function Sharpen({ advice, draft, setDraft, mass, setMass, summary }: Sha
                   </span>
                 </span>
               </summary>
-              <div className="grid gap-3.5 pb-5 md:mt-4 md:pb-0">
+              <div className="grid grid-cols-1 gap-3.5 pb-5 md:mt-4 md:pb-0">
                 {name === 'load' && (
                   <MassQuestion mass={mass} onChange={setMass} asked controlName="sharpen-mass" small />
                 )}
@@ -149,6 +149,7 @@ function Figure({ field: { path, unit, least, most }, value, guessed, set }: Fig
   return (
     <NumberField
       id={`sharpen-${path}`}
+      className={value === null ? '' : '[&_input]:text-own'}
       label={<span className="text-sm">{nameOf(path)}</span>}
       hint={value === null && refused === null ? guessed : undefined}
       unit={name}

@@ -92,7 +92,7 @@ function Drawing({ points, advised, label }: DrawingProps) {
     x,
   )
   const near = points.at(-2) ?? points.at(-1)
-  const early = points[Math.min(2, points.length - 1)]
+  const last = points.at(-1)
   return (
     <div ref={ref} className="mt-2">
       <svg
@@ -139,8 +139,13 @@ function Drawing({ points, advised, label }: DrawingProps) {
             {t('findings.tradeOff.watts')}, W
           </text>
         )}
-        {early && (
-          <text x={x(early.depthMm)} y={gust(early.gustMomentNm) - 10} className="fill-ink font-[650]">
+        {last && (
+          <text
+            x={width - EDGE.right}
+            y={gust(last.gustMomentNm) - 12}
+            textAnchor="end"
+            className="fill-ink font-[650]"
+          >
             {t('findings.tradeOff.gust')}, N·m
           </text>
         )}

@@ -127,6 +127,7 @@ export function writePath(draft: Draft, path: string, value: unknown, usualSetup
 /** What the server took where nothing was said, as far as the working shows it. */
 export function assumedValue(advice: Advice, path: string): unknown {
   const name = path.split('.').at(-1) ?? path
+  if (path === 'ridersOnBike') return 1
   if (name in advice.parts) return advice.parts[name as keyof Advice['parts']]
   for (const reason of Object.values(advice.reasons)) if (name in reason.inputs) return reason.inputs[name]
   return undefined

@@ -57,7 +57,7 @@ export function noteText(t: TFunction, format: Format, { code, data }: Note): st
     Object.entries(data).map(([name, value]) => [
       name,
       name === 'fields' && Array.isArray(value)
-        ? format.list(value.map((path) => fieldName(t, String(path))))
+        ? format.list(value.map((path) => fieldName(t, String(path)).toLocaleLowerCase()))
         : typeof value === 'number'
           ? showValue(name, value, format)
           : String(value),

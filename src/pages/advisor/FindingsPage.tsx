@@ -110,7 +110,7 @@ function Result({ advice, answers, headline, toFitting }: ResultProps) {
     return (
       <div className="px-5 pt-7 pb-9 md:px-9 md:pt-10">
         <h1 className="max-w-[24ch]">{headline}</h1>
-        <Lede answers={answers} />
+        <Lede answers={answers} figures={false} />
         <div className="mt-6 border-t border-ink pt-6">
           <Refusal advice={advice} banded={answers.bodyMassBandKg !== undefined} toFitting={toFitting('ride')} />
         </div>
@@ -128,7 +128,7 @@ function Result({ advice, answers, headline, toFitting }: ResultProps) {
       <div className="grid lg:grid-cols-[minmax(0,1fr)_minmax(0,1.06fr)]">
         <div className="order-1 px-5 pt-7 pb-9 md:px-9 md:pt-10 lg:order-2">
           <h1 className="max-w-[22ch]">{headline}</h1>
-          <Lede answers={answers} />
+          <Lede answers={answers} figures />
           <div className="mt-6">
             <FourAnswers advice={advice} />
           </div>
@@ -142,6 +142,7 @@ function Result({ advice, answers, headline, toFitting }: ResultProps) {
             </ButtonLink>
             <Button
               kind="quiet"
+              className="px-0!"
               onClick={() => {
                 window.print()
               }}
