@@ -66,7 +66,7 @@ function readLine(item: Form | string, index: number): LineItem & { currency: st
 /** These end in links and redirects of the payment page: web addresses only. */
 function readUrl(form: Form, param: string): string | null {
   const url = textAt(form, param)
-  if (url !== null && !/^https?:$/.test(URL.parse(url)?.protocol ?? ''))
-    throw invalid('Not a valid URL', param, 'url_invalid')
+  const web = url === null || (URL.canParse(url) && /^https?:$/.test(new URL(url).protocol))
+  if (!web) throw invalid('Not a valid URL', param, 'url_invalid')
   return url
 }
