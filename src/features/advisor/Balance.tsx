@@ -1,3 +1,4 @@
+import { useTranslation } from 'react-i18next'
 import { useState } from 'react'
 import { Link } from 'react-router-dom'
 import type { Advice } from '#contract/advisor.ts'
@@ -14,7 +15,8 @@ type Judged = Advice['wheelsets'][number]
 
 /** Every offered wheelset as a beam: the total against its limit. Those just past the limit stand below, tipped. */
 export function Balance({ advice }: { advice: Advice }) {
-  const { t, format } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format } = useAdviceWords()
   const [all, setAll] = useState(false)
   const { systemMassKg: totalKg, wheelsets } = advice
   const offered = wheelsets.filter(({ rank }) => rank !== null)
@@ -90,7 +92,8 @@ function Row({
   endKg: number
   shared: readonly string[]
 }) {
-  const { t, format, verdict } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format, verdict } = useAdviceWords()
   const { name, slug, limitKg, codes, rank, startBar } = judged
   const over = judged.verdict === 'over-limit'
   const why = [

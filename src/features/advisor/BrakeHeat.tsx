@@ -1,10 +1,12 @@
+import { useTranslation } from 'react-i18next'
 import type { Advice } from '#contract/advisor.ts'
 import { useAdviceWords } from './words.ts'
 import { WithWorking } from './Working.tsx'
 
 /** Rim brakes only: where carbon and alloy rims end up on the rider's worst descent, on one scale with our limit. */
 export function BrakeHeat({ advice: { brakeHeat, reasons } }: { advice: Advice }) {
-  const { t, format } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format } = useAdviceWords()
   if (!brakeHeat) return null
   const { carbonC, alloyC, limitC, verdict, gradient } = brakeHeat
   const end = Math.max(carbonC, alloyC, limitC) * 1.08

@@ -1,3 +1,4 @@
+import { useTranslation } from 'react-i18next'
 import { useQuery } from '@tanstack/react-query'
 import type { Advice, RiderAnswers } from '#contract/advisor.ts'
 import { usePreferences } from '../../lib/preferences.tsx'
@@ -9,7 +10,8 @@ import { useAdviceWords } from './words.ts'
 
 /** The rear wheel of the first-ranked wheelset, from its own data and with the rider's tyre, in its title block. */
 export function DrawnFirst({ advice, answers }: { advice: Advice; answers: RiderAnswers }) {
-  const { t, format } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format } = useAdviceWords()
   const { language } = usePreferences()
   const { data } = useQuery(wheelsetsQuery({ lng: language }))
   const first = advice.wheelsets.find(({ rank }) => rank === 1)

@@ -1,5 +1,5 @@
 import type { ReactNode } from 'react'
-import { Trans } from 'react-i18next'
+import { Trans, useTranslation } from 'react-i18next'
 import type { Advice } from '#contract/advisor.ts'
 import { ButtonLink } from '../../ui/Button.tsx'
 import { useAdviceWords } from './words.ts'
@@ -56,7 +56,8 @@ function Figures({ parts, unit }: { parts: readonly { name?: string; value: stri
 const Small = ({ children }: { children: ReactNode }) => <p className="mt-1.5 text-sm text-soft">{children}</p>
 
 function Pressure({ advice: { pressure, reasons, notes } }: { advice: Advice }) {
-  const { t, format, start, edge } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format, start, edge } = useAdviceWords()
   const label = t('findings.answers.pressure')
   const both = [
     { key: 'pressure.front', title: t('common:front'), reason: reasons['pressure.front'] },
@@ -126,7 +127,8 @@ function Pressure({ advice: { pressure, reasons, notes } }: { advice: Advice }) 
 }
 
 function Depth({ advice: { reasons }, depth }: { advice: Advice; depth: NonNullable<Advice['rimDepthMm']> }) {
-  const { t, format } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format } = useAdviceWords()
   const range = ({ from, to }: { from: number; to: number }) =>
     from === to ? format.number(to) : `${format.number(from)}–${format.number(to)}`
   const label = t('findings.answers.depth')
@@ -152,7 +154,7 @@ function Depth({ advice: { reasons }, depth }: { advice: Advice; depth: NonNulla
 }
 
 function Spokes({ advice: { reasons }, spokes }: { advice: Advice; spokes: NonNullable<Advice['spokes']> }) {
-  const { t } = useAdviceWords()
+  const { t } = useTranslation('advisor')
   const { front, rear } = spokes
   const label = t('findings.answers.spokes')
   const more = front.advised > front.min || rear.advised > rear.min
@@ -182,7 +184,8 @@ function Spokes({ advice: { reasons }, spokes }: { advice: Advice; spokes: NonNu
 }
 
 function Margin({ advice: { wheelsets, reasons, systemMassKg } }: { advice: Advice }) {
-  const { t, format } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format } = useAdviceWords()
   const first = wheelsets.find(({ rank }) => rank === 1)
   const label = t('findings.answers.margin')
   const margin = first && format.mass(first.marginKg, 'down')

@@ -1,11 +1,12 @@
-import { Trans } from 'react-i18next'
+import { Trans, useTranslation } from 'react-i18next'
 import type { Advice, RiderAnswers } from '#contract/advisor.ts'
 import { decidingNote } from './Refusal.tsx'
 import { useAdviceWords } from './words.ts'
 
 /** What the findings come to, in one sentence. */
 export function useHeadline(advice: Advice | undefined): string {
-  const { t, format, start } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format, start } = useAdviceWords()
   if (!advice) return t('findings.title')
   const total = format.mass(advice.systemMassKg, 'up').text
   if (advice.outcome === 'out-of-scope') return t('findings.headline.scope')
@@ -33,7 +34,8 @@ export function useHeadline(advice: Advice | undefined): string {
 
 /** For whom it was worked out: the rider's own answers in red, everything else said as assumed further down. */
 export function Lede({ answers, figures }: { answers: RiderAnswers; figures: boolean }) {
-  const { t, format } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format } = useAdviceWords()
   const { bodyMassKg, bodyMassBandKg, ride, brakes, tyre } = answers
   const mass =
     bodyMassKg !== undefined

@@ -1,3 +1,4 @@
+import { useTranslation } from 'react-i18next'
 import type { Advice } from '#contract/advisor.ts'
 import { Notice } from '../../ui/Notice.tsx'
 import { useAdviceWords } from './words.ts'
@@ -9,7 +10,8 @@ const refusing = new Set(['who-can-help', 'metal-rim-36', 'none-for-bike', 'over
 
 /** The four cautions that go with every number. */
 export function Cautions() {
-  const { t, format } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format } = useAdviceWords()
   const step =
     format.pressure(0.1).unit === 'bar' ? `${format.number(0.1, 1)}\u00a0bar` : `${format.number(2)}\u00a0psi`
   return (
@@ -25,7 +27,8 @@ export function Cautions() {
 
 /** What else holds for this rider, cautions first. */
 export function Notes({ advice }: { advice: Advice }) {
-  const { t, note } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { note } = useAdviceWords()
   const notes = advice.notes.filter(
     ({ code, severity }) => severity !== 'stop' && !standing.has(code) && !refusing.has(code),
   )

@@ -1,3 +1,4 @@
+import { useTranslation } from 'react-i18next'
 import type { Advice, Note } from '#contract/advisor.ts'
 import { ButtonLink } from '../../ui/Button.tsx'
 import { SumTable } from './SumTable.tsx'
@@ -11,7 +12,8 @@ const inScope = (advice: Advice) => advice.outcome !== 'out-of-scope'
 
 /** A refusal shows the sum and a way on; an answer out of scope hints at no number at all. */
 export function Refusal({ advice, banded, toFitting }: { advice: Advice; banded: boolean; toFitting: string }) {
-  const { t, format } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format } = useAdviceWords()
   const note = decidingNote(advice)
   if (!note) return null
   const { code, data } = note

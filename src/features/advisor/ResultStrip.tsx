@@ -1,10 +1,12 @@
+import { useTranslation } from 'react-i18next'
 import type { Advice } from '#contract/advisor.ts'
 import { Verdict } from '../../ui/Verdict.tsx'
 import { standings, useAdviceWords } from './words.ts'
 
 /** The result in one line, so that an answer's effect is seen where it is given. */
 export function ResultStrip({ advice, busy }: { advice: Advice; busy: boolean }) {
-  const { t, format, start, verdict } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format, start, verdict } = useAdviceWords()
   const { systemMassKg, pressure, rimDepthMm, spokes, wheelsets, outcome } = advice
   const first = wheelsets.find(({ rank }) => rank === 1)
   const refused = outcome === 'refuse' || outcome === 'out-of-scope'

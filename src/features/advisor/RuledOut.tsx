@@ -1,3 +1,4 @@
+import { useTranslation } from 'react-i18next'
 import { Link } from 'react-router-dom'
 import type { Advice } from '#contract/advisor.ts'
 import { useAdviceWords } from './words.ts'
@@ -6,7 +7,7 @@ type Judged = Advice['wheelsets'][number]
 
 /** What was left out, gathered by reason: the most telling reasons first, each wheelset with its way back. */
 export function RuledOut({ advice, open = false }: { advice: Advice; open?: boolean }) {
-  const { t } = useAdviceWords()
+  const { t } = useTranslation('advisor')
   const out = advice.wheelsets.filter(({ rank }) => rank === null)
   if (out.length === 0) return null
   const groups = [...gathered(out, ({ codes }) => codes[0] ?? 'other')].sort(
@@ -56,7 +57,8 @@ function gathered(sets: readonly Judged[], by: (one: Judged) => string) {
 }
 
 function Way({ sets, totalKg }: { sets: readonly Judged[]; totalKg: number }) {
-  const { t, format, field, answer } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format, field, answer } = useAdviceWords()
   const change = sets[0]?.nearestChange
   const words = () => {
     if (!change) return t('findings.change.none')

@@ -1,3 +1,4 @@
+import { useTranslation } from 'react-i18next'
 import { useState, useSyncExternalStore, type ReactNode } from 'react'
 import type { Advice } from '#contract/advisor.ts'
 import { inToMm, kgToLb, lbToKg, mmToIn, psiToBar, barToPsi } from '#core/units.ts'
@@ -22,7 +23,7 @@ interface SharpenProps {
 
 /** Every answer with its value, assumed ones marked, each to be given or changed where it stands. */
 export function Sharpen({ advice, draft, setDraft, mass, setMass, summary }: SharpenProps) {
-  const { t } = useAdviceWords()
+  const { t } = useTranslation('advisor')
   const wide = useWide()
   return (
     <section className="border-t border-ink print:hidden" aria-labelledby="sharpen">
@@ -83,7 +84,8 @@ interface ControlProps {
 }
 
 function Control({ field, advice, draft, setDraft }: ControlProps) {
-  const { t, field: nameOf, answer } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { field: nameOf, answer } = useAdviceWords()
   const { path } = field
   const value = readPath(draft, path)
   const guess = advice.assumed.includes(path) ? assumedValue(advice, path) : undefined
@@ -132,7 +134,8 @@ const rounded = (value: number, digits: number) => Math.round(value * 10 ** digi
 
 /** A number in the visitor's unit. What lies outside the bounds is named and not sent. */
 function Figure({ field: { path, unit, least, most }, value, guessed, set }: FigureProps) {
-  const { t, format, field: nameOf } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format, field: nameOf } = useAdviceWords()
   const units = usePreferences()
   const [shown, read, name]: [(value: number) => number, (typed: number) => number, string] =
     unit === 'mass' && units.mass !== 'kg'

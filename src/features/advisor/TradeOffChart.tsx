@@ -1,3 +1,4 @@
+import { useTranslation } from 'react-i18next'
 import { scaleLinear } from 'd3-scale'
 import { area, curveMonotoneX, line } from 'd3-shape'
 import { useLayoutEffect, useRef, useState } from 'react'
@@ -14,7 +15,8 @@ const PAST_MM = 15
 
 /** What depth gains and what it costs, on one page: watts on the left with their band, a gust's moment on the right. */
 export function TradeOffChart({ advice }: { advice: Advice }) {
-  const { t, format } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format } = useAdviceWords()
   const [table, setTable] = useState(false)
   const { tradeOff: points, rimDepthMm: advised, reasons } = advice
   if (points.length < 3 || !advised) return null
@@ -64,7 +66,8 @@ interface DrawingProps {
 }
 
 function Drawing({ points, advised, label }: DrawingProps) {
-  const { t, format } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format } = useAdviceWords()
   const { ref, width } = useWidth(520)
   const depths = points.map(({ depthMm }) => depthMm)
   const [least, most] = [Math.min(...depths), Math.max(...depths)]
@@ -180,7 +183,8 @@ function spaced(all: readonly number[], important: readonly number[], x: (depth:
 }
 
 function Table({ points }: { points: readonly Point[] }) {
-  const { t, format } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format } = useAdviceWords()
   return (
     <div className="mt-3 overflow-x-auto" tabIndex={0} role="region" aria-label={t('findings.tradeOff.table')}>
       <table className="w-full text-sm tabular-nums">

@@ -1,3 +1,4 @@
+import { useTranslation } from 'react-i18next'
 import { useId, useState, type ReactNode } from 'react'
 import { Link } from 'react-router-dom'
 import type { Reason } from '#contract/advisor.ts'
@@ -16,7 +17,7 @@ interface WithWorkingProps {
 
 /** A figure with its working one press away: formula, what went in, source, label, doubt, what would change it. */
 export function WithWorking({ label, name, reasons, children }: WithWorkingProps) {
-  const { t } = useAdviceWords()
+  const { t } = useTranslation('advisor')
   const [open, setOpen] = useState(false)
   const id = useId()
   const shown = reasons.filter((one) => one.reason !== undefined)
@@ -57,7 +58,8 @@ export function WithWorking({ label, name, reasons, children }: WithWorkingProps
 }
 
 function Reasoning({ kind, title, reason }: { kind: string; title: string | undefined; reason: Reason }) {
-  const { t, format, answer, field } = useAdviceWords()
+  const { t } = useTranslation('advisor')
+  const { format, answer, field } = useAdviceWords()
   const { formula, inputs, constants, source, label, uncertainty, wouldChangeIf } = reason
   const show = (name: string, value: unknown): string =>
     typeof value === 'number'
