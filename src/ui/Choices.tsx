@@ -42,7 +42,7 @@ export function Choices<V extends string>({
           return (
             <label
               key={choice.value}
-              className={`flex min-h-14 items-center gap-3 border px-3.5 py-2.5 has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-own ${on ? 'border-own bg-own-wash outline-1 -outline-offset-2 outline-own' : 'border-strong bg-sheet hover:border-ink'}`}
+              className={`relative flex min-h-14 items-center gap-3 border px-3.5 py-2.5 has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-own ${on ? 'border-own bg-own-wash outline-1 -outline-offset-2 outline-own' : 'border-strong bg-sheet hover:border-ink'}`}
             >
               <input
                 type="radio"
