@@ -9,8 +9,8 @@ import { OrderEvent } from '../../models/order-event.ts'
 import { OrderLine } from '../../models/order-line.ts'
 import { Order } from '../../models/order.ts'
 import { checkOrder } from './check-order.ts'
-import { dropOrder } from './drop-order.ts'
 import { HOLD_MS } from './hold-order.ts'
+import { leaveOrder } from './leave-order.ts'
 import { orderToken } from './order-token.ts'
 
 /** Between the processor's least, 30 minutes, and our hold of 35: the page always closes first. */
@@ -33,7 +33,10 @@ export const payPageIsOver = ({ holdExpiresAt }: Order, now: Date) =>
 export async function startPayment(deps: Deps, orderId: number): Promise<string> {
   let asked = await inTransaction(deps.db, (transaction) => prepare(deps, orderId, false, transaction))
   if ('problems' in asked) {
-    await dropOrder(deps, orderId, 'lapsed', { reason: 'no-longer-fits' })
+    // A page that is open is closed with it; a payment that was quicker counts, and waits in question.
+    const order = await Order.findByPk(orderId, { rejectOnEmpty: true })
+    const left = await leaveOrder(deps, order, 'lapsed', { reason: 'no-longer-fits' })
+    if (left.state !== 'dropped') throw new AppError('already-ordered', 409)
     throw new AppError('no-longer-fits', 409, { problems: asked.problems })
   }
   if ('payUrl' in asked) return asked.payUrl
