@@ -50,11 +50,30 @@ export const router = createBrowserRouter([
           {
             ...page(async () => (await import('./DeskLayout.tsx')).DeskLayout),
             children: [
-              { path: 'desk/orders', ...page(async () => (await import('../pages/support-desk/DeskOrdersPage.tsx')).DeskOrdersPage) },
-              { path: 'desk/orders/:orderNumber', ...page(async () => (await import('../pages/support-desk/DeskOrderPage.tsx')).DeskOrderPage) },
-              { path: 'product/wheelsets', ...page(async () => (await import('../pages/product-desk/ProductWheelsetsPage.tsx')).ProductWheelsetsPage) },
-              { path: 'product/wheelsets/:sku', ...page(async () => (await import('../pages/product-desk/ProductWheelsetPage.tsx')).ProductWheelsetPage) },
-              { path: 'product/limits', ...page(async () => (await import('../pages/product-desk/LimitsPage.tsx')).LimitsPage) },
+              {
+                path: 'desk/orders',
+                ...page(async () => (await import('../pages/support-desk/DeskOrdersPage.tsx')).DeskOrdersPage),
+              },
+              {
+                path: 'desk/orders/:orderNumber',
+                ...page(async () => (await import('../pages/support-desk/DeskOrderPage.tsx')).DeskOrderPage),
+              },
+              {
+                path: 'product/wheelsets',
+                ...page(
+                  async () => (await import('../pages/product-desk/ProductWheelsetsPage.tsx')).ProductWheelsetsPage,
+                ),
+              },
+              {
+                path: 'product/wheelsets/:sku',
+                ...page(
+                  async () => (await import('../pages/product-desk/ProductWheelsetPage.tsx')).ProductWheelsetPage,
+                ),
+              },
+              {
+                path: 'product/limits',
+                ...page(async () => (await import('../pages/product-desk/LimitsPage.tsx')).LimitsPage),
+              },
             ],
           },
           { path: '*', Component: ErrorPage },

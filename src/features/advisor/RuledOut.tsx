@@ -21,14 +21,16 @@ export function RuledOut({ advice, open = false }: { advice: Advice; open?: bool
       </summary>
       <div className="mt-4 grid gap-x-10 lg:grid-cols-2">
         {groups.map(([code, sets]) => (
-          <section key={code} className="border-t border-line py-3.5">
+          <section key={code} className={`border-t border-line py-3.5 ${many(sets) ? 'lg:col-span-2' : ''}`}>
             <h3 className="flex justify-between gap-4">
               {t([`findings.removed.${code}`, 'findings.removed.other'])}
               <span className="text-sm font-medium whitespace-nowrap text-soft">
                 {t('findings.ruledOut.wheelsets', { count: sets.length })}
               </span>
             </h3>
-            <ul className="mt-1.5 grid gap-1 text-sm">
+            <ul
+              className={`mt-1.5 grid gap-x-10 gap-y-1.5 text-sm ${many(sets) ? 'sm:grid-cols-2 lg:grid-cols-3' : ''}`}
+            >
               {byChange(sets).map((alike) => (
                 <li key={alike[0]?.sku}>
                   <Way sets={alike} totalKg={advice.systemMassKg} />
@@ -45,6 +47,9 @@ export function RuledOut({ advice, open = false }: { advice: Advice; open?: bool
 /** Nearly fitting ones first: a limit or a tyre can move, a ride or a brake rarely does. */
 const order = ['system-mass', 'pressure-not-suitable', 'tyre-too-narrow-for-rim', 'tyre-too-wide-for-rim', 'clearance']
 const weight = (code: string) => (code === 'use' || code === 'brake' ? 99 : (order.indexOf(code) + 50) % 50)
+
+/** Many ways back take the whole width. */
+const many = (sets: readonly Judged[]) => byChange(sets).length > 5
 
 const byChange = (sets: readonly Judged[]) => [
   ...gathered(sets, ({ nearestChange }) => JSON.stringify(nearestChange ?? null)).values(),
@@ -67,9 +72,12 @@ function Way({ sets, totalKg }: { sets: readonly Judged[]; totalKg: number }) {
         to: format.mass(change.to, 'down').text,
         gap: format.mass(Math.max(0, totalKg - change.to), 'up').text,
       })
-    return t([`findings.change.${change.code}`, 'findings.change.other'], {
+    const own = `findings.change.${change.field}`
+    return t([own, `findings.change.${change.code}`, 'findings.change.other'], {
       field: field(change.field).toLocaleLowerCase(),
-      to: answer(change.field, change.to),
+      to: /^(ride|brakes)$/.test(change.field)
+        ? answer(change.field, change.to).toLocaleLowerCase()
+        : answer(change.field, change.to),
     })
   }
   return (

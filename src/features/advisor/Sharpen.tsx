@@ -106,7 +106,9 @@ function Control({ field, advice, draft, setDraft }: ControlProps) {
         <Select
           {...ids}
           className={`min-h-11! py-1.5! text-[0.9375rem]! ${value === undefined ? 'text-soft!' : 'font-[650] text-own!'}`}
-          value={value === undefined || value === null ? '' : String(value)}
+          value={
+            typeof value === 'string' || typeof value === 'number' || typeof value === 'boolean' ? String(value) : ''
+          }
           onChange={(event) => {
             set(field.options.find((one) => String(one) === event.target.value))
           }}

@@ -139,7 +139,7 @@ function Drawing({ points, advised, label }: DrawingProps) {
         />
         {near && (
           <text x={x(near.depthMm)} y={watts(near.wattsLow) + 16} textAnchor="end" className="fill-within font-[650]">
-            {t('findings.tradeOff.watts')}, W
+            {t('findings.tradeOff.watts')}
           </text>
         )}
         {last && (
@@ -149,7 +149,7 @@ function Drawing({ points, advised, label }: DrawingProps) {
             textAnchor="end"
             className="fill-ink font-[650]"
           >
-            {t('findings.tradeOff.gust')}, N·m
+            {t('findings.tradeOff.gust')}
           </text>
         )}
         <path d={`M${EDGE.left} ${bottom}H${width - EDGE.right}`} stroke="var(--line-strong)" />
@@ -186,7 +186,7 @@ function Table({ points }: { points: readonly Point[] }) {
   const { t } = useTranslation('advisor')
   const { format } = useAdviceWords()
   return (
-    <div className="mt-3 overflow-x-auto" tabIndex={0} role="region" aria-label={t('findings.tradeOff.table')}>
+    <div className="mt-3 overflow-x-auto">
       <table className="w-full text-sm tabular-nums">
         <caption className="sr-only">{t('findings.tradeOff.table')}</caption>
         <thead>

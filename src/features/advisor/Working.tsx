@@ -2,6 +2,7 @@ import { useTranslation } from 'react-i18next'
 import { useId, useState, type ReactNode } from 'react'
 import { Link } from 'react-router-dom'
 import type { Reason } from '#contract/advisor.ts'
+import { Formula } from './Formula.tsx'
 import { showValue, useAdviceWords } from './words.ts'
 
 /** Reasons that share their words: front and rear are worked alike. */
@@ -73,12 +74,16 @@ function Reasoning({ kind, title, reason }: { kind: string; title: string | unde
   return (
     <div className="mt-3 border-s-2 border-strong ps-3.5 text-sm">
       {title !== undefined && <h3 className="text-sm">{title}</h3>}
-      <p className="mt-1 font-[650] break-words">{t(`working.formula.${kind}`, { defaultValue: formula })}</p>
+      <p className="mt-1 font-[650] break-words">
+        <Formula text={t(`working.formula.${kind}`, { defaultValue: formula })} />
+      </p>
       <dl className="mt-2">
         {lines.map(([name, value]) => (
           <div key={name} className="flex justify-between gap-4 border-b border-line py-0.5">
             <dt className="text-soft">{t([`working.value.${name}`, `field.${name}`, 'working.value.other'])}</dt>
-            <dd className="min-w-0 text-end font-semibold break-words">{show(name, value)}</dd>
+            <dd className="min-w-0 text-end font-semibold break-words">
+              <Formula text={show(name, value)} />
+            </dd>
           </div>
         ))}
       </dl>

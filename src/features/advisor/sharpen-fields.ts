@@ -113,7 +113,7 @@ export function readPath(draft: Draft, path: string): unknown {
 /** @param value undefined takes the answer away. A tyre needs both widths and a set-up before it counts. */
 export function writePath(draft: Draft, path: string, value: unknown, usualSetup: string): Draft {
   const [head = '', tail] = path.split('.')
-  if (tail === undefined) return { [head]: value } as Draft
+  if (tail === undefined) return { [head]: value }
   const branch = { ...((draft as Tree)[head] as Tree | null | undefined), [tail]: value }
   if (head === 'tyre') {
     branch.setup ??= usualSetup
@@ -121,7 +121,7 @@ export function writePath(draft: Draft, path: string, value: unknown, usualSetup
     branch.rearWidthMm ??= branch.frontWidthMm
     if (value === undefined && tail.endsWith('WidthMm')) return { tyre: null }
   }
-  return { [head]: branch } as Draft
+  return { [head]: branch }
 }
 
 /** What the server took where nothing was said, as far as the working shows it. */

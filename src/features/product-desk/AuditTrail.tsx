@@ -11,7 +11,9 @@ import { auditQuery } from './queries.ts'
 export function AuditTrail(subject: Pick<AuditFilters, 'subjectType' | 'subjectId'>) {
   const { t } = useTranslation(['product-desk', 'common'])
   const f = useFormat()
-  const { data, error, isPending, hasNextPage, fetchNextPage, isFetchingNextPage } = useInfiniteQuery(auditQuery(subject))
+  const { data, error, isPending, hasNextPage, fetchNextPage, isFetchingNextPage } = useInfiniteQuery(
+    auditQuery(subject),
+  )
   if (isPending) return <Waiting label={t('common:waiting')} rows={1} />
   if (error) return <ErrorNotice error={error} />
   const rows = data.pages.flatMap(({ items }) => items)
@@ -22,7 +24,9 @@ export function AuditTrail(subject: Pick<AuditFilters, 'subjectType' | 'subjectI
         {rows.map((row) => (
           <li key={row.id} className="border-b border-line py-1.5">
             <div className="flex flex-wrap justify-between gap-x-4">
-              <span className="font-[650]">{t([`audit.action.${row.action.replace('.', '-')}`, 'audit.action.other'], { action: row.action })}</span>
+              <span className="font-[650]">
+                {t([`audit.action.${row.action.replace('.', '-')}`, 'audit.action.other'], { action: row.action })}
+              </span>
               <span className="text-soft">
                 {row.actorName}, <time dateTime={row.createdAt}>{f.time(row.createdAt)}</time>
               </span>
@@ -33,7 +37,13 @@ export function AuditTrail(subject: Pick<AuditFilters, 'subjectType' | 'subjectI
         ))}
       </ol>
       {hasNextPage && (
-        <Button kind="plain" small className="no-print mt-3" busy={isFetchingNextPage} onClick={() => void fetchNextPage()}>
+        <Button
+          kind="plain"
+          small
+          className="no-print mt-3"
+          busy={isFetchingNextPage}
+          onClick={() => void fetchNextPage()}
+        >
           {t('audit.more')}
         </Button>
       )}
@@ -48,7 +58,9 @@ function Changes({ before, after }: { before: Record<string, unknown>; after: Re
     <dl className="mt-1 text-xs text-soft">
       {shown.map(([name, value]) => (
         <div key={name} className="flex gap-2">
-          <dt className="flex-none">{t([`audit.field.${name.replaceAll('.', '-')}`, 'audit.field.other'], { name })}</dt>
+          <dt className="flex-none">
+            {t([`audit.field.${name.replaceAll('.', '-')}`, 'audit.field.other'], { name })}
+          </dt>
           <dd className="min-w-0 break-words">
             {name in before && before[name] !== null && <del className="me-1.5">{asText(name, before[name])}</del>}
             <ins className="text-ink no-underline">{asText(name, value)}</ins>

@@ -33,10 +33,15 @@ export function LimitDecision({ row, change }: { row: LimitRow; change: LimitVer
         <div>
           <h3 className="text-lg!">
             {row.name}{' '}
-            <span className="whitespace-nowrap">{currentKg === null ? kg(change.limitKg) : t('limits.fromTo', { from: kg(currentKg), to: kg(change.limitKg) })}</span>
+            <span className="whitespace-nowrap">
+              {currentKg === null
+                ? kg(change.limitKg)
+                : t('limits.fromTo', { from: kg(currentKg), to: kg(change.limitKg) })}
+            </span>
           </h3>
           <p className="mt-0.5 text-xs text-soft">
-            {t('limits.draftedBy', { name: change.draftedBy ?? t('nobody'), time: f.time(change.createdAt) })} · {change.sku}
+            {t('limits.draftedBy', { name: change.draftedBy ?? t('nobody'), time: f.time(change.createdAt) })} ·{' '}
+            {change.sku}
           </p>
           <div className="mt-3">
             <LimitScale currentKg={currentKg} newKg={change.limitKg} />
@@ -44,7 +49,9 @@ export function LimitDecision({ row, change }: { row: LimitRow; change: LimitVer
           <dl className="mt-2 grid gap-1.5 text-sm">
             <Told label={t('limits.reason')}>{change.reason}</Told>
             <Told label={t('limits.proof')}>{change.proof === '' ? t('limits.noProof') : change.proof}</Told>
-            <Told label={t('limits.inForceFrom')}>{change.inForceFrom === null ? t('limits.atOnce') : f.time(change.inForceFrom)}</Told>
+            <Told label={t('limits.inForceFrom')}>
+              {change.inForceFrom === null ? t('limits.atOnce') : f.time(change.inForceFrom)}
+            </Told>
           </dl>
         </div>
         <div>

@@ -65,7 +65,10 @@ export function LimitDraftForm({ rows, sku }: { rows: readonly LimitRow[]; sku: 
         <ErrorSummary
           key={submitCount}
           title={t('errors:validation.title')}
-          problems={listed.map(({ name, message }) => ({ controlId: `field-${name}`, message: `${t(`limits.field.${name}`)}: ${inWords(t, message) ?? ''}` }))}
+          problems={listed.map(({ name, message }) => ({
+            controlId: `field-${name}`,
+            message: `${t(`limits.field.${name}`)}: ${inWords(t, message) ?? ''}`,
+          }))}
         />
       )}
       {draft.isSuccess && <Notice tone="good" title={t('limits.draftKept')} />}
@@ -84,13 +87,25 @@ export function LimitDraftForm({ rows, sku }: { rows: readonly LimitRow[]; sku: 
           )}
         </Field>
         <Field label={t('limits.field.limitKg')} {...ids('limitKg')}>
-          {(tied) => <TextInput {...tied} {...form.register('limitKg')} inputMode="decimal" autoComplete="off" className={`${tight} text-end`} />}
+          {(tied) => (
+            <TextInput
+              {...tied}
+              {...form.register('limitKg')}
+              inputMode="decimal"
+              autoComplete="off"
+              className={`${tight} text-end`}
+            />
+          )}
         </Field>
       </div>
       {current && (
         <div>
-          <p className="text-sm text-soft">{t('limits.now', { kg: f.number(current.limitKg, Number.isInteger(current.limitKg) ? 0 : 1) })}</p>
-          {typedKg !== null && typedKg >= 40 && typedKg <= 200 && <LimitScale currentKg={current.limitKg} newKg={typedKg} />}
+          <p className="text-sm text-soft">
+            {t('limits.now', { kg: f.number(current.limitKg, Number.isInteger(current.limitKg) ? 0 : 1) })}
+          </p>
+          {typedKg !== null && typedKg >= 40 && typedKg <= 200 && (
+            <LimitScale currentKg={current.limitKg} newKg={typedKg} />
+          )}
         </div>
       )}
       <Field label={t('limits.field.proof')} hint={t('limits.proofHint')} {...ids('proof')}>
@@ -100,7 +115,14 @@ export function LimitDraftForm({ rows, sku }: { rows: readonly LimitRow[]; sku: 
         {(tied) => <TextInput {...tied} {...form.register('reason')} maxLength={500} className={tight} />}
       </Field>
       <Field label={t('limits.field.inForceFrom')} hint={t('limits.inForceHint')} {...ids('inForceFrom')}>
-        {(tied) => <TextInput {...tied} {...form.register('inForceFrom')} type="datetime-local" className={`${tight} max-w-72`} />}
+        {(tied) => (
+          <TextInput
+            {...tied}
+            {...form.register('inForceFrom')}
+            type="datetime-local"
+            className={`${tight} max-w-72`}
+          />
+        )}
       </Field>
       <div>
         <Button type="submit" busy={draft.isPending}>

@@ -33,7 +33,10 @@ export function LimitImpactView({ id }: { id: number }) {
           </dl>
           <ul className="mt-2 grid gap-x-6 sm:grid-cols-2">
             {data.over.slice(0, LISTED).map(({ kind, orderNumber, overKg }, index) => (
-              <li key={`${orderNumber ?? ''}${String(index)}`} className="flex justify-between border-b border-line py-0.5">
+              <li
+                key={`${orderNumber ?? ''}${String(index)}`}
+                className="flex justify-between border-b border-line py-0.5"
+              >
                 <span>
                   {orderNumber ?? t('impact.basket')} <span className="text-soft">{t(`impact.kind.${kind}`)}</span>
                 </span>
@@ -41,7 +44,9 @@ export function LimitImpactView({ id }: { id: number }) {
               </li>
             ))}
           </ul>
-          {touched > LISTED && <p className="mt-1 text-xs text-soft">{t('impact.more', { count: touched - LISTED })}</p>}
+          {touched > LISTED && (
+            <p className="mt-1 text-xs text-soft">{t('impact.more', { count: touched - LISTED })}</p>
+          )}
           {data.deliveredOrders > 0 && <p className="mt-2">{t('impact.notice')}</p>}
         </>
       )}

@@ -12,7 +12,14 @@ export function LimitScale({ currentKg, newKg }: { currentKg: number | null; new
   return (
     <svg aria-hidden viewBox={`-2 0 ${WIDTH + 4} 34`} className="w-full max-w-90">
       <rect x="0" y="8" width={at(from)} height="6" fill="var(--line)" />
-      <rect x={at(from)} y="8" width={at(to) - at(from)} height="6" fill={lowered ? 'var(--near)' : 'var(--within)'} opacity="0.45" />
+      <rect
+        x={at(from)}
+        y="8"
+        width={at(to) - at(from)}
+        height="6"
+        fill={lowered ? 'var(--near)' : 'var(--within)'}
+        opacity="0.45"
+      />
       <path d={`M0 14H${WIDTH}`} stroke="var(--line-strong)" strokeWidth="0.7" />
       {ticks.map((kg) => (
         <g key={kg}>

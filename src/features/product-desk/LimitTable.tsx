@@ -52,7 +52,17 @@ export function LimitTable({ rows }: { rows: readonly LimitRow[] }) {
   )
 }
 
-function RowPair({ open, versions, columns, children }: { open: boolean; versions: readonly LimitVersionView[]; columns: number; children: ReactNode }) {
+function RowPair({
+  open,
+  versions,
+  columns,
+  children,
+}: {
+  open: boolean
+  versions: readonly LimitVersionView[]
+  columns: number
+  children: ReactNode
+}) {
   return (
     <>
       <Row>{children}</Row>
@@ -74,12 +84,16 @@ function VersionList({ versions }: { versions: readonly LimitVersionView[] }) {
     <ol className="grid gap-2 text-sm">
       {versions.map((one) => (
         <li key={one.id} className="grid gap-x-4 sm:grid-cols-[5rem_9rem_1fr]">
-          <span className={one.standing === 'in-force' ? 'font-bold' : one.standing === 'rejected' ? 'line-through' : ''}>
-            {f.number(one.limitKg, Number.isInteger(one.limitKg) ? 0 : 1)}{"\u00a0kg"}
+          <span
+            className={one.standing === 'in-force' ? 'font-bold' : one.standing === 'rejected' ? 'line-through' : ''}
+          >
+            {f.number(one.limitKg, Number.isInteger(one.limitKg) ? 0 : 1)}
+            {'\u00a0kg'}
           </span>
           <span className="font-[650]">{t(`limits.standing.${one.standing}`)}</span>
           <span className="min-w-0 break-words">
-            {one.reason} {one.proof !== '' && <span className="text-soft">{t('limits.proofIs', { proof: one.proof })}</span>}
+            {one.reason}{' '}
+            {one.proof !== '' && <span className="text-soft">{t('limits.proofIs', { proof: one.proof })}</span>}
             <span className="block text-xs text-soft">
               {[
                 one.inForceFrom && t('limits.from', { time: f.time(one.inForceFrom) }),

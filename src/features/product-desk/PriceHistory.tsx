@@ -17,7 +17,8 @@ export function PriceHistory({ prices }: { prices: ProductWheelset['priceHistory
                 {f.time(validFrom)}
               </th>
               <td className="py-1 text-end text-xs text-soft">
-                {before && t('prices.step', { percent: f.percent((priceCents - before.priceCents) / before.priceCents, 1) })}
+                {before &&
+                  t('prices.step', { percent: f.percent((priceCents - before.priceCents) / before.priceCents, 1) })}
               </td>
               <td className="py-1 text-end whitespace-nowrap">
                 {f.number(priceCents / 100, 2)} <span className="text-xs text-soft">{currency}</span>

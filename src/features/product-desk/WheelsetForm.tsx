@@ -32,7 +32,8 @@ export function WheelsetForm({ wheelset }: { wheelset: ProductWheelset }) {
   const { errors, submitCount } = form.formState
   const error = (name: string) => inWords(t, listErrors(errors).find((one) => one.name === name)?.message)
   const problem = save.error instanceof ApiError ? save.error.problem : null
-  const present = problem?.code === 'changed-meanwhile' ? productWheelset.safeParse(problem.data?.present).data : undefined
+  const present =
+    problem?.code === 'changed-meanwhile' ? productWheelset.safeParse(problem.data?.present).data : undefined
 
   const submit = form.handleSubmit((change) => {
     setNothing(changesNothing(change))
@@ -57,7 +58,10 @@ export function WheelsetForm({ wheelset }: { wheelset: ProductWheelset }) {
         <ErrorSummary
           key={submitCount}
           title={t('errors:validation.title')}
-          problems={listed.map((one) => ({ controlId: `field-${one.name}`, message: `${name(one.name)}: ${inWords(t, one.message) ?? ''}` }))}
+          problems={listed.map((one) => ({
+            controlId: `field-${one.name}`,
+            message: `${name(one.name)}: ${inWords(t, one.message) ?? ''}`,
+          }))}
         />
       )}
       {save.isSuccess && !form.formState.isDirty && <Notice tone="good" title={t('form.saved')} />}
@@ -83,11 +87,29 @@ export function WheelsetForm({ wheelset }: { wheelset: ProductWheelset }) {
         <legend className="mb-2 text-base font-bold">{t('form.words')}</legend>
         {locales.map((language) => (
           <div key={language} className="grid content-start gap-3" lang={language}>
-            <Field id={`field-texts.${language}.tagline`} label={name(`texts.${language}.tagline`)} error={error(`texts.${language}.tagline`)}>
-              {(ids) => <TextInput {...ids} {...form.register(`texts.${language}.tagline`)} className={tight} maxLength={200} />}
+            <Field
+              id={`field-texts.${language}.tagline`}
+              label={name(`texts.${language}.tagline`)}
+              error={error(`texts.${language}.tagline`)}
+            >
+              {(ids) => (
+                <TextInput {...ids} {...form.register(`texts.${language}.tagline`)} className={tight} maxLength={200} />
+              )}
             </Field>
-            <Field id={`field-texts.${language}.description`} label={name(`texts.${language}.description`)} error={error(`texts.${language}.description`)}>
-              {(ids) => <TextArea {...ids} {...form.register(`texts.${language}.description`)} rows={6} maxLength={4000} className={tight} />}
+            <Field
+              id={`field-texts.${language}.description`}
+              label={name(`texts.${language}.description`)}
+              error={error(`texts.${language}.description`)}
+            >
+              {(ids) => (
+                <TextArea
+                  {...ids}
+                  {...form.register(`texts.${language}.description`)}
+                  rows={6}
+                  maxLength={4000}
+                  className={tight}
+                />
+              )}
             </Field>
           </div>
         ))}
@@ -97,12 +119,39 @@ export function WheelsetForm({ wheelset }: { wheelset: ProductWheelset }) {
         <legend className="mb-2 text-base font-bold">{t('form.pricesAndStock')}</legend>
         <div className="grid grid-cols-2 gap-4 sm:grid-cols-4">
           {currencies.map((currency) => (
-            <Field key={currency} id={`field-prices.${currency}`} label={name(`prices.${currency}`)} hint={t(`form.tax.${currency}`)} error={error(`prices.${currency}`)}>
-              {(ids) => <TextInput {...ids} {...form.register(`prices.${currency}`)} inputMode="decimal" autoComplete="off" className={`${tight} text-end`} />}
+            <Field
+              key={currency}
+              id={`field-prices.${currency}`}
+              label={name(`prices.${currency}`)}
+              hint={t(`form.tax.${currency}`)}
+              error={error(`prices.${currency}`)}
+            >
+              {(ids) => (
+                <TextInput
+                  {...ids}
+                  {...form.register(`prices.${currency}`)}
+                  inputMode="decimal"
+                  autoComplete="off"
+                  className={`${tight} text-end`}
+                />
+              )}
             </Field>
           ))}
-          <Field id="field-stock.onHand" label={name('stock.onHand')} hint={t('form.reserved', { count: seen.reserved })} error={error('stock.onHand')}>
-            {(ids) => <TextInput {...ids} {...form.register('stock.onHand')} inputMode="numeric" autoComplete="off" className={`${tight} text-end`} />}
+          <Field
+            id="field-stock.onHand"
+            label={name('stock.onHand')}
+            hint={t('form.reserved', { count: seen.reserved })}
+            error={error('stock.onHand')}
+          >
+            {(ids) => (
+              <TextInput
+                {...ids}
+                {...form.register('stock.onHand')}
+                inputMode="numeric"
+                autoComplete="off"
+                className={`${tight} text-end`}
+              />
+            )}
           </Field>
         </div>
         {problem?.code === 'price-jump' && (

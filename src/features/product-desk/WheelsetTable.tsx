@@ -15,7 +15,12 @@ export function WheelsetTable({ rows }: { rows: readonly ProductRow[] }) {
     { key: 'depth', head: t('column.depth'), className: 'max-md:hidden' },
     { key: 'spokes', head: t('column.spokes'), figure: true, className: 'max-lg:hidden' },
     { key: 'limit', head: t('column.limit'), figure: true },
-    ...currencies.map((currency) => ({ key: currency, head: currency, figure: true, className: currency === 'EUR' ? '' : 'max-md:hidden' })),
+    ...currencies.map((currency) => ({
+      key: currency,
+      head: currency,
+      figure: true,
+      className: currency === 'EUR' ? '' : 'max-md:hidden',
+    })),
     { key: 'stock', head: t('column.stock'), figure: true },
     { key: 'sale', head: t('column.sale'), className: 'max-sm:hidden' },
   ]
@@ -40,8 +45,16 @@ export function WheelsetTable({ rows }: { rows: readonly ProductRow[] }) {
             {row.spokesFront} / {row.spokesRear}
           </Cell>
           <Cell figure>
-            {row.limitKg === null ? <span className="font-bold text-near">{t('limits.noneShort')}</span> : `${f.number(row.limitKg, Number.isInteger(row.limitKg) ? 0 : 1)}\u00a0kg`}
-            {row.draftedLimits > 0 && <span className="block text-xs font-bold text-near">{t('wheelsets.drafted', { count: row.draftedLimits })}</span>}
+            {row.limitKg === null ? (
+              <span className="font-bold text-near">{t('limits.noneShort')}</span>
+            ) : (
+              `${f.number(row.limitKg, Number.isInteger(row.limitKg) ? 0 : 1)}\u00a0kg`
+            )}
+            {row.draftedLimits > 0 && (
+              <span className="block text-xs font-bold text-near">
+                {t('wheelsets.drafted', { count: row.draftedLimits })}
+              </span>
+            )}
           </Cell>
           {currencies.map((currency) => (
             <Cell key={currency} figure className={currency === 'EUR' ? '' : 'max-md:hidden'}>
@@ -50,12 +63,20 @@ export function WheelsetTable({ rows }: { rows: readonly ProductRow[] }) {
           ))}
           <Cell figure>
             <span className={row.onHand - row.reserved === 0 ? 'font-bold text-near' : ''}>{f.number(row.onHand)}</span>
-            {row.reserved > 0 && <span className="block text-xs text-soft">{t('wheelsets.reserved', { count: row.reserved })}</span>}
+            {row.reserved > 0 && (
+              <span className="block text-xs text-soft">{t('wheelsets.reserved', { count: row.reserved })}</span>
+            )}
           </Cell>
           <Cell className="max-sm:hidden">
-            {row.onSale ? <span className="text-soft">{t('sale.on')}</span> : <span className="border border-ink px-1.5 text-xs font-[650]">{t('sale.off')}</span>}
+            {row.onSale ? (
+              <span className="text-soft">{t('sale.on')}</span>
+            ) : (
+              <span className="border border-ink px-1.5 text-xs font-[650]">{t('sale.off')}</span>
+            )}
             {row.missingTexts.length > 0 && (
-              <span className="block text-xs font-bold text-near">{t('wheelsets.missingTexts', { languages: row.missingTexts.join(', ').toUpperCase() })}</span>
+              <span className="block text-xs font-bold text-near">
+                {t('wheelsets.missingTexts', { languages: row.missingTexts.join(', ').toUpperCase() })}
+              </span>
             )}
           </Cell>
         </Row>

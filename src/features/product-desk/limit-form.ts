@@ -19,6 +19,10 @@ export const limitSchema = z
     if (kg === null) ctx.addIssue({ code: 'custom', path: ['limitKg'], message: 'not-number' })
     const at = inForceFrom === '' ? null : new Date(inForceFrom)
     if (at && Number.isNaN(at.getTime())) ctx.addIssue({ code: 'custom', path: ['inForceFrom'], message: 'not-valid' })
-    return { ...rest, limitKg: kg ?? 0, ...(at && !Number.isNaN(at.getTime()) ? { inForceFrom: at.toISOString() } : {}) }
+    return {
+      ...rest,
+      limitKg: kg ?? 0,
+      ...(at && !Number.isNaN(at.getTime()) ? { inForceFrom: at.toISOString() } : {}),
+    }
   })
   .pipe(limitDraft)

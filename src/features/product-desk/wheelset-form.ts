@@ -15,7 +15,12 @@ export interface WheelsetForm {
 
 export const formOf = (set: ProductWheelset): WheelsetForm => ({
   texts: set.texts,
-  prices: { EUR: '', GBP: '', USD: '', ...Object.fromEntries(Object.entries(set.prices).map(([currency, cents]) => [currency, typeMoney(cents)])) },
+  prices: {
+    EUR: '',
+    GBP: '',
+    USD: '',
+    ...Object.fromEntries(Object.entries(set.prices).map(([currency, cents]) => [currency, typeMoney(cents)])),
+  },
   stock: { onHand: String(set.onHand) },
   onSale: set.onSale,
   reason: '',
@@ -50,12 +55,16 @@ export const wheelsetSchema = (seen: ProductWheelset) =>
     })
     .transform(({ texts, prices, stock, onSale, reason, confirmJump }): z.input<typeof productChange> => {
       const changedTexts = locales.filter((language) => !same(texts[language], seen.texts[language]))
-      const changedPrices = currencies.filter((currency) => prices[currency] !== undefined && prices[currency] !== seen.prices[currency])
+      const changedPrices = currencies.filter(
+        (currency) => prices[currency] !== undefined && prices[currency] !== seen.prices[currency],
+      )
       return {
         version: seen.version,
         reason,
         ...(changedTexts.length > 0 ? { texts: Object.fromEntries(changedTexts.map((one) => [one, texts[one]])) } : {}),
-        ...(changedPrices.length > 0 ? { prices: Object.fromEntries(changedPrices.map((one) => [one, prices[one]])) } : {}),
+        ...(changedPrices.length > 0
+          ? { prices: Object.fromEntries(changedPrices.map((one) => [one, prices[one]])) }
+          : {}),
         ...(stock.onHand !== seen.onHand ? { stock: { onHand: stock.onHand, onHandSeen: seen.onHand } } : {}),
         ...(onSale !== seen.onSale ? { onSale } : {}),
         ...(confirmJump ? { confirmJump } : {}),
@@ -80,9 +89,15 @@ export function differences(typed: WheelsetForm, present: ProductWheelset): Diff
       [`texts.${language}.tagline`, typed.texts[language].tagline, now.texts[language].tagline],
       [`texts.${language}.description`, typed.texts[language].description, now.texts[language].description],
     ]),
-    ...currencies.map((currency): [string, string, string] => [`prices.${currency}`, typed.prices[currency], now.prices[currency]]),
+    ...currencies.map((currency): [string, string, string] => [
+      `prices.${currency}`,
+      typed.prices[currency],
+      now.prices[currency],
+    ]),
     ['stock.onHand', typed.stock.onHand, now.stock.onHand],
     ['onSale', String(typed.onSale), String(now.onSale)],
   ]
-  return pairs.filter(([, mine, theirs]) => mine.trim() !== theirs).map(([name, mine, theirs]) => ({ name, typed: mine, present: theirs }))
+  return pairs
+    .filter(([, mine, theirs]) => mine.trim() !== theirs)
+    .map(([name, mine, theirs]) => ({ name, typed: mine, present: theirs }))
 }

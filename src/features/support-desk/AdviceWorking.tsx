@@ -6,16 +6,22 @@ export function AdviceWorking({ reasons }: { reasons: FrozenAdvice['reasons'] })
   const { t } = useTranslation('support-desk')
   return (
     <details className="mt-3">
-      <summary className="font-[650] underline underline-offset-4">{t('working.title', { count: reasons.length })}</summary>
+      <summary className="font-[650] underline underline-offset-4">
+        {t('working.title', { count: reasons.length })}
+      </summary>
       <ul className="mt-2 grid gap-3">
         {reasons.map((reason) => (
           <li key={reason.quantity} className="border-s border-strong ps-3">
             <p className="font-bold">{reason.quantity}</p>
             {reason.formula !== null && <p className="break-words">{reason.formula}</p>}
             <p className="text-xs text-soft">
-              {[reason.label && t([`working.label.${reason.label}`, 'working.label.other']), reason.source].filter(Boolean).join(' · ')}
+              {[reason.label && t([`working.label.${reason.label}`, 'working.label.other']), reason.source]
+                .filter(Boolean)
+                .join(' · ')}
             </p>
-            {reason.uncertainty !== null && <p className="text-xs text-soft">{t('working.uncertainty', { text: reason.uncertainty })}</p>}
+            {reason.uncertainty !== null && (
+              <p className="text-xs text-soft">{t('working.uncertainty', { text: reason.uncertainty })}</p>
+            )}
             {reason.wouldChangeIf !== null && reason.wouldChangeIf !== '' && (
               <p className="text-xs text-soft">{t('working.wouldChangeIf', { text: reason.wouldChangeIf })}</p>
             )}
@@ -23,7 +29,9 @@ export function AdviceWorking({ reasons }: { reasons: FrozenAdvice['reasons'] })
               {reason.inputs === null
                 ? t('working.inputsWithheld')
                 : Object.entries(reason.inputs)
-                    .map(([name, value]) => `${name} ${typeof value === 'object' ? JSON.stringify(value) : String(value)}`)
+                    .map(
+                      ([name, value]) => `${name} ${typeof value === 'object' ? JSON.stringify(value) : String(value)}`,
+                    )
                     .join(' · ')}
             </p>
           </li>

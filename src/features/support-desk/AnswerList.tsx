@@ -34,8 +34,14 @@ export function AnswerList({ advice }: { advice: FrozenAdvice }) {
   }
   const lines: { name: string; value: string; own: boolean }[] = [
     ...advice.withheld.map((name) => ({ name, value: t('advice.withheld'), own: false })),
-    ...(advice.systemMassKg === null ? [] : [{ name: 'systemMassKg', value: f.mass(advice.systemMassKg, 'up').text, own: true }]),
-    ...flat(advice.answers).map(([name, value]) => ({ name, value: worded(name, value), own: name.startsWith('bodyMass') })),
+    ...(advice.systemMassKg === null
+      ? []
+      : [{ name: 'systemMassKg', value: f.mass(advice.systemMassKg, 'up').text, own: true }]),
+    ...flat(advice.answers).map(([name, value]) => ({
+      name,
+      value: worded(name, value),
+      own: name.startsWith('bodyMass'),
+    })),
   ]
   return (
     <dl>

@@ -58,7 +58,9 @@ function OneAdvice({ advice, onReveal }: { advice: FrozenAdvice; onReveal: () =>
           <dt className="text-xs text-soft">{t('advice.digest')}</dt>
           <dd>
             <span className="block break-all">{advice.sha256}</span>
-            <Verdict standing={advice.intact ? 'within' : 'over'}>{t(advice.intact ? 'advice.intact' : 'advice.changed')}</Verdict>
+            <Verdict standing={advice.intact ? 'within' : 'over'}>
+              {t(advice.intact ? 'advice.intact' : 'advice.changed')}
+            </Verdict>
           </dd>
         </div>
       </dl>
@@ -78,13 +80,24 @@ function OneAdvice({ advice, onReveal }: { advice: FrozenAdvice; onReveal: () =>
             <Pair
               label={t('advice.pressure')}
               values={[pressure.front, pressure.rear].map(
-                (p) => `${f.pressure(p.startBar).value} (${f.pressure(p.lowBar, 'up').value}–${f.pressure(p.highBar, 'down').text})`,
+                (p) =>
+                  `${f.pressure(p.startBar).value} (${f.pressure(p.lowBar, 'up').value}–${f.pressure(p.highBar, 'down').text})`,
               )}
             />
           )}
-          {depth && <Pair label={t('advice.depth')} values={[depth.front, depth.rear].map((d) => `${f.number(d.from)}–${f.depth(d.to).text}`)} />}
+          {depth && (
+            <Pair
+              label={t('advice.depth')}
+              values={[depth.front, depth.rear].map((d) => `${f.number(d.from)}–${f.depth(d.to).text}`)}
+            />
+          )}
           {spokes && (
-            <Pair label={t('advice.spokes')} values={[spokes.front, spokes.rear].map((s) => t('advice.spokesValue', { min: s.min, advised: s.advised }))} />
+            <Pair
+              label={t('advice.spokes')}
+              values={[spokes.front, spokes.rear].map((s) =>
+                t('advice.spokesValue', { min: s.min, advised: s.advised }),
+              )}
+            />
           )}
         </tbody>
       </table>
@@ -93,7 +106,9 @@ function OneAdvice({ advice, onReveal }: { advice: FrozenAdvice; onReveal: () =>
           <li key={sku} className="flex flex-wrap items-center justify-between gap-x-3 border-b border-line py-1">
             <span>
               {sku}
-              {limitKg !== null && <span className="text-soft"> · {t('line.limitThen', { limit: f.mass(limitKg, 'down').text })}</span>}
+              {limitKg !== null && (
+                <span className="text-soft"> · {t('line.limitThen', { limit: f.mass(limitKg, 'down').text })}</span>
+              )}
             </span>
             {verdict !== '' && (
               <Verdict standing={standings[verdict] ?? 'mismatch'}>

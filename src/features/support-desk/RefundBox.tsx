@@ -93,7 +93,12 @@ export function RefundBox({ orderNumber, buyer, lines, money }: RefundBoxProps) 
               <legend className="text-soft">{t('refund.lines')}</legend>
               {lines.map((line) => (
                 <label key={line.id} className="flex min-h-9 items-center gap-2">
-                  <input type="checkbox" value={String(line.id)} {...form.register('lines')} className="size-4 accent-ink" />
+                  <input
+                    type="checkbox"
+                    value={String(line.id)}
+                    {...form.register('lines')}
+                    className="size-4 accent-ink"
+                  />
                   <span className="flex-1">{t('refund.line', { title: line.title, quantity: line.quantity })}</span>
                   {price(line.lineCents + (money.taxIncluded ? 0 : line.taxCents))}
                 </label>
@@ -111,11 +116,21 @@ export function RefundBox({ orderNumber, buyer, lines, money }: RefundBoxProps) 
               hint={t('refund.atMost', { amount: price(left) })}
               error={inWords(t, errors.amount?.message)}
             >
-              {(ids) => <TextInput {...ids} {...form.register('amount')} inputMode="decimal" autoComplete="off" className="max-w-48 min-h-10! py-1.5!" />}
+              {(ids) => (
+                <TextInput
+                  {...ids}
+                  {...form.register('amount')}
+                  inputMode="decimal"
+                  autoComplete="off"
+                  className="max-w-48 min-h-10! py-1.5!"
+                />
+              )}
             </Field>
           )}
           <Field label={t('reason.label')} hint={t('refund.reasonHint')} error={inWords(t, errors.reason?.message)}>
-            {(ids) => <TextArea {...ids} {...form.register('reason')} rows={2} maxLength={500} className="min-h-10! py-1.5!" />}
+            {(ids) => (
+              <TextArea {...ids} {...form.register('reason')} rows={2} maxLength={500} className="min-h-10! py-1.5!" />
+            )}
           </Field>
           <div>
             <Button type="submit" small>
@@ -124,7 +139,11 @@ export function RefundBox({ orderNumber, buyer, lines, money }: RefundBoxProps) 
           </div>
         </form>
       )}
-      <Dialog open={asked !== null} onClose={() => setAsked(null)} title={t('refund.confirmTitle', { amount: price(centsOf(typed)) })}>
+      <Dialog
+        open={asked !== null}
+        onClose={() => setAsked(null)}
+        title={t('refund.confirmTitle', { amount: price(centsOf(typed)) })}
+      >
         <dl className="grid grid-cols-[auto_1fr] gap-x-4 gap-y-1 text-[0.9375rem]">
           <dt className="text-soft">{t('column.number')}</dt>
           <dd>{orderNumber}</dd>

@@ -24,13 +24,19 @@ export function linesCents(chosen: readonly string[], lines: readonly DeskLine[]
 /** Checks against what was left when the page was read; the server checks again under its lock. */
 export const refundSchema = (money: Money, lines: readonly DeskLine[]) =>
   z
-    .object({ mode: z.enum(['all', 'lines', 'amount']), lines: z.array(z.string()), amount: z.string(), reason: z.string() })
+    .object({
+      mode: z.enum(['all', 'lines', 'amount']),
+      lines: z.array(z.string()),
+      amount: z.string(),
+      reason: z.string(),
+    })
     .transform(({ mode, lines: chosen, amount, reason }, ctx): z.input<typeof refundRequest> => {
       const left = money.leftToRefundCents
       if (mode === 'all') return { amountCents: left, reason }
       if (mode === 'lines') {
         if (chosen.length === 0) ctx.addIssue({ code: 'custom', path: ['lines'], message: 'required' })
-        if (linesCents(chosen, lines, money) > left) ctx.addIssue({ code: 'custom', path: ['lines'], message: 'more-than-left' })
+        if (linesCents(chosen, lines, money) > left)
+          ctx.addIssue({ code: 'custom', path: ['lines'], message: 'more-than-left' })
         return { lines: chosen.map(Number), reason }
       }
       const amountCents = readMoney(amount)

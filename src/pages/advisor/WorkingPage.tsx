@@ -1,5 +1,6 @@
 import { useTranslation } from 'react-i18next'
 import { labels } from '#contract/advisor.ts'
+import { Formula } from '../../features/advisor/Formula.tsx'
 import { useTitle } from '../../lib/title.ts'
 import { ButtonLink } from '../../ui/Button.tsx'
 import { Sheet } from '../../ui/Sheet.tsx'
@@ -64,21 +65,27 @@ export function WorkingPage() {
                 </span>
                 {t(`working.page.${name}.title`)}
               </h2>
-              <div className="mt-2 grid max-w-[66ch] gap-3">
-                <p>{t(`working.page.${name}.text`)}</p>
+              <div
+                className={`mt-2 grid gap-x-10 gap-y-4 ${formula === null ? '' : 'xl:grid-cols-[minmax(0,1.15fr)_minmax(0,1fr)]'}`}
+              >
+                <div className="grid max-w-[66ch] content-start gap-3">
+                  <p>{t(`working.page.${name}.text`)}</p>
+                  {name === 'labels' && <Labels />}
+                  <p className="text-soft">{t(`working.page.${name}.more`)}</p>
+                </div>
                 {formula !== null && (
-                  <figure className="my-1 border-y border-strong py-3">
-                    <p className="text-lg leading-relaxed font-[650] break-words">{t(`working.formula.${formula}`)}</p>
-                    <figcaption className="mt-1.5 text-sm text-soft">
-                      {t(`working.page.${name}.symbols`)}
+                  <figure className="max-w-[66ch] self-start border border-strong">
+                    <p className="px-4 py-3.5 text-lg leading-relaxed font-[650] break-words">
+                      <Formula text={t(`working.formula.${formula}`)} />
+                    </p>
+                    <figcaption className="border-t border-line px-4 py-2 text-sm text-soft">
+                      <Formula text={t(`working.page.${name}.symbols`)} />
                       <span className="mt-1 block">
                         <span className="font-[650]">{t('working.source')}</span> {t(`working.sources.${formula}`)}
                       </span>
                     </figcaption>
                   </figure>
                 )}
-                {name === 'labels' && <Labels />}
-                <p className="text-soft">{t(`working.page.${name}.more`)}</p>
               </div>
             </section>
           ))}

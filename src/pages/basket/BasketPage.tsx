@@ -1,5 +1,7 @@
 import { useEffect } from 'react'
 import { useTranslation } from 'react-i18next'
+import { Link } from 'react-router-dom'
+import type { BasketView } from '#contract/basket.ts'
 import { marketCodes, type MarketCode } from '#contract/common.ts'
 import { BasketLineItem } from '../../features/basket/BasketLineItem.tsx'
 import { linesOf, useBasket, usePutLines } from '../../lib/basket.ts'
@@ -7,7 +9,7 @@ import { ErrorNotice } from '../../lib/ErrorNotice.tsx'
 import { usePreferences } from '../../lib/preferences.tsx'
 import { Sums } from '../../lib/Sums.tsx'
 import { useTitle } from '../../lib/title.ts'
-import { ButtonLink } from '../../ui/Button.tsx'
+import { Button, ButtonLink } from '../../ui/Button.tsx'
 import { Field, Select } from '../../ui/Field.tsx'
 import { Notice } from '../../ui/Notice.tsx'
 import { Sheet } from '../../ui/Sheet.tsx'
@@ -55,6 +57,25 @@ export function BasketPage() {
       <div className="px-5 pt-8 md:px-9">
         <h1>{t('title')}</h1>
         {put.error && <ErrorNotice error={put.error} className="mt-4" />}
+        {data.heldOrder && <HeldOrder {...data.heldOrder} />}
+        {data.problems.length > 0 && (
+          <Notice tone="caution" title={t('remains.title')} className="mt-4">
+            {data.problems.map(({ code, path }) => (
+              <p key={code + path}>{t([`problem.${code}`, 'problem.other'])}</p>
+            ))}
+            <Button
+              kind="plain"
+              small
+              busy={busy}
+              className="mt-2.5"
+              onClick={() => {
+                mutate(lines)
+              }}
+            >
+              {t('remains.take')}
+            </Button>
+          </Notice>
+        )}
       </div>
       <div className="grid lg:grid-cols-[minmax(0,1fr)_22rem]">
         <ul className="px-5 pb-6 md:px-9" aria-busy={busy}>
@@ -115,5 +136,19 @@ export function BasketPage() {
         </aside>
       </div>
     </Sheet>
+  )
+}
+
+/** The unpaid order that this basket became: its wheels are held, and it can still be paid or left. */
+function HeldOrder({ orderNumber, orderUrl }: NonNullable<BasketView['heldOrder']>) {
+  const { t } = useTranslation('basket')
+  const { pathname, search } = new URL(orderUrl)
+  return (
+    <Notice title={t('held.title', { number: orderNumber })} className="mt-4">
+      <p>{t('held.text')}</p>
+      <Link to={pathname + search} className="quiet-link">
+        {t('held.open')}
+      </Link>
+    </Notice>
   )
 }

@@ -14,7 +14,7 @@ import {
   type FilterName,
   type Sort,
 } from '../../features/catalogue/filters.ts'
-import { wheelsetsQuery } from '../../features/catalogue/queries.ts'
+import { wheelsetsQuery } from '../../lib/wheelsets.ts'
 import { SideBySideTray } from '../../features/catalogue/SideBySideTray.tsx'
 import { WheelsetCard } from '../../features/catalogue/WheelsetCard.tsx'
 import { ErrorNotice } from '../../lib/ErrorNotice.tsx'

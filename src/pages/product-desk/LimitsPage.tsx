@@ -19,7 +19,9 @@ export function LimitsPage() {
   if (isPending) return <Waiting label={t('common:waiting')} rows={8} />
   if (error) return <ErrorNotice error={error} onRetry={() => void refetch()} />
   const waiting = data.items.flatMap((row) =>
-    row.versions.filter(({ standing }) => standing === 'drafted' || standing === 'seconded').map((change) => ({ row, change })),
+    row.versions
+      .filter(({ standing }) => standing === 'drafted' || standing === 'seconded')
+      .map((change) => ({ row, change })),
   )
   return (
     <>

@@ -41,9 +41,15 @@ export function ProductWheelsetPage() {
               items={[
                 {
                   label: t('limits.title'),
-                  value: data.limitKg === null ? t('limits.noneShort') : `${f.number(data.limitKg, Number.isInteger(data.limitKg) ? 0 : 1)}\u00a0kg`,
+                  value:
+                    data.limitKg === null
+                      ? t('limits.noneShort')
+                      : `${f.number(data.limitKg, Number.isInteger(data.limitKg) ? 0 : 1)}\u00a0kg`,
                 },
-                { label: t('limits.since'), value: data.limitInForceFrom === null ? '–' : f.date(data.limitInForceFrom) },
+                {
+                  label: t('limits.since'),
+                  value: data.limitInForceFrom === null ? '–' : f.date(data.limitInForceFrom),
+                },
                 { label: t('field.version'), value: f.number(data.version) },
               ]}
             />

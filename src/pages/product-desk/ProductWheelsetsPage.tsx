@@ -35,15 +35,24 @@ export function ProductWheelsetsPage() {
   const q = params.get('q') ?? ''
   const show = params.get('show') ?? 'all'
   const change = (next: { q: string; show: string }) => {
-    setParams({ ...(next.q ? { q: next.q } : {}), ...(next.show !== 'all' ? { show: next.show } : {}) }, { replace: true })
+    setParams(
+      { ...(next.q ? { q: next.q } : {}), ...(next.show !== 'all' ? { show: next.show } : {}) },
+      { replace: true },
+    )
   }
   if (isPending) return <Waiting label={t('common:waiting')} rows={8} />
   if (error) return <ErrorNotice error={error} onRetry={() => void refetch()} />
-  const rows = data.items.filter((row) => (filters[show] ?? filters.all)?.(row) && plain(`${row.name} ${row.sku}`).includes(plain(q)))
+  const rows = data.items.filter(
+    (row) => (filters[show] ?? filters.all)?.(row) && plain(`${row.name} ${row.sku}`).includes(plain(q)),
+  )
   return (
     <>
       <h1 className="mb-4 text-2xl!">{t('wheelsets.title')}</h1>
-      <form role="search" className="no-print flex flex-wrap items-end gap-3" onSubmit={(event) => event.preventDefault()}>
+      <form
+        role="search"
+        className="no-print flex flex-wrap items-end gap-3"
+        onSubmit={(event) => event.preventDefault()}
+      >
         <label className="min-w-0 flex-1 basis-72 text-sm font-[650]">
           {t('wheelsets.search')}
           <TextInput
@@ -63,7 +72,11 @@ export function ProductWheelsetsPage() {
         </label>
         <label className="text-sm font-[650]">
           {t('wheelsets.show')}
-          <Select value={show} className="mt-1 min-h-10! py-1.5!" onChange={(event) => change({ q, show: event.target.value })}>
+          <Select
+            value={show}
+            className="mt-1 min-h-10! py-1.5!"
+            onChange={(event) => change({ q, show: event.target.value })}
+          >
             {Object.keys(filters).map((key) => (
               <option key={key} value={key}>
                 {t(`wheelsets.filter.${key}`)}

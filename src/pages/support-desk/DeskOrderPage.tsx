@@ -78,11 +78,14 @@ function Head({ order }: { order: DeskOrder }) {
         <h1 className="text-2xl!">{order.orderNumber}</h1>
         <OrderStateMark state={order.state} />
         <p className="ms-auto text-sm text-soft">
-          {t(order.placedAt === null ? 'orders.started' : 'orders.placed', { time: f.time(order.placedAt ?? order.createdAt) })}
+          {t(order.placedAt === null ? 'orders.started' : 'orders.placed', {
+            time: f.time(order.placedAt ?? order.createdAt),
+          })}
         </p>
       </div>
       <p className="text-[0.9375rem]">
-        <span className="font-[650]">{order.name}</span> · <a href={`mailto:${order.email}`}>{order.email}</a> · {t(`language.${order.locale}`)}
+        <span className="font-[650]">{order.name}</span> · <a href={`mailto:${order.email}`}>{order.email}</a> ·{' '}
+        {t(`language.${order.locale}`)}
       </p>
     </div>
   )
@@ -92,9 +95,11 @@ function Delivery({ order }: { order: DeskOrder }) {
   const { name, line1, line2, postcode, city, region, country, phone } = order.delivery
   return (
     <address className="grid not-italic">
-      {[name, line1, line2, `${postcode} ${city}`, [region, country].filter(Boolean).join(', '), phone].filter(Boolean).map((line) => (
-        <span key={line}>{line}</span>
-      ))}
+      {[name, line1, line2, `${postcode} ${city}`, [region, country].filter(Boolean).join(', '), phone]
+        .filter(Boolean)
+        .map((line) => (
+          <span key={line}>{line}</span>
+        ))}
     </address>
   )
 }

@@ -27,7 +27,8 @@ export function DeskOrdersPage() {
     },
     [setParams],
   )
-  const { data, error, isPending, isPlaceholderData, hasNextPage, fetchNextPage, isFetchingNextPage, refetch } = useInfiniteQuery(ordersQuery(search))
+  const { data, error, isPending, isPlaceholderData, hasNextPage, fetchNextPage, isFetchingNextPage, refetch } =
+    useInfiniteQuery(ordersQuery(search))
   const orders = data?.pages.flatMap(({ items }) => items) ?? []
   return (
     <>
@@ -60,7 +61,13 @@ export function DeskOrdersPage() {
         </div>
       )}
       {hasNextPage && (
-        <Button kind="plain" small className="no-print mt-4" busy={isFetchingNextPage} onClick={() => void fetchNextPage()}>
+        <Button
+          kind="plain"
+          small
+          className="no-print mt-4"
+          busy={isFetchingNextPage}
+          onClick={() => void fetchNextPage()}
+        >
           {t('orders.more')}
         </Button>
       )}
