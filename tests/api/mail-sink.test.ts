@@ -105,21 +105,19 @@ describe('its memory', () => {
 
   it('outlasts a restart and a line cut off by a crash', async () => {
     const file = path.join(folder, 'mails.jsonl')
-    const before = sinkAt(file)
-    await send({ subject: 'Before' }, await before.start())
-    await before.stop()
+    const run = async (work: (at: typeof ports) => Promise<void>) => {
+      const one = sinkAt(file)
+      await work(await one.start())
+      await one.stop()
+    }
+    await run((at) => send({ subject: 'Before' }, at))
     const line = await readFile(file, 'utf8')
-    await writeFile(file, `${line}${line.slice(0, 20)}\n`)
-
-    const after = sinkAt(file)
-    const at = await after.start()
-    try {
-      await send({ subject: 'After' }, at)
+    await writeFile(file, `${line}${line.slice(0, 20)}`)
+    await run((at) => send({ subject: 'After' }, at))
+    await run(async (at) => {
       const mails = await kept('/api/mails', at)
       expect(mails.map(({ subject }) => subject)).toEqual(['Before', 'After'])
       expect(new Set(mails.map(({ id }) => id)).size).toBe(2)
-    } finally {
-      await after.stop()
-    }
+    })
   })
 })

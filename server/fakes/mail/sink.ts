@@ -71,10 +71,12 @@ export function createMailSink(options: MailSinkOptions) {
   }
 }
 
-/** A line cut off by a crash is left out; the mails before it stay. */
+/** A line cut off by a crash is left out and closed, so that the next mail begins on its own; the mails before it stay. */
 function read(file: string | null): KeptMail[] {
   if (file === null || !existsSync(file)) return []
-  return readFileSync(file, 'utf8').split('\n').flatMap(line)
+  const lines = readFileSync(file, 'utf8').split('\n')
+  if (lines.at(-1) !== '') appendFileSync(file, '\n')
+  return lines.flatMap(line)
 }
 
 function line(text: string): KeptMail[] {
