@@ -23,5 +23,10 @@ const settings = z
         context.addIssue({ code: 'custom', path: [name], message: 'needed by the stand-in for payments' })
   })
 
-/** @throws ZodError for settings that cannot be used */
-export const readFakesConfig = (env: Record<string, string | undefined>) => settings.parse(env)
+/** @throws Error naming each setting that cannot be used, never its value */
+export function readFakesConfig(env: Record<string, string | undefined>) {
+  const read = settings.safeParse(env)
+  if (read.success) return read.data
+  const faults = read.error.issues.map(({ path, message }) => `  ${path.join('.')}: ${message}`)
+  throw new Error(`Settings that cannot be used:\n${faults.join('\n')}`)
+}

@@ -4,7 +4,16 @@ import { readFakesConfig } from './config.ts'
 import { createMailSink } from './mail/sink.ts'
 import { createStripeFake } from './stripe/server.ts'
 
-const config = readFakesConfig(process.env)
+function settings() {
+  try {
+    return readFakesConfig(process.env)
+  } catch (error) {
+    console.error(error instanceof Error ? error.message : String(error))
+    process.exit(1)
+  }
+}
+
+const config = settings()
 const { HOST: host, DATA_DIR, PAYMENTS, STRIPE_FAKE_PORT, MAIL_SINK_PORT, SMTP_PORT } = config
 
 const running = [

@@ -26,7 +26,7 @@ const ROWS = `
     fr.depth_mm AS depthFrontMm, rr.depth_mm AS depthRearMm, f.spoke_count AS spokesFront, r.spoke_count AS spokesRear,
     l.limit_kg AS limitKg, l.proof AS limitProof, l.in_force_from AS limitInForceFrom,
     (SELECT COUNT(*) FROM limit_versions d WHERE d.wheelset_id = w.id AND d.state = 'drafted') AS draftedLimits,
-    st.on_hand AS onHand, st.reserved
+    COALESCE(st.on_hand, 0) AS onHand, COALESCE(st.reserved, 0) AS reserved
   FROM wheelsets w
   JOIN wheelset_wheels f ON f.wheelset_id = w.id AND f.position = 'front'
   JOIN rims fr ON fr.id = f.rim_id
@@ -71,9 +71,6 @@ function rowView({ row, prices, texts, now }: Read): ProductRow {
   return {
     ...row,
     onSale: Boolean(row.onSale),
-    draftedLimits: Number(row.draftedLimits),
-    onHand: row.onHand ?? 0,
-    reserved: row.reserved ?? 0,
     prices: pricesNow(prices, now),
     missingTexts: locales.filter(
       (language) => !texts.some(({ locale, description }) => locale === language && description !== ''),

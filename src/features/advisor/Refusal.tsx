@@ -1,6 +1,6 @@
 import { useTranslation } from 'react-i18next'
 import type { Advice, Note } from '#contract/advisor.ts'
-import { ButtonLink } from '../../ui/Button.tsx'
+import { Button } from '../../ui/Button.tsx'
 import { SumTable } from './SumTable.tsx'
 import { useAdviceWords } from './words.ts'
 
@@ -11,7 +11,7 @@ export const decidingNote = (advice: Advice): Note | undefined =>
 const inScope = (advice: Advice) => advice.outcome !== 'out-of-scope'
 
 /** A refusal shows the sum and a way on; an answer out of scope hints at no number at all. */
-export function Refusal({ advice, banded, toFitting }: { advice: Advice; banded: boolean; toFitting: string }) {
+export function Refusal({ advice, banded }: { advice: Advice; banded: boolean }) {
   const { t } = useTranslation('advisor')
   const { format } = useAdviceWords()
   const note = decidingNote(advice)
@@ -44,7 +44,15 @@ export function Refusal({ advice, banded, toFitting }: { advice: Advice; banded:
         <h2 className="mt-6">{t('refusal.askTitle')}</h2>
         <p className="mt-1 max-w-[60ch]">{say('ask')}</p>
         <div className="mt-6 flex flex-wrap gap-3 print:hidden">
-          <ButtonLink to={toFitting}>{t('refusal.again')}</ButtonLink>
+          <Button
+            onClick={() => {
+              const answers = document.getElementById('sharpen')
+              answers?.scrollIntoView({ block: 'start' })
+              answers?.focus({ preventScroll: true })
+            }}
+          >
+            {t('refusal.again')}
+          </Button>
         </div>
       </div>
       {inScope(advice) && (

@@ -9,9 +9,15 @@ export function ResultStrip({ advice, busy }: { advice: Advice; busy: boolean })
   const { format, start, verdict } = useAdviceWords()
   const { systemMassKg, pressure, rimDepthMm, spokes, wheelsets, outcome } = advice
   const first = wheelsets.find(({ rank }) => rank === 1)
-  const refused = outcome === 'refuse' || outcome === 'out-of-scope'
+  const outside = outcome === 'out-of-scope'
+  const refused = outcome === 'refuse' || outside
+  const none = outside ? ('mismatch' as const) : ('over' as const)
+  const noneWord = t(outside ? 'findings.strip.outside' : 'findings.strip.refused')
+  // Out of scope no number is given that might be taken for advice.
   const items = [
-    { label: t('findings.strip.total'), value: format.mass(systemMassKg, 'up').text, own: true, always: true },
+    ...(outside
+      ? []
+      : [{ label: t('findings.strip.total'), value: format.mass(systemMassKg, 'up').text, own: true, always: true }]),
     ...(pressure && !refused
       ? [
           {
@@ -44,16 +50,14 @@ export function ResultStrip({ advice, busy }: { advice: Advice; busy: boolean })
           {first ? (
             <Verdict standing={standings[first.verdict]}>{verdict(first)}</Verdict>
           ) : (
-            <Verdict standing="over">{t('findings.strip.refused')}</Verdict>
+            <Verdict standing={none}>{noneWord}</Verdict>
           )}
         </dd>
       </div>
       <div className="sm:hidden">
         <dt className="sr-only">{first?.name ?? t('findings.strip.none')}</dt>
         <dd>
-          <Verdict standing={first ? standings[first.verdict] : 'over'}>
-            {first ? verdict(first) : t('findings.strip.refused')}
-          </Verdict>
+          <Verdict standing={first ? standings[first.verdict] : none}>{first ? verdict(first) : noneWord}</Verdict>
         </dd>
       </div>
     </dl>

@@ -28,7 +28,7 @@ export function Sharpen({ advice, draft, setDraft, mass, setMass, summary }: Sha
   return (
     <section className="border-t border-ink print:hidden" aria-labelledby="sharpen">
       <div className="px-5 pt-7 pb-5 md:px-9">
-        <h2 id="sharpen" className="text-2xl!">
+        <h2 id="sharpen" tabIndex={-1} className="text-2xl!">
           {t('findings.sharpen.title')}
         </h2>
         <p className="mt-1 max-w-[64ch] text-soft">{t('findings.sharpen.text')}</p>

@@ -1,5 +1,5 @@
 import { zodResolver } from '@hookform/resolvers/zod'
-import { useRef } from 'react'
+import { useState } from 'react'
 import { useForm, useWatch } from 'react-hook-form'
 import { useTranslation } from 'react-i18next'
 import type { LimitDraft, LimitRow } from '#contract/product-desk.ts'
@@ -17,7 +17,7 @@ import { LimitScale } from './LimitScale.tsx'
 import { useDraftLimit } from './queries.ts'
 
 const tight = 'min-h-10! py-1.5!'
-const fields = ['sku', 'limitKg', 'proof', 'reason', 'inForceFrom'] as const
+type FieldName = 'sku' | 'limitKg' | 'proof' | 'reason' | 'inForceFrom'
 
 /** Drafting a limit change. It counts only once somebody else has seconded it. */
 export function LimitDraftForm({ rows, sku }: { rows: readonly LimitRow[]; sku: string }) {
@@ -32,18 +32,19 @@ export function LimitDraftForm({ rows, sku }: { rows: readonly LimitRow[]; sku: 
   })
   const typed = useWatch({ control: form.control })
   // One key for one draft: sending it again after a lost reply makes no second one.
-  const key = useRef('')
+  const [key, setKey] = useState('')
   const { errors, submitCount } = form.formState
   const listed = listErrors(errors)
   const current = rows.find((row) => row.sku === typed.sku)?.current ?? null
   const typedKg = parseNumber(typed.limitKg ?? '')
-  const ids = (name: (typeof fields)[number]) => ({ id: `field-${name}`, error: inWords(t, errors[name]?.message) })
+  const ids = (name: FieldName) => ({ id: `field-${name}`, error: inWords(t, errors[name]?.message) })
   const refused = draft.error instanceof ApiError && (draft.error.problem.errors ?? []).length > 0
 
   const submit = form.handleSubmit((request) => {
-    if (key.current === '') key.current = crypto.randomUUID()
+    const idempotencyKey = key === '' ? crypto.randomUUID() : key
+    setKey(idempotencyKey)
     draft.mutate(
-      { draft: request, idempotencyKey: key.current },
+      { draft: request, idempotencyKey },
       {
         onSuccess: () => {
           form.reset({ ...empty, sku: request.sku })
@@ -53,7 +54,7 @@ export function LimitDraftForm({ rows, sku }: { rows: readonly LimitRow[]; sku: 
         },
         onSettled: (_data, error) => {
           // Without any answer the draft may have been made: the same key then finds it.
-          if (!(error instanceof ApiError) || error.problem.status !== 0) key.current = ''
+          if (!(error instanceof ApiError) || error.problem.status !== 0) setKey('')
         },
       },
     )

@@ -1,7 +1,7 @@
 import { useState, type ReactNode } from 'react'
 import { useTranslation } from 'react-i18next'
 import type { LimitRow, LimitVersionView } from '#contract/product-desk.ts'
-import { useFormat } from '../../lib/format.ts'
+import { useFormat, type Format } from '../../lib/format.ts'
 import { Cell, DataTable, Row } from '../../ui/DataTable.tsx'
 
 /** Every wheelset's limit in force; a row opens to all its dated versions. */
@@ -9,7 +9,7 @@ export function LimitTable({ rows }: { rows: readonly LimitRow[] }) {
   const { t } = useTranslation('product-desk')
   const f = useFormat()
   const [open, setOpen] = useState<string | null>(null)
-  const kg = (value: number) => `${f.number(value, Number.isInteger(value) ? 0 : 1)}\u00a0kg`
+  const kg = (value: number) => kgText(f, value)
   const columns = [
     { key: 'wheelset', head: t('column.wheelset') },
     { key: 'limit', head: t('column.limit'), figure: true },
@@ -77,6 +77,9 @@ function RowPair({
   )
 }
 
+/** Limits are kept and seconded in kilograms, whatever units the reader prefers. */
+const kgText = (f: Format, value: number) => `${f.number(value, Number.isInteger(value) ? 0 : 1)}\u00a0kg`
+
 function VersionList({ versions }: { versions: readonly LimitVersionView[] }) {
   const { t } = useTranslation('product-desk')
   const f = useFormat()
@@ -87,8 +90,7 @@ function VersionList({ versions }: { versions: readonly LimitVersionView[] }) {
           <span
             className={one.standing === 'in-force' ? 'font-bold' : one.standing === 'rejected' ? 'line-through' : ''}
           >
-            {f.number(one.limitKg, Number.isInteger(one.limitKg) ? 0 : 1)}
-            {'\u00a0kg'}
+            {kgText(f, one.limitKg)}
           </span>
           <span className="font-[650]">{t(`limits.standing.${one.standing}`)}</span>
           <span className="min-w-0 break-words">

@@ -29,9 +29,7 @@ export function AdviceWorking({ reasons }: { reasons: FrozenAdvice['reasons'] })
               {reason.inputs === null
                 ? t('working.inputsWithheld')
                 : Object.entries(reason.inputs)
-                    .map(
-                      ([name, value]) => `${name} ${typeof value === 'object' ? JSON.stringify(value) : String(value)}`,
-                    )
+                    .map(([name, value]) => `${name} ${typeof value === 'string' ? value : JSON.stringify(value)}`)
                     .join(' · ')}
             </p>
           </li>

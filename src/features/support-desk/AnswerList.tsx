@@ -29,7 +29,7 @@ export function AnswerList({ advice }: { advice: FrozenAdvice }) {
     if (value === null) return t('answer.unknown')
     if (typeof value === 'boolean') return t(value ? 'answer.yes' : 'answer.no')
     if (typeof value === 'number') return withUnit(name, value, f)
-    const text = String(value)
+    const text = typeof value === 'string' ? value : JSON.stringify(value)
     return t([`answerValue.${name.split('.').at(-1) ?? name}.${text}`, `part.${text}`, 'part.asGiven'], { value: text })
   }
   const lines: { name: string; value: string; own: boolean }[] = [

@@ -1,5 +1,5 @@
 import { zodResolver } from '@hookform/resolvers/zod'
-import { useRef, useState } from 'react'
+import { useState } from 'react'
 import { useForm, useWatch } from 'react-hook-form'
 import { useTranslation } from 'react-i18next'
 import type { DeskLine, DeskMoney, RefundRequest } from '#contract/support-desk.ts'
@@ -33,7 +33,7 @@ export function RefundBox({ orderNumber, buyer, lines, money }: RefundBoxProps) 
   })
   const [asked, setAsked] = useState<RefundRequest | null>(null)
   // One key for one decision: a second click or a repeat after a lost reply is the same refund.
-  const key = useRef('')
+  const [key, setKey] = useState('')
   const typed = useWatch({ control: form.control })
   const { errors } = form.formState
   const left = money.leftToRefundCents
@@ -47,7 +47,7 @@ export function RefundBox({ orderNumber, buyer, lines, money }: RefundBoxProps) 
   const pay = () => {
     if (!asked) return
     refund.mutate(
-      { request: asked, idempotencyKey: key.current },
+      { request: asked, idempotencyKey: key },
       {
         onSuccess: () => {
           form.reset(emptyRefund)
@@ -72,7 +72,7 @@ export function RefundBox({ orderNumber, buyer, lines, money }: RefundBoxProps) 
           noValidate
           className="grid gap-3"
           onSubmit={form.handleSubmit((request) => {
-            key.current = crypto.randomUUID()
+            setKey(crypto.randomUUID())
             refund.reset()
             setAsked(request)
           })}

@@ -79,7 +79,7 @@ export function FindingsPage() {
       </p>
       {error && <ErrorNotice error={error} onRetry={() => void refetch()} className="m-5 md:m-9" />}
       <div className={busy ? 'opacity-70 transition-opacity motion-reduce:transition-none' : 'transition-opacity'}>
-        <Result advice={data} answers={worked} headline={headline} toFitting={toFitting} />
+        <Result advice={data} answers={worked} headline={headline} />
       </div>
       {data.outcome !== 'out-of-scope' || mass !== null ? (
         <Sharpen
@@ -99,10 +99,9 @@ interface ResultProps {
   advice: Advice
   answers: RiderAnswers
   headline: string
-  toFitting: (step: string) => string
 }
 
-function Result({ advice, answers, headline, toFitting }: ResultProps) {
+function Result({ advice, answers, headline }: ResultProps) {
   const { t } = useTranslation('advisor')
   const first = advice.wheelsets.find(({ rank }) => rank === 1)
   const refused = advice.outcome === 'refuse' || advice.outcome === 'out-of-scope'
@@ -112,7 +111,7 @@ function Result({ advice, answers, headline, toFitting }: ResultProps) {
         <h1 className="max-w-[24ch]">{headline}</h1>
         <Lede answers={answers} figures={false} />
         <div className="mt-6 border-t border-ink pt-6">
-          <Refusal advice={advice} banded={answers.bodyMassBandKg !== undefined} toFitting={toFitting('ride')} />
+          <Refusal advice={advice} banded={answers.bodyMassBandKg !== undefined} />
         </div>
         {advice.outcome === 'refuse' && (
           <div className="mt-9 grid gap-9">
