@@ -74,5 +74,5 @@ function Changes({ before, after }: { before: Record<string, unknown>; after: Re
 /** Prices are kept in minor units. */
 function asText(name: string, value: unknown): string {
   if (/^prices\.|Cents$/.test(name) && typeof value === 'number') return (value / 100).toFixed(2)
-  return typeof value === 'string' ? value : (JSON.stringify(value) ?? '')
+  return typeof value === 'string' ? value : JSON.stringify(value)
 }
