@@ -50,8 +50,18 @@ export function readPreferences(): Preferences {
     Object.entries(inAddress).flatMap(([short, name]) => (address.has(short) ? [[name, address.get(short)]] : [])),
   )
   const base = fromBrowser()
-  const partial = { ...valid(kept), ...valid(asked) }
-  return { ...base, ...partial }
+  const read = { ...base, ...valid(kept), ...valid(asked) }
+  // What a link asked for stays for the pages that follow, the way back from the payment page among them.
+  if (Object.keys(asked).length > 0) keep(read)
+  return read
+}
+
+function keep(preferences: Preferences) {
+  try {
+    localStorage.setItem(KEY, JSON.stringify(preferences))
+  } catch {
+    // Not kept; it still holds for this page.
+  }
 }
 
 function valid(values: unknown): Partial<Preferences> {
@@ -83,11 +93,7 @@ export function PreferencesProvider({ initial, children }: { initial: Preference
   const set = useCallback((change: Partial<Preferences>) => {
     setPreferences((before) => {
       const after = { ...before, ...change }
-      try {
-        localStorage.setItem(KEY, JSON.stringify(after))
-      } catch {
-        // Not kept; it still holds for this visit.
-      }
+      keep(after)
       return after
     })
     if (change.theme) applyTheme(change.theme)

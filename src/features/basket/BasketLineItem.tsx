@@ -101,7 +101,7 @@ export function BasketLineItem({ line, currency, busy, onChange, onRemove }: Pro
       <div className="flex items-start justify-between gap-4 md:flex-col md:items-end">
         <p className="figure text-2xl">{format.money(line.lineCents, currency)}</p>
         <div className="flex items-end gap-2">
-          <label className="block text-sm text-soft">
+          <label className="grid gap-1 text-sm text-soft">
             {t('quantity')}
             <Select
               className="w-20!"
