@@ -141,7 +141,10 @@ export default tseslint.config(
   { files: ['server/**/*.ts'], rules: imports(['(^|/)src/', 'The server builds without the client.']) },
   {
     files: ['server/core/**/*.ts'],
-    rules: imports(['^(?!\\./|\\.\\./(?!\\.\\.|\\w+/)|#core/|zod$)', 'The sums import only sums, and zod to check their tables.']),
+    rules: imports([
+      '^(?!\\./|\\.\\./(?!\\.\\.|\\w+/)|#core/|zod$)',
+      'The sums import only sums, and zod to check their tables.',
+    ]),
   },
   {
     files: ['server/contract/**/*.ts'],
