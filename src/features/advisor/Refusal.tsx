@@ -4,9 +4,11 @@ import { Button } from '../../ui/Button.tsx'
 import { SumTable } from './SumTable.tsx'
 import { useAdviceWords } from './words.ts'
 
-/** The note that decides, the heaviest first: a pairing that does not hold comes before any limit. */
-export const decidingNote = (advice: Advice): Note | undefined =>
-  advice.notes.find(({ severity }) => severity === 'stop')
+/** The note that decides: a total over every limit first, since no other tyre or rim would help it. */
+export function decidingNote(advice: Advice): Note | undefined {
+  const stops = advice.notes.filter(({ severity }) => severity === 'stop')
+  return stops.find(({ code }) => code === 'over-every-limit') ?? stops[0]
+}
 
 const inScope = (advice: Advice) => advice.outcome !== 'out-of-scope'
 

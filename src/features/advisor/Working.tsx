@@ -31,13 +31,13 @@ export function WithWorking({ label, name, reasons, children }: WithWorkingProps
             type="button"
             aria-expanded={open}
             aria-controls={id}
+            aria-label={`${t(open ? 'working.hide' : 'working.show')}: ${name}`}
             className="quiet-link -my-2 py-2 text-sm print:hidden"
             onClick={() => {
               setOpen(!open)
             }}
           >
             {t(open ? 'working.hide' : 'working.show')}
-            <span className="sr-only"> {name}</span>
           </button>
         )}
       </div>
