@@ -85,9 +85,13 @@ const LITTLE = 1e-9
 
 describe('relations that hold for every rider (personas.json R1-R10, DERIVED or consensus there)', () => {
   const property = (title: string, check: (rider: AnyRider) => void, runs = 150) => {
-    it(title, () => {
-      fc.assert(fc.property(anyRider, check), { numRuns: runs })
-    })
+    it(
+      title,
+      () => {
+        fc.assert(fc.property(anyRider, check), { numRuns: runs })
+      },
+      60_000,
+    )
   }
 
   for (const field of ['bodyMassKg', 'kitMassKg', 'bikeMassKg', 'luggageKg'] as const) {
