@@ -13,6 +13,7 @@ export default defineConfig({
           name: 'core',
           environment: 'node',
           include: ['tests/core/**/*.test.ts', 'tests/*.test.ts'],
+          testTimeout: 30_000,
         },
       },
       {
@@ -55,7 +56,8 @@ export default defineConfig({
           // one shop for all files, so one file at a time
           sequence: { groupOrder: 2 },
           maxWorkers: 1,
-          testTimeout: 120_000,
+          // the whole path takes a minute on a quiet machine
+          testTimeout: 300_000,
           hookTimeout: 120_000,
         },
       },
