@@ -42,7 +42,7 @@ export const loadReason = (f: Filled, loads: Loads, frontShare: number): Reason 
   constants: { g: 9.80665 },
   source:
     f.frontLoadShare === null
-      ? 'Static split by position, midpoints of reported figures (tyres reference 3.3)'
+      ? 'Static split by position: midpoints of reported scale and force-plate figures, with the dummy of TBIS 4210-3'
       : 'Measured on scales by the rider',
   label: f.frontLoadShare === null ? 'derived' : 'read',
   uncertainty: f.frontLoadShare === null ? '±3 points' : '±1 point',
@@ -175,7 +175,7 @@ export const brakeHeatReason = (totalKg: number, gradient: number): Reason => ({
   formula: 'T = T_air + f·P_b/((21·√v + h_rad)·A), P_b = (m·g·sin θ − C_rr·m·g·cos θ − ½ρCdA·v²)·v, at v = v_free/√5',
   inputs: { systemMassKg: totalKg, gradient },
   constants: { airC: 20, frontShareCarbon: 0.7, frontShareAlloy: 0.6 },
-  source: 'Lumped rim of our own (aero reference 2.6, 3.9); no measured road temperature was found in print',
+  source: 'A lumped rim of our own, cooled like a flat plate; no measured road temperature was found in print',
   label: 'derived',
   uncertainty: '±30 %',
   wouldChangeIf: ['bodyMassKg', 'terrain', 'brakes', 'luggageKg'],
