@@ -86,7 +86,7 @@ export interface Filled {
 
 export const offRoad = (ride: string) =>
   ['cyclocross', 'gravel', 'bikepacking', 'cross-country', 'trail'].includes(ride)
-const mountainRide = (ride: string) => ride === 'cross-country' || ride === 'trail'
+export const mountainRide = (ride: string) => ride === 'cross-country' || ride === 'trail'
 
 /**
  * Fills open questions with the defaults of the table `defaults`.

@@ -73,3 +73,13 @@ export function worstRim(descent: Descent, material: 'alloy' | 'carbon', onThisR
 
 /** Rise of a rotor, K, without losses: m·g·h or ½m·v² into its heat. @param joulesPerKgK 460 to 500 for steel */
 export const rotorRise = (joules: number, rotorKg: number, joulesPerKgK: number) => joules / (rotorKg * joulesPerKgK)
+
+/** What the advice says of rim brakes: hottest rim on the rider's worst descent, and what follows. */
+export interface RimHeatAdvice {
+  rimC: number
+  limitC: number
+  verdict: 'fine' | 'caution' | 'alloy-or-disc'
+  carbonC: number
+  alloyC: number
+  gradient: number
+}

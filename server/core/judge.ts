@@ -4,14 +4,7 @@ import type { WheelFacts, WheelsetFacts } from './catalogue.ts'
 import { checkLimit } from './limits.ts'
 import type { Rules } from './rules.ts'
 import { structuralLimitKg, type SpokeAdvice } from './spokes.ts'
-import { pairTyre } from './tyre-rim.ts'
-import { wheelPressure } from './wheel-pressure.ts'
-
-export interface NearestChange {
-  code: string
-  field: string
-  to: unknown
-}
+import { tyreCheck, type NearestChange, type Removal } from './tyre-check.ts'
 
 export interface Judgement {
   sku: string
@@ -27,6 +20,18 @@ export interface Judgement {
   startBar: { front: number; rear: number } | null
 }
 
+/** Rules of the tyre come last: a wheelset that one of them removes takes the bike, the use and the total. */
+const tyreRules = new Set([
+  'tubular',
+  'tyre-not-for-hookless',
+  'tube-on-hookless',
+  'tyre-too-narrow-for-rim',
+  'tyre-too-wide-for-rim',
+  'pressure-not-suitable',
+])
+export const onlyTyreAgainst = ({ rank, codes }: Pick<Judgement, 'rank' | 'codes'>) =>
+  rank === null && codes.some((code) => tyreRules.has(code))
+
 export interface Situation {
   filled: Filled
   totalKg: number
@@ -37,8 +42,6 @@ export interface Situation {
   noCarbonRimBrakes: boolean
   rules: Rules
 }
-
-type Removal = { verdict: 'mismatch' | 'pressure' | 'over-limit'; code: string; change?: NearestChange }
 
 const wheels = (set: WheelsetFacts): [WheelFacts, WheelFacts] => [set.front, set.rear]
 
@@ -84,11 +87,12 @@ function bikeMismatch(set: WheelsetFacts, { filled, rules }: Situation): Removal
         change: { code: 'other-fact', field: 'bike.caliperOpeningMm', to: needed },
       }
   }
-  if (bike.maxTyreMm !== null && tyre && Math.max(tyre.frontWidthMm, tyre.rearWidthMm) > bike.maxTyreMm) {
-    return {
-      verdict: 'mismatch',
-      code: 'clearance',
-      change: { code: 'other-fact', field: 'tyre.rearWidthMm', to: bike.maxTyreMm },
+  const { maxTyreMm } = bike
+  if (maxTyreMm !== null && tyre) {
+    const [front, rear] = [tyre.frontWidthMm > maxTyreMm, tyre.rearWidthMm > maxTyreMm]
+    if (front || rear) {
+      const field = front && rear ? 'tyre.widthMm' : front ? 'tyre.frontWidthMm' : 'tyre.rearWidthMm'
+      return { verdict: 'mismatch', code: 'clearance', change: { code: 'other-tyre', field, to: maxTyreMm } }
     }
   }
   return null
@@ -105,60 +109,6 @@ function useMismatch(set: WheelsetFacts, { filled, noCarbonRimBrakes }: Situatio
   if (noCarbonRimBrakes && set.brake === 'rim' && wheels(set).some(({ material }) => material === 'carbon'))
     return { verdict: 'mismatch', code: 'brake-heat' }
   return null
-}
-
-interface TyreCheck {
-  removal: Removal | null
-  codes: string[]
-  startBar: { front: number; rear: number } | null
-}
-
-/** The rider's tyre on this wheelset's own rims: approved range, pairing, pressure. */
-function tyreCheck(set: WheelsetFacts, { filled, loadsKg, rules }: Situation): TyreCheck {
-  const { tyre } = filled
-  if (!tyre) return { removal: null, codes: ['tyre-unknown'], startBar: null }
-  const codes = new Set<string>()
-  const start = { front: 0, rear: 0 }
-  let outside = false
-  for (const position of ['front', 'rear'] as const) {
-    const wheel = set[position]
-    const field = `tyre.${position}WidthMm`
-    const widthMm = position === 'front' ? tyre.frontWidthMm : tyre.rearWidthMm
-    const pairing = pairTyre({
-      seat: wheel.seat,
-      innerWidthMm: wheel.innerWidthMm,
-      widthMm,
-      setup: tyre.setup,
-      hooklessApproved: tyre.hooklessApproved ?? null,
-      leastOnHookless: rules['hookless-least-tyres'].rows,
-    })
-    const no = (code: string, to: unknown): TyreCheck => ({
-      removal: { verdict: 'mismatch', code, change: { code: 'other-tyre', field, to } },
-      codes: [],
-      startBar: null,
-    })
-    if (pairing.verdict === 'no') return no(pairing.code, Math.max(pairing.leastTyreMm, wheel.tyreMinMm))
-    if (widthMm < wheel.tyreMinMm) return no('tyre-too-narrow-for-rim', wheel.tyreMinMm)
-    if (widthMm > wheel.tyreMaxMm) return no('tyre-too-wide-for-rim', wheel.tyreMaxMm)
-    if (pairing.verdict === 'check') codes.add(pairing.code)
-    const result = wheelPressure(
-      { ...filled, tyre },
-      position,
-      loadsKg[position],
-      { seat: wheel.seat, innerWidthMm: wheel.innerWidthMm, maxBar: wheel.maxPressureBar },
-      rules,
-    )
-    if (result.verdict === 'not-suitable') {
-      const removal: Removal = { verdict: 'pressure', code: 'pressure-not-suitable' }
-      if (result.widthThatWouldDoMm !== null && result.widthThatWouldDoMm <= wheel.tyreMaxMm)
-        removal.change = { code: 'other-tyre', field, to: result.widthThatWouldDoMm }
-      return { removal, codes: [], startBar: null }
-    }
-    if (result.verdict !== 'ok') codes.add(result.verdict)
-    outside ||= result.pressure === null
-    start[position] = result.pressure?.startBar ?? 0
-  }
-  return { removal: null, codes: [...codes], startBar: outside ? null : start }
 }
 
 /** Millimetres by which the pair lies outside the advised depths. */

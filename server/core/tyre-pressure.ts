@@ -1,5 +1,7 @@
 /** Tyre pressure from load, width and the drop that the use wants. Loads in kg on one wheel, widths in mm, pressures in bar gauge. */
 
+import { barToPsi } from './units.ts'
+
 /** bar · mm^1.5 / kg; between the two published fits of the 15 % drop chart. DERIVED, tyres reference 5.3: judgement, not a measurement. */
 export const DROP_CONSTANT = 17.3
 /** Casing tension up to which straight-side rims are used, N/mm. DERIVED from the cap table of ISO 5775-1:2023 (itself second-hand). */
@@ -139,3 +141,5 @@ export const isoMinimumBar = (widthMm: number, offRoad: boolean) => (offRoad ? 1
  * @source common practice, no source (proof inflation); 16 CFR 1512.10 READ (110 %)
  */
 export const HIGHEST_MARKING_PSI = 150 / 1.1
+/** May a rim be marked with this maximum? @param bar gauge @source as above @example markedMaximumAllowed(9.4) // true: 136.3 psi */
+export const markedMaximumAllowed = (bar: number) => barToPsi(bar) <= HIGHEST_MARKING_PSI

@@ -179,6 +179,66 @@ describe('relations that hold for every rider (personas.json R1-R10, DERIVED or 
       expect(marginKg).toBeGreaterThanOrEqual(0)
     }
   })
+  property(
+    'R5 and R6 on every wheelset offered: front no deeper than rear, starts within rim and 5 bar on straight walls',
+    (rider) => {
+      for (const { sku, rank, startBar } of ask(answersOf(rider)).wheelsets) {
+        const set = facts.get(sku)
+        if (rank === null || !set) continue
+        expect(set.front.depthMm).toBeLessThanOrEqual(set.rear.depthMm)
+        if (startBar)
+          for (const wheel of [set.front, set.rear])
+            expect(startBar[wheel.position]).toBeLessThanOrEqual(
+              Math.min(wheel.maxPressureBar, wheel.seat === 'hookless' ? 5 : Infinity),
+            )
+      }
+    },
+  )
+  property('a pressure worked for a hooked rim never stands beside straight-wall offers without their cap', (rider) => {
+    const reply = ask(answersOf({ ...rider, seat: 'any' }))
+    const straight = reply.wheelsets.some(({ sku, rank }) => rank !== null && facts.get(sku)?.front.seat === 'hookless')
+    const cap = reply.notes.find(({ code }) => code === 'hookless-limit')
+    if (straight && reply.pressure) expect(cap?.data.ceilingBar).toBeLessThanOrEqual(5)
+    else expect(cap).toBeUndefined()
+  })
+  property('no refusal claims a limit while a stronger wheelset is ruled out by the tyre alone', (rider) => {
+    const reply = ask(answersOf(rider))
+    const over = reply.notes.find(({ code }) => code === 'over-every-limit')
+    if (!over) return
+    for (const { sku, limitKg } of reply.wheelsets) {
+      const set = facts.get(sku)
+      const forThisBike = set?.brake === rider.brakes && set.beadSeatMm === 622 && set.rides.includes(rider.ride)
+      const seat = rider.seat === 'any' || (set?.front.seat === rider.seat && set.rear.seat === rider.seat)
+      if (forThisBike && seat && !reply.wheelsets.some(({ codes }) => codes[0] === 'brake-heat'))
+        expect(limitKg).toBeLessThanOrEqual(Number(over.data.limitKg))
+    }
+  })
+  property(
+    'what would bring a wheelset back, where the tyre stands in the way, does bring it back',
+    (rider) => {
+      const answers = answersOf(rider)
+      for (const setup of ['tubeless', 'tube', 'tubular'] as const)
+        for (const hooklessApproved of [true, false, null]) {
+          const asked = { ...answers, tyre: answers.tyre && { ...answers.tyre, setup, hooklessApproved } }
+          for (const { sku, rank, nearestChange } of ask(asked).wheelsets) {
+            if (rank !== null || !nearestChange?.field.startsWith('tyre.')) continue
+            const { field, to } = nearestChange
+            const tyre = asked.tyre && {
+              ...asked.tyre,
+              ...(field === 'tyre.widthMm' ? { frontWidthMm: to, rearWidthMm: to } : { [field.slice(5)]: to }),
+            }
+            const again = ask(riderAnswers.parse({ ...asked, tyre })).wheelsets.find((one) => one.sku === sku)
+            expect(again?.rank, `${sku} ${field} ${String(to)}`).not.toBeNull()
+          }
+        }
+    },
+    4,
+  )
+  property('rim brakes never change the depths advised, nor the pressures', (rider) => {
+    const [rim, disc] = [ask(answersOf({ ...rider, brakes: 'rim' })), ask(answersOf({ ...rider, brakes: 'disc' }))]
+    expect(rim.rimDepthMm).toEqual(disc.rimDepthMm)
+    if (rim.pressure && disc.pressure) expect(rim.pressure).toEqual(disc.pressure)
+  })
   property('every start lies inside its band, its floor and its ceiling', (rider) => {
     const { pressure } = ask(answersOf(rider))
     if (!pressure) return
@@ -188,6 +248,72 @@ describe('relations that hold for every rider (personas.json R1-R10, DERIVED or 
       expect(p.startBar).toBeLessThanOrEqual(p.highBar)
       expect(p.highBar).toBeLessThanOrEqual(p.ceilingBar)
     }
+  })
+})
+
+describe('notes', () => {
+  const codes = (answers: RiderAnswers) => ask(answers).notes.map(({ code }) => code)
+  const alps: RiderAnswers = {
+    ...road,
+    ride: 'climbing',
+    brakes: 'rim',
+    terrain: 'mountain',
+    tyre: { frontWidthMm: 25, rearWidthMm: 25, setup: 'tube' },
+    rim: undefined,
+  }
+  // aero reference 3.9, worst-speed table, 12 %: carbon 111 °C at 79 kg and 142 °C at 99 kg in all, so 120 °C lies between.
+  it.each([
+    [79, 'fine'],
+    [88, 'caution'],
+    [99, 'caution'],
+    [106, 'alloy-or-disc'],
+  ])('rim brakes on long descents, %d kg in all: %s', (totalKg, verdict) => {
+    const { brakeHeat } = ask({ ...alps, bodyMassKg: totalKg - 11, kitMassKg: 3, bikeMassKg: 8 })
+    expect(brakeHeat?.verdict).toBe(verdict)
+    expect((brakeHeat?.carbonC ?? 0) > 120).toBe(verdict !== 'fine')
+  })
+  it('carbon rims on long descents come with the words on pads, tubes and braking', () => {
+    expect(codes({ ...alps, ride: 'road-long', bodyMassKg: 68 })).toContain('carbon-rim-brakes')
+    expect(codes({ ...alps, ride: 'road-long', bodyMassKg: 68, terrain: 'flat' })).not.toContain('carbon-rim-brakes')
+  })
+  it('aero bars do not lift the clamp of bikepacking (45 mm) or gravel (50 mm), aero reference 2.4', () => {
+    const calm = { ...road, position: 'aero', wind: 'sheltered', confidence: 'confident' } as const
+    expect(ask({ ...calm, ride: 'bikepacking' }).rimDepthMm?.rear.to).toBe(45)
+    expect(ask({ ...calm, ride: 'gravel' }).rimDepthMm?.rear.to).toBe(50)
+    expect(ask({ ...calm, ride: 'time-trial' }).rimDepthMm?.rear.to).toBe(90)
+  })
+  it('bags: the ride without them starts as if there were none', () => {
+    const bags = { ...road, luggageKg: 12, luggagePlace: 'rear' } as const
+    const bare = ask(bags).notes.find(({ code }) => code === 'bare-ride-lower-pressure')
+    const none = ask({ ...road, luggagePlace: 'rear' }).pressure
+    expect(bare?.data.rear).toMatchObject({ startBar: none?.rear.startBar })
+    expect(bare?.data.front).toMatchObject({ startBar: none?.front.startBar })
+    expect(codes(road)).not.toContain('bare-ride-lower-pressure')
+  })
+  it('answers that seldom go together are named, not corrected', () => {
+    const slip = ask({ ...road, bodyMassKg: 31, bikeMassKg: 33 })
+    expect(slip.notes).toContainEqual({
+      code: 'look-again',
+      severity: 'caution',
+      data: { fields: ['bodyMassKg', 'bikeMassKg'] },
+    })
+    expect(slip.parts).toMatchObject({ bodyMassKg: 31, bikeMassKg: 33 })
+    expect(codes({ ...road, ride: 'trail' })).toContain('look-again')
+    expect(codes(road)).not.toContain('look-again')
+  })
+  it('a total within some limits is not called over: the tyre is what stands in the way, and no pressure is shown', () => {
+    // 112.5 kg in all on 23 mm tyres: the range holds stronger road rim-brake wheelsets, on rims that take no 23 mm tyre.
+    const reply = ask({
+      ...alps,
+      ride: 'road-fast',
+      terrain: 'rolling',
+      bodyMassKg: 101.5,
+      tyre: { frontWidthMm: 23, rearWidthMm: 23, setup: 'tube' },
+    })
+    expect(reply.outcome).toBe('refuse')
+    expect(reply.notes[0]?.code).toBe('none-for-tyre')
+    expect(reply.notes.map(({ code }) => code)).not.toContain('over-every-limit')
+    expect(reply.pressure).toBeNull()
   })
 })
 
@@ -232,6 +358,21 @@ describe('spokes, from the stand-in table (wheel reference 4.12 and 4.13)', () =
     [131, '32/32'],
   ])('road disc, %d kg ready to ride: %s', (totalKg, counts) => {
     expect(of(totalKg)).toBe(counts)
+  })
+  // 4.13: road rim-brake carbon 30, gravel carbon 30 (14 kg of bike and kit) and XC carbon 25 × 30 (15 kg).
+  it.each([
+    ['road-long', 'rim', 50 + 11, '20/20'],
+    ['road-long', 'rim', 80 + 11, '20/24'],
+    ['road-long', 'rim', 100 + 11, '28/32'],
+    ['road-long', 'rim', 110 + 11, '32/36'],
+    ['gravel', 'disc', 90 + 14, '24/24'],
+    ['gravel', 'disc', 100 + 14, '24/28'],
+    ['gravel', 'disc', 130 + 14, '32/36'],
+    ['cross-country', 'disc', 80 + 15, '24/24'],
+    ['cross-country', 'disc', 90 + 15, '24/28'],
+    ['cross-country', 'disc', 110 + 15, '32/36'],
+  ] as const)('%s on %s brakes, %d kg ready to ride: %s', (ride, brakes, totalKg, counts) => {
+    expect(of(totalKg, { ride, brakes })).toBe(counts)
   })
   it('bikepacking and assistance start at 28 behind, heavy bags at 32', () => {
     expect(of(90, { ride: 'bikepacking' })).toBe('24/28')

@@ -1,4 +1,5 @@
 /** Check cases of the depth, wind, power and brake-heat method; the values are the reference's, with its labels. */
+import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { airDensity } from '#core/air-density.ts'
 import {
@@ -92,6 +93,27 @@ describe('power on the road (Martin et al. 1998, worked example READ via open tr
       chainEfficiency: 0.976,
     })
     expect(Math.abs(total - 389.9)).toBeLessThan(0.3)
+  })
+  it('G6: 4.293 m/s up 7.9 % with 2.327 m/s of air, speeding up over 3 240 s, takes 334.9 W', () => {
+    const { total } = ridingPower(
+      {
+        speedMs: 4.293,
+        airSpeedMs: 2.327,
+        massKg: 85,
+        cdaM2: 0.4,
+        spokeAreaM2: 0.0044,
+        rollingCoefficient: 0.008,
+        gradient: 0.079,
+        airDensity: 1.1921,
+        chainEfficiency: 0.95,
+      },
+      { fromMs: 0, toMs: 11.111, seconds: 3240, inertia: 0.12, radiusM: 0.339 },
+    )
+    expect(Math.abs(total - 334.9)).toBeLessThan(0.3)
+  })
+  it('G10: 2.94 m/s of wind turns the air at 13.4 m/s by no more than 12.67°', () => {
+    const yaws = Array.from({ length: 3601 }, (_, step) => windOnRider(13.4, 2.94, step / 20, 0).yawDeg)
+    expect(Math.abs(Math.max(...yaws) - 12.67)).toBeLessThan(0.1)
   })
   it('G7: 80 kg from 10 to 15 m/s in 10 s takes 500 W; half a kilogram at the rim makes it 506.25', () => {
     const none = {
@@ -267,6 +289,46 @@ describe('gusts and the front cap', () => {
     expect(range.shallow).toBe(true)
     expect(range.front.to).toBe(25)
     expect(range.rear.to).toBe(45)
+  })
+})
+
+describe('relations of the depth method (aero reference 4.3)', () => {
+  const depth = fc.double({ min: 25, max: 100, noNaN: true })
+  const rider = fc.record({
+    bodyMassKg: fc.double({ min: 40, max: 140, noNaN: true }),
+    bikeMassKg: fc.double({ min: 6, max: 20, noNaN: true }),
+    gustMs: fc.double({ min: 3, max: 12, noNaN: true }),
+    speedMs: fc.double({ min: 8, max: 15, noNaN: true }),
+    correctionDeg: fc.double({ min: 2, max: 4, noNaN: true }),
+  })
+  it('deeper has the larger side force at every yaw and the larger gust moment', () => {
+    fc.assert(
+      fc.property(depth, fc.double({ min: 0.5, max: 20, noNaN: true }), (mm, yaw) => {
+        expect(sideForceArea(mm + 1, yaw)).toBeGreaterThan(sideForceArea(mm, yaw))
+        expect(gustMoment(mm + 1, 10, 7)).toBeGreaterThan(gustMoment(mm, 10, 7))
+      }),
+    )
+  })
+  it('more mass never lowers the cap; a stronger gust or less confidence never raises it', () => {
+    fc.assert(
+      fc.property(rider, (given) => {
+        const cap = frontDepthCap(given)
+        expect(frontDepthCap({ ...given, bodyMassKg: given.bodyMassKg + 5 })).toBeGreaterThanOrEqual(cap)
+        expect(frontDepthCap({ ...given, gustMs: given.gustMs + 1 })).toBeLessThanOrEqual(cap)
+        expect(frontDepthCap({ ...given, correctionDeg: given.correctionDeg - 0.5 })).toBeLessThanOrEqual(cap)
+      }),
+    )
+  })
+  it('the cap is where the gust asks for just the correction that the rider accepts', () => {
+    fc.assert(
+      fc.property(rider, (given) => {
+        const cap = frontDepthCap(given)
+        if (cap > 250) return
+        const asked =
+          gustMoment(cap, given.speedMs, given.gustMs) / steeringStiffness(given.bodyMassKg, given.bikeMassKg)
+        expect((asked * 180) / Math.PI / given.correctionDeg).toBeCloseTo(1, 9)
+      }),
+    )
   })
 })
 

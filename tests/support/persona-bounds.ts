@@ -49,7 +49,9 @@ function semantic(bound: Bound, reply: Advice, facts: ReadonlyMap<string, Wheels
     case 'every text of the reply not_contains':
       return (bound.value as string[]).every((word) => !text.includes(word))
     case 'notes mentions':
-      return codes.includes(String(bound.value).startsWith('brake heat') ? 'brake-heat' : 'luggage-counted')
+      return String(bound.value).startsWith('brake heat')
+        ? codes.includes('brake-heat')
+        : codes.includes('luggage-counted') && codes.includes('bare-ride-lower-pressure')
     case 'wheelsets[*].verdict offer_requires':
       return offers.every(
         (set) => set && (String(bound.value).includes('assisted') ? set.assistRated : set.brake === 'rim'),

@@ -10,8 +10,8 @@ const core = (file: string) => readFileSync(path.join(root, 'server/core', file)
 const all = (text: string, pattern: RegExp) => [...new Set([...text.matchAll(pattern)].map(([, code]) => code ?? ''))]
 
 const [advise, judge, pairing, spokes, pressure, wheelPressure, reasons] = [
-  core('advise.ts'),
-  core('judge.ts'),
+  core('advise.ts') + core('notes.ts'),
+  core('judge.ts') + core('tyre-check.ts'),
   core('tyre-rim.ts'),
   core('spokes.ts'),
   core('tyre-pressure.ts'),

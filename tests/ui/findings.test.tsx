@@ -65,7 +65,7 @@ describe('findings', () => {
     open(`${ADDRESS}&tyreMax=5`, { pressure: 'psi' })
     await title(/psi behind$/)
     // 5 bar = 72.52 psi; 73 psi would be 5.03 bar
-    expect(screen.getByText(/never above 72.psi/)).toBeTruthy()
+    expect(screen.getByText(/^never above 72.psi/)).toBeTruthy()
     expect(screen.queryByText(/73.psi/)).toBe(null)
   })
 

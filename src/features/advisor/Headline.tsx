@@ -17,9 +17,11 @@ export function useHeadline(advice: Advice | undefined): string {
         ? 'findings.headline.over'
         : code === 'none-for-bike'
           ? 'findings.headline.none'
-          : code === 'pressure-not-suitable'
-            ? 'findings.headline.pressure'
-            : 'findings.headline.pairing',
+          : code === 'none-for-tyre'
+            ? 'findings.headline.tyre'
+            : code === 'pressure-not-suitable'
+              ? 'findings.headline.pressure'
+              : 'findings.headline.pairing',
       { total },
     )
   }

@@ -52,6 +52,15 @@ export function answerText(t: TFunction, format: Format, path: string, value: un
   return t(`advisor:option.${name}.${String(value)}`, { defaultValue: String(value) })
 }
 
+type Start = Pick<WheelPressure, 'startBar' | 'floorBar' | 'ceilingBar'>
+const isStart = (value: unknown): value is Start => typeof value === 'object' && value !== null && 'startBar' in value
+
+/** A start value in the visitor's unit, never above its rounded-down maximum. */
+function startText(format: Format, { startBar, floorBar, ceilingBar }: Start): string {
+  const unit = format.pressure(startBar).unit === 'psi' ? 'psi' : 'bar'
+  return `${format.number(shownPressure(startBar, floorBar, ceilingBar, unit), unit === 'bar' ? 1 : 0)}\u00a0${unit}`
+}
+
 export function noteText(t: TFunction, format: Format, { code, data }: Note): string {
   const words = Object.fromEntries(
     Object.entries(data).map(([name, value]) => [
@@ -60,7 +69,9 @@ export function noteText(t: TFunction, format: Format, { code, data }: Note): st
         ? format.list(value.map((path) => fieldName(t, String(path)).toLocaleLowerCase()))
         : typeof value === 'number'
           ? showValue(name, value, format)
-          : String(value),
+          : isStart(value)
+            ? startText(format, value)
+            : String(value),
     ]),
   )
   const key = code === 'wider-tyre' && data.widthThatWouldDoMm === null ? 'wider-tyre-none' : code
