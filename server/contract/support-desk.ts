@@ -47,6 +47,8 @@ export const deskLine = z.object({
   taxCents: cents,
   options: lineOptions,
   state: orderState,
+  /** Went back whole, or is on its way back. */
+  refunded: z.boolean(),
   adviceId: z.string().nullable(),
   limitCheck,
   limitKg: z.number(),
@@ -188,7 +190,7 @@ export const revealMass = z.strictObject({ reason: staffReason })
 export const revealedMass = z.object({ advice: z.array(frozenAdvice) })
 
 /**
- * Whole lines by their ids, or an amount. All lines together bring the delivery charge with them.
+ * Whole lines by their ids, each once, or an amount. The last of an order's lines to go back brings the delivery charge along.
  * Never more than what is left: the server decides under a lock.
  */
 export const refundRequest = z

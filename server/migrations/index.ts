@@ -19,6 +19,7 @@ import * as createAuditRows from './20261201-1014-create-audit-rows.ts'
 import * as createRuleTables from './20261201-1015-create-rule-tables.ts'
 import * as createDemoMarker from './20261201-1016-create-demo-marker.ts'
 import * as protectHistory from './20261201-1017-protect-history.ts'
+import * as addRefundLines from './20261201-1018-add-refund-lines.ts'
 
 interface Migration {
   up: (q: QueryInterface) => Promise<unknown>
@@ -44,6 +45,7 @@ const migrations: Record<string, Migration> = {
   '20261201-1015-create-rule-tables': createRuleTables,
   '20261201-1016-create-demo-marker': createDemoMarker,
   '20261201-1017-protect-history': protectHistory,
+  '20261201-1018-add-refund-lines': addRefundLines,
 }
 
 /** In the order they run. The shop itself may only read and write rows, so its health check compares names and runs nothing. */

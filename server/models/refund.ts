@@ -8,6 +8,7 @@ export class Refund extends Model<InferAttributes<Refund>, InferCreationAttribut
   declare id: CreationOptional<number>
   declare orderId: number
   declare amountCents: number
+  declare lineIds: CreationOptional<number[] | null> // whole lines given back; null for an amount
   declare reason: string
   declare state: CreationOptional<'asked' | 'done' | 'failed'>
   declare stripeRefundId: CreationOptional<string | null>
@@ -25,6 +26,7 @@ export const initRefund = (sequelize: Sequelize) =>
       id: { type: DataTypes.INTEGER.UNSIGNED, autoIncrement: true, primaryKey: true },
       orderId: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
       amountCents: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
+      lineIds: { type: DataTypes.JSON, allowNull: true },
       reason: { type: DataTypes.TEXT, allowNull: false },
       state: { type: DataTypes.STRING(10), allowNull: false, defaultValue: 'asked' },
       stripeRefundId: { type: DataTypes.STRING(190), allowNull: true },

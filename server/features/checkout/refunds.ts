@@ -27,7 +27,7 @@ export interface RefundInput {
 }
 
 /**
- * @throws AppError refund-too-much (409, what is left), nothing-to-refund, no-such-line;
+ * @throws AppError refund-too-much (409, what is left), nothing-to-refund, no-such-line, line-refunded;
  *   refund-refused: the processor said no, the row is marked failed;
  *   refund-unconfirmed: nobody can say whether it was done, so the row stays asked for, its amount is set aside, and the job asks again with the same key
  */
@@ -56,11 +56,12 @@ function inRefundWords(error: unknown): never {
 async function ask(deps: Deps, order: Order, input: RefundInput, transaction: Transaction): Promise<Refund> {
   const { leftCents } = await moneyOf(order.id, transaction)
   if (order.stripePaymentIntent === null || leftCents <= 0) throw new AppError('nothing-to-refund', 409)
-  const amountCents = input.amountCents ?? (await linesCents(order.id, input.lineIds ?? [], transaction))
+  const lineIds = input.amountCents === undefined ? [...new Set(input.lineIds ?? [])] : null
+  const amountCents = input.amountCents ?? (await linesCents(order, lineIds ?? [], transaction))
   checkLeft(order, amountCents, leftCents)
   const { reason, actor, idempotencyKey } = input
   const asked = await Refund.create(
-    { orderId: order.id, amountCents, reason, authorId: actor.id, idempotencyKey, createdAt: deps.clock() },
+    { orderId: order.id, amountCents, lineIds, reason, authorId: actor.id, idempotencyKey, createdAt: deps.clock() },
     { transaction },
   )
   await input.alongside?.(asked, transaction)
@@ -71,6 +72,7 @@ async function askAgain(known: Refund, order: Order, transaction: Transaction): 
   if (known.state !== 'failed') return known
   const { leftCents } = await moneyOf(order.id, transaction)
   checkLeft(order, known.amountCents, leftCents)
+  await checkLines(order, known.lineIds ?? [], transaction)
   return known.update({ state: 'asked' }, { transaction })
 }
 
@@ -78,10 +80,29 @@ function checkLeft({ currency }: Order, amountCents: number, leftCents: number) 
   if (amountCents > leftCents) throw new AppError('refund-too-much', 409, { leftCents, amountCents, currency })
 }
 
-async function linesCents(orderId: number, lineIds: readonly number[], transaction: Transaction): Promise<number> {
-  const lines = await OrderLine.findAll({ where: { orderId, id: [...new Set(lineIds)] }, transaction })
-  if (lines.length === 0 || lines.length !== new Set(lineIds).size) throw new AppError('no-such-line', 409)
-  return lines.reduce((sum, { lineCents }) => sum + lineCents, 0)
+/** Ids of the lines that went back whole, or are on their way. */
+export async function refundedLines(orderId: number, transaction?: Transaction): Promise<Set<number>> {
+  const refunds = await Refund.findAll({ where: { orderId, state: ['asked', 'done'] }, transaction })
+  return new Set(refunds.flatMap(({ lineIds }) => lineIds ?? []))
+}
+
+/** Somebody else's earlier refund of the same line is not paid a second time out of what the other lines cost. */
+async function checkLines(order: Order, lineIds: readonly number[], transaction: Transaction): Promise<Set<number>> {
+  const gone = await refundedLines(order.id, transaction)
+  if (lineIds.some((id) => gone.has(id))) throw new AppError('line-refunded', 409)
+  return gone
+}
+
+/** What whole lines cost, with tax where it came on top. The last of an order's lines to go back brings the delivery charge along. */
+async function linesCents(order: Order, lineIds: readonly number[], transaction: Transaction): Promise<number> {
+  const lines = await OrderLine.findAll({ where: { orderId: order.id }, transaction })
+  const picked = lines.filter(({ id }) => lineIds.includes(id))
+  if (picked.length === 0 || picked.length !== lineIds.length) throw new AppError('no-such-line', 409)
+  const gone = await checkLines(order, lineIds, transaction)
+  const taxOnTop = order.totalCents > order.goodsCents + order.deliveryCents
+  const goods = picked.reduce((sum, { lineCents, taxCents }) => sum + lineCents + (taxOnTop ? taxCents : 0), 0)
+  const last = lines.every(({ id }) => gone.has(id) || lineIds.includes(id))
+  return goods + (last ? order.deliveryCents : 0)
 }
 
 /** The shop itself gives back all that is left, for a cause that the buyer is told. Written with the cause; carried out after. */

@@ -1,6 +1,6 @@
 /** One edit of a wheelset: words, prices, stock, on or off sale. All of it or none of it, with one audit row. */
 import type { Transaction } from 'sequelize'
-import { PRICE_JUMP_SHARE, type ProductChange, type ProductWheelset } from '#contract/product-desk.ts'
+import { PRICE_JUMP_SHARE, productWheelset, type ProductChange, type ProductWheelset } from '#contract/product-desk.ts'
 import { currencies, locales } from '#contract/common.ts'
 import { recordAudit } from '../../audit/record.ts'
 import { inTransaction } from '../../db.ts'
@@ -64,8 +64,9 @@ export function changeWheelset(
   })
 }
 
+/** A refusal passes no reply schema, so the present values are named here. */
 const changedMeanwhile = async (deps: Reach, sku: string, transaction: Transaction) =>
-  new AppError('changed-meanwhile', 409, { present: await readProduct(deps, sku, transaction) })
+  new AppError('changed-meanwhile', 409, { present: productWheelset.parse(await readProduct(deps, sku, transaction)) })
 
 async function changeStock(
   deps: Reach,

@@ -11,6 +11,7 @@ import { OutboxMail } from '../../models/outbox-mail.ts'
 import { Refund } from '../../models/refund.ts'
 import { User } from '../../models/user.ts'
 import { Wheelset } from '../../models/wheelset.ts'
+import { refundedLines } from '../checkout/refunds.ts'
 import { frozenAdviceView } from './frozen-advice.ts'
 
 export async function findOrder(number: string): Promise<Order> {
@@ -29,8 +30,9 @@ const linesOf = (order: Order) =>
 export async function readDeskOrder(number: string): Promise<DeskOrder> {
   const order = await findOrder(number)
   const where = { orderId: order.id }
-  const [lines, mails, events, money] = await Promise.all([
+  const [lines, refunded, mails, events, money] = await Promise.all([
     linesOf(order),
+    refundedLines(order.id),
     OutboxMail.findAll({ where, order: ['id'] }),
     OrderEvent.findAll({
       where,
@@ -66,6 +68,7 @@ export async function readDeskOrder(number: string): Promise<DeskOrder> {
       taxCents: line.taxCents,
       options: line.options,
       state: line.state,
+      refunded: refunded.has(line.id),
       adviceId: line.adviceId,
       limitCheck: line.limitCheck,
       limitKg: line.limitKg,

@@ -7,7 +7,7 @@ import type { SignedIn } from '../../http/session.ts'
 import { refundOrder } from '../checkout/refunds.ts'
 import { findOrder } from './read.ts'
 
-/** @throws AppError refund-too-much, nothing-to-refund, no-such-line, refund-refused, refund-unconfirmed */
+/** @throws AppError refund-too-much, nothing-to-refund, no-such-line, line-refunded, refund-refused, refund-unconfirmed */
 export async function refundFromDesk(
   deps: Deps,
   actor: SignedIn,
@@ -32,7 +32,11 @@ export async function refundFromDesk(
           subjectType: 'order',
           subjectId: orderNumber,
           reason: asked.reason,
-          after: { amountCents: row.amountCents, currency: order.currency },
+          after: {
+            amountCents: row.amountCents,
+            currency: order.currency,
+            ...(row.lineIds === null ? {} : { lines: row.lineIds }),
+          },
         },
         transaction,
       ),

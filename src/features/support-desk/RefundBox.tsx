@@ -35,10 +35,12 @@ export function RefundBox({ orderNumber, buyer, lines, money }: RefundBoxProps) 
   // One key for one decision: a second click or a repeat after a lost reply is the same refund.
   const [key, setKey] = useState('')
   const typed = useWatch({ control: form.control })
+  // Kept by hand: a form library reads a lone checkbox as one value, not as a list of one.
+  const chosen = typed.lines ?? []
   const { errors } = form.formState
   const left = money.leftToRefundCents
-  const centsOf = ({ mode, lines: chosen, amount }: typeof typed) =>
-    mode === 'all' ? left : mode === 'lines' ? linesCents(chosen ?? [], lines, money) : (readMoney(amount ?? '') ?? 0)
+  const centsOf = ({ mode, amount }: typeof typed) =>
+    mode === 'all' ? left : mode === 'lines' ? linesCents(chosen, lines, money) : (readMoney(amount ?? '') ?? 0)
   const price = (cents: number) => f.money(cents, money.currency)
 
   if (money.takenCents === 0) return <p className="text-soft">{t('refund.nothingTaken')}</p>
@@ -92,11 +94,19 @@ export function RefundBox({ orderNumber, buyer, lines, money }: RefundBoxProps) 
             <fieldset aria-describedby={errors.lines ? 'refund-lines-error' : undefined}>
               <legend className="text-soft">{t('refund.lines')}</legend>
               {lines.map((line) => (
-                <label key={line.id} className="flex min-h-9 items-center gap-2">
+                <label
+                  key={line.id}
+                  className={`flex min-h-9 items-center gap-2 ${line.refunded ? 'text-soft line-through' : ''}`}
+                >
                   <input
                     type="checkbox"
-                    value={String(line.id)}
-                    {...form.register('lines')}
+                    checked={chosen.includes(String(line.id))}
+                    disabled={line.refunded}
+                    onChange={(event) => {
+                      const others = chosen.filter((id) => id !== String(line.id))
+                      form.setValue('lines', event.target.checked ? [...others, String(line.id)] : others)
+                      form.clearErrors('lines')
+                    }}
                     className="size-4 accent-ink"
                   />
                   <span className="flex-1">{t('refund.line', { title: line.title, quantity: line.quantity })}</span>

@@ -14,11 +14,12 @@ export const emptyRefund: RefundForm = { mode: 'all', lines: [], amount: '', rea
 
 type Money = Pick<DeskMoney, 'leftToRefundCents' | 'taxIncluded' | 'deliveryCents'>
 
-/** What the chosen lines come to; all of them bring the delivery charge along. The server does its own sum. */
+/** What the chosen lines come to; the last to go back brings the delivery charge along. The server does its own sum. */
 export function linesCents(chosen: readonly string[], lines: readonly DeskLine[], money: Money): number {
   const picked = lines.filter(({ id }) => chosen.includes(String(id)))
   const goods = picked.reduce((sum, { lineCents, taxCents }) => sum + lineCents + (money.taxIncluded ? 0 : taxCents), 0)
-  return goods + (picked.length === lines.length ? money.deliveryCents : 0)
+  const last = picked.length > 0 && lines.every((line) => line.refunded || picked.includes(line))
+  return goods + (last ? money.deliveryCents : 0)
 }
 
 /** Checks against what was left when the page was read; the server checks again under its lock. */
