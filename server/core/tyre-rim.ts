@@ -42,31 +42,3 @@ export function pairTyre(pair: {
     ? { verdict: 'check', code: 'confirm-hookless-tyre', leastTyreMm }
     : { verdict: 'ok', code: 'pairing-ok', leastTyreMm }
 }
-
-export interface Designation {
-  widthMm: number | null
-  innerWidthMm: number | null
-  beadSeatMm: number
-  type: string | null
-}
-
-/**
- * Reads a size as printed on tyre or rim: `28-622`, `622x21TC`, `25x622 TSS`, `SS 400x20`. Both orders occur; the larger number is the diameter.
- * @returns null when it is no such designation
- * @source ISO 5775 forms READ (encyclopaedia article, BS ISO 5775-2:2015); `622x21TC` MEMORY high; `25x622 TSS` PRACTICE
- */
-export function readDesignation(text: string): Designation | null {
-  const tyre = /^\s*(\d{2,3})\s*-\s*(\d{3})\b/.exec(text)
-  if (tyre) return { widthMm: Number(tyre[1]), innerWidthMm: null, beadSeatMm: Number(tyre[2]), type: null }
-  const rim = /^\s*(SS|TSS|HB|TC|C)?\s*(\d{2,3}(?:\.\d)?)\s*[x×]\s*(\d{2,3}(?:\.\d)?)\s*(SS|TSS|HB|TC|C)?\s*$/i.exec(
-    text,
-  )
-  if (!rim) return null
-  const [one, other] = [Number(rim[2]), Number(rim[3])]
-  const type = (rim[1] ?? rim[4])?.toUpperCase() ?? null
-  return { widthMm: null, innerWidthMm: Math.min(one, other), beadSeatMm: Math.max(one, other), type }
-}
-
-/** Use condition of ASTM F2043 for an intended drop. MEMORY, second-hand, confirm against the standard. @param dropM metres */
-export const useConditionForDrop = (dropM: number): 2 | 3 | 4 | 5 =>
-  dropM <= 0.15 ? 2 : dropM < 0.61 ? 3 : dropM < 1.22 ? 4 : 5

@@ -19,7 +19,8 @@ import {
   pressureCeiling,
   widthThatWouldDo,
 } from '#core/tyre-pressure.ts'
-import { pairTyre, readDesignation, useConditionForDrop } from '#core/tyre-rim.ts'
+import { pairTyre } from '#core/tyre-rim.ts'
+import { readDesignation, useConditionForDrop } from '#core/tyre-size.ts'
 import { barToPsi, kgToLb, lbToKg, psiToBar } from '#core/units.ts'
 import { ruleTables } from '../../server/seeds/rule-tables.ts'
 import { wheelsetFacts } from '../../server/seeds/facts.ts'
