@@ -142,8 +142,8 @@ export default tseslint.config(
   {
     files: ['server/core/**/*.ts'],
     rules: imports([
-      '^(?!\\./|\\.\\./(?!\\.\\.|\\w+/)|#core/|zod$)',
-      'The sums import only sums, and zod to check their tables.',
+      '^(?!\\./|\\.\\./(?!\\.\\.|\\w+/)|#core/|zod$|ml-matrix$)',
+      'The sums import only sums, zod to check their tables and ml-matrix to solve.',
     ]),
   },
   {
