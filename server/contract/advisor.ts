@@ -138,6 +138,8 @@ export const wheelsetVerdict = z.object({
   nearestChange: z.object({ code: z.string(), field: z.string(), to: z.unknown() }).optional(),
   /** Pressures to start from on this wheelset's own rims. */
   startBar: z.object({ front: z.number(), rear: z.number() }).nullable(),
+  /** Rows of the pairing table that judged tyre and rim; `reasons.pairing` tells what each says. Older advice has none. */
+  pairingRows: z.object({ front: z.string(), rear: z.string() }).nullish(),
 })
 
 export const tradeOffPoint = z.object({

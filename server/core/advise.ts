@@ -27,6 +27,7 @@ import {
   limitReason,
   loadReason,
   massReason,
+  pairingReason,
   pressureReason,
   spokeReason,
   tradeOffReason,
@@ -154,7 +155,10 @@ export function advise(
     wheelLoads(filled.bodyKg + filled.kitKg + filled.bikeKg, share, luggageKg, luggageShare)
   const loads = loadsWith(filled.luggageKg)
   const overRear = filled.luggagePlace === 'rear' ? filled.luggageKg * (1 - luggageShare) : 0
-  const loadsKg = { front: frontDesignLoad(loads.frontKg, loads.rearKg - overRear), rear: loads.rearKg }
+  const loadsKg = {
+    front: frontDesignLoad(loads.frontKg, loads.rearKg - overRear, rules['front-design-load']),
+    rear: loads.rearKg,
+  }
 
   const given = depthInputs(filled, rules)
   const depth = depthRange(given)
@@ -189,10 +193,10 @@ export function advise(
   const offered = new Set(wheelsets.flatMap(({ rank, sku }) => (rank === null ? [] : [sku])))
   const offers = catalogue.filter(({ sku }) => offered.has(sku))
   const bare = loadsWith(0)
-  const bareKg = { front: frontDesignLoad(bare.frontKg, bare.rearKg), rear: bare.rearKg }
+  const bareKg = { front: frontDesignLoad(bare.frontKg, bare.rearKg, rules['front-design-load']), rear: bare.rearKg }
   const notes = [
     ...refusals,
-    ...pressureNotes(filled, results, pressure !== null),
+    ...pressureNotes(filled, results, pressure !== null, rules),
     ...(pressure && seat !== 'hookless'
       ? hooklessOfferNotes(filled, offers, pressures(filled, loadsKg, 'hookless', rules))
       : []),
@@ -213,6 +217,9 @@ export function advise(
     'lower-maximum-wins',
     'mechanic',
     'makers-and-rules',
+    'measure-cold',
+    'check-bead',
+    'softer-by-taste',
     'bike-unknown',
     'sharpen',
     'rotor-size',
@@ -232,13 +239,14 @@ export function advise(
   const extraKg = lookUp(rules['spoke-limits'].extraKg, designOf(filled.ride, filled.brakes))
   const reasons: Record<string, Reason> = {
     systemMassKg: massReason(filled, totalKg),
-    loads: loadReason(filled, loads, share),
+    loads: loadReason(filled, loads, share, luggageShare),
     ...(results && !tyreRefused
       ? {
-          'pressure.front': pressureReason(filled, 'front', results.front, seat),
-          'pressure.rear': pressureReason(filled, 'rear', results.rear, seat),
+          'pressure.front': pressureReason(filled, 'front', results.front, seat, loads, rules),
+          'pressure.rear': pressureReason(filled, 'rear', results.rear, seat, loads, rules),
         }
       : {}),
+    ...(filled.tyre ? { pairing: pairingReason(filled, filled.tyre, seat, wheelsets, rules) } : {}),
     'rimDepthMm.front': depthReason(filled, given, depth.capMm, 'front'),
     'rimDepthMm.rear': depthReason(filled, given, depth.capMm, 'rear'),
     'spokes.front': spokeReason(filled, totalKg, spokes.front, extraKg),

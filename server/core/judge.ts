@@ -4,7 +4,7 @@ import type { WheelFacts, WheelsetFacts } from './catalogue.ts'
 import { checkLimit } from './limits.ts'
 import type { Rules } from './rules.ts'
 import { structuralLimitKg, type SpokeAdvice } from './spokes.ts'
-import { tyreCheck, type NearestChange, type Removal } from './tyre-check.ts'
+import { tyreChecker, type NearestChange, type Removal, type TyreCheck } from './tyre-check.ts'
 
 export interface Judgement {
   sku: string
@@ -18,6 +18,8 @@ export interface Judgement {
   nearestChange?: NearestChange
   /** Start values on this wheelset's own rims; null where no tyre is known or it is ruled out. */
   startBar: { front: number; rear: number } | null
+  /** Names of the pairing rows that judged tyre and rim; null where another rule decided before or no tyre is known. */
+  pairingRows: { front: string; rear: string } | null
 }
 
 /** Rules of the tyre come last: a wheelset that one of them removes takes the bike, the use and the total. */
@@ -120,6 +122,9 @@ const outsideDepth = (set: WheelsetFacts, { depth }: Situation) =>
     Math.max(0, set.rear.depthMm - depth.rear.to),
   ].reduce((sum, one) => sum + one, 0)
 
+const rowsOf = (tyre: TyreCheck | null) =>
+  tyre?.pairing ? { front: tyre.pairing.front.row, rear: tyre.pairing.rear.row } : null
+
 /**
  * Judges and ranks a catalogue for one rider. First what the bike and the use rule out, then the limit, then tyre and pressure. What is left is
  * ranked by: spokes at or above the advice, margin left, depth inside the advised range (too deep in front counts double), made for this ride first,
@@ -128,6 +133,7 @@ const outsideDepth = (set: WheelsetFacts, { depth }: Situation) =>
  */
 export function judgeAll(sets: readonly WheelsetFacts[], situation: Situation): Judgement[] {
   const { totalKg, rules, filled, spokes, depth } = situation
+  const tyreOf = tyreChecker(situation)
   const judged = sets.map((set) => {
     const { sku, slug, name, limitKg } = set
     const limit = checkLimit(totalKg, limitKg, rules.limits.noMarginFrom)
@@ -141,7 +147,7 @@ export function judgeAll(sets: readonly WheelsetFacts[], situation: Situation): 
           }
         : null
     const early = bikeMismatch(set, situation) ?? useMismatch(set, situation) ?? over
-    const tyre = early ? null : tyreCheck(set, situation)
+    const tyre = early ? null : tyreOf(set)
     const removal = early ?? tyre?.removal ?? null
     if (removal) {
       const judgement: Judgement = {
@@ -150,6 +156,7 @@ export function judgeAll(sets: readonly WheelsetFacts[], situation: Situation): 
         verdict: removal.verdict,
         codes: [removal.code],
         startBar: null,
+        pairingRows: rowsOf(tyre),
       }
       if (removal.change) judgement.nearestChange = removal.change
       return { judgement, key: null }
@@ -181,6 +188,7 @@ export function judgeAll(sets: readonly WheelsetFacts[], situation: Situation): 
       verdict: limit.verdict,
       codes,
       startBar: tyre?.startBar ?? null,
+      pairingRows: rowsOf(tyre),
     }
     return { judgement, key }
   })

@@ -1,4 +1,5 @@
 /** From what the rider and the bike weigh to the force on each wheel. In: kg, shares. Out: kg and N. */
+import type { Rules } from './rules.ts'
 import { STANDARD_GRAVITY } from './units.ts'
 
 /**
@@ -44,10 +45,29 @@ export function wheelLoads(unladenKg: number, frontShare: number, luggageKg: num
 }
 
 /**
- * The load the front pressure is set for: braking and descending load the front, so it never falls far behind the rear.
- * m* = min(max(m_f, 0.85 · m_r), 1.15 · m_f)
- * @param rearKg rear load without bags placed over it
- * @source tyres reference step 10; the 0.85 and the 1.15 are judgement (PRACTICE)
+ * Share of a point mass that the rear wheel carries. share = 1 − x / L; above 1 behind the rear axle, where it lifts the front.
+ * @param aheadMm horizontal distance ahead of the rear axle, negative behind it
+ * @param wheelbaseMm > 0
+ * @throws RangeError for a wheelbase that is not positive
+ * @source tyres reference 3.4, DERIVED (moments about the front contact); the table load-split holds what it gives for each place of bags
+ * @example rearShareAt(900, 1000) // 0.1: a bag on the handlebar
  */
-export const frontDesignLoad = (frontKg: number, rearKg: number, least = 0.85, most = 1.15) =>
-  Math.min(Math.max(frontKg, least * rearKg), most * frontKg)
+export function rearShareAt(aheadMm: number, wheelbaseMm: number): number {
+  if (!(wheelbaseMm > 0)) throw new RangeError('rearShareAt: out of range')
+  return 1 - aheadMm / wheelbaseMm
+}
+
+/**
+ * The load the front pressure is set for: braking and descending load the front, so it never falls far behind the rear.
+ * m* = min(max(m_f, least · m_r), most · m_f)
+ * @param rearKg rear load without bags placed over it, ≥ 0
+ * @param rule table front-design-load: 0.85 of the rear, 1.15 of its own
+ * @returns kg
+ * @throws RangeError for loads outside those ranges
+ * @source tyres reference step 10; the 0.85 and the 1.15 are judgement (PRACTICE)
+ * @example frontDesignLoad(40, 50, { leastOfRear: 0.85, mostOfOwn: 1.15 }) // 42.5
+ */
+export function frontDesignLoad(frontKg: number, rearKg: number, rule: Rules['front-design-load']): number {
+  if (!(frontKg > 0 && rearKg >= 0)) throw new RangeError('frontDesignLoad: out of range')
+  return Math.min(Math.max(frontKg, rule.leastOfRear * rearKg), rule.mostOfOwn * frontKg)
+}

@@ -6,8 +6,9 @@ import { onlyTyreAgainst, type Judgement } from './judge.ts'
 import { SHALLOWEST_MM, type DepthInputs } from './rim-depth.ts'
 import type { Rules } from './rules.ts'
 import type { SpokeAdvice } from './spokes.ts'
-import { isoMinimumBar } from './tyre-pressure.ts'
-import { pairTyre } from './tyre-rim.ts'
+import { gaugeAfter } from './air-density.ts'
+import { isoMinimumBar, preferenceFactor, type DecidingRow } from './tyre-pressure.ts'
+import { pairTyre, type Pairing } from './tyre-rim.ts'
 import type { PressureResult, WheelPressure } from './wheel-pressure.ts'
 
 export interface Note {
@@ -31,50 +32,69 @@ export function outOfScope(filled: Filled): Note | null {
   return null
 }
 
-/** The rider's own rim, where one is named: a pair that does not go together is refused, whoever the rider is. */
-export function pairingRefusal(
-  { tyre, innerWidthMm, seat: named }: Filled,
-  seat: 'hooked' | 'hookless',
-  rules: Rules,
-): Note[] {
+/** The row of a table that decided, as data: its name, its source and how well that is known. */
+const decidedBy = (row: DecidingRow | null) => (row ? { row: row.row, rowSource: row.source, rowLabel: row.label } : {})
+
+const positions = ['front', 'rear'] as const
+
+/** The pair on the rider's own rim, front and rear; none where no rim is named. */
+function ownPairs({ tyre, innerWidthMm, seat: named }: Filled, seat: 'hooked' | 'hookless', rules: Rules) {
   if (!tyre || innerWidthMm === null || named === 'any') return []
-  return (['front', 'rear'] as const).flatMap((position) => {
+  const { setup } = tyre
+  const hooklessApproved = tyre.hooklessApproved ?? null
+  return positions.map((position) => {
     const widthMm = position === 'front' ? tyre.frontWidthMm : tyre.rearWidthMm
-    const pairing = pairTyre({
-      seat,
-      innerWidthMm,
-      widthMm,
-      setup: tyre.setup,
-      hooklessApproved: tyre.hooklessApproved ?? null,
-      leastOnHookless: rules['hookless-least-tyres'].rows,
-    })
-    if (pairing.verdict !== 'no') return []
-    const widestInnerMm = Math.floor(widthMm - 3)
-    return [
-      note(pairing.code, 'stop', {
-        position,
-        widthMm,
-        innerWidthMm,
-        seat,
-        leastTyreMm: pairing.leastTyreMm,
-        widestHookedInnerMm: widestInnerMm,
-      }),
-    ]
+    const pair = { seat, innerWidthMm, widthMm, setup, hooklessApproved }
+    return { position, widthMm, innerWidthMm, pairing: pairTyre(pair, rules['tyre-rim-pairing']) }
   })
+}
+
+/** Widest hooked rim, in whole mm of inner width, that takes this tyre; 0 where none does. */
+function widestHookedInner(widthMm: number, rules: Rules): number {
+  let innerWidthMm = Math.floor(widthMm)
+  const takes = (): Pairing =>
+    pairTyre(
+      { seat: 'hooked', innerWidthMm, widthMm, setup: 'tubeless', hooklessApproved: null },
+      rules['tyre-rim-pairing'],
+    )
+  while (innerWidthMm > 0 && takes().code === 'tyre-too-narrow-for-rim') innerWidthMm -= 1
+  return innerWidthMm
+}
+
+/** The rider's own rim, where one is named: a pair that does not go together is refused, whoever the rider is. */
+export function pairingRefusal(filled: Filled, seat: 'hooked' | 'hookless', rules: Rules): Note[] {
+  return ownPairs(filled, seat, rules).flatMap(({ position, widthMm, innerWidthMm, pairing }) =>
+    pairing.verdict === 'no'
+      ? [
+          note(pairing.code, 'stop', {
+            position,
+            widthMm,
+            innerWidthMm,
+            seat,
+            leastTyreMm: pairing.leastTyreMm,
+            widestTyreMm: pairing.widestTyreMm,
+            widestHookedInnerMm: widestHookedInner(widthMm, rules),
+            ...decidedBy(pairing.row),
+          }),
+        ]
+      : [],
+  )
 }
 
 export function pressureRefusal(results: { front: PressureResult; rear: PressureResult } | null): Note[] {
   if (!results) return []
   return (['rear', 'front'] as const).flatMap((position) => {
-    const { verdict, nominalMm, ceilingBar, loadKg, widthThatWouldDoMm } = results[position]
+    const { verdict, nominalMm, ceilingBar, ceilingFrom, ceilingRow, loadKg, widthThatWouldDoMm } = results[position]
     return verdict === 'not-suitable'
       ? [
           note('pressure-not-suitable', 'stop', {
             position,
             widthMm: nominalMm,
             ceilingBar,
+            ceilingFrom,
             loadKg,
             widthThatWouldDoMm,
+            ...decidedBy(ceilingRow),
           }),
         ]
       : []
@@ -96,47 +116,98 @@ export function catalogueRefusal(wheelsets: readonly Judgement[], totalKg: numbe
   ]
 }
 
+const lowestCeiling = (results: readonly PressureResult[]) =>
+  results.reduce((low, one) => (one.ceilingBar < low.ceilingBar ? one : low))
+
+/** Start values as the page shows them, with the bounds that rounding must not pass. */
+const start = ({ startBar, floorBar, ceilingBar }: WheelPressure) => ({ startBar, floorBar, ceilingBar })
+
+/**
+ * What the pressures need said: assumed maxima, caps, wider tyres, widths, minima, pairs to check, and how to set and check them.
+ * @param shown whether pressures stand in the answer
+ */
 export function pressureNotes(
   filled: Filled,
   results: { front: PressureResult; rear: PressureResult } | null,
   shown: boolean,
+  rules: Rules,
 ): Note[] {
   if (!filled.tyre || !results) return [note('sharpen', 'info', { field: 'tyre.rearWidthMm' })]
   const { tyre, seat } = filled
   const both = [results.front, results.rear]
+  const lowest = lowestCeiling(both)
   const found: Note[] = []
   if (both.some(({ verdict }) => verdict === 'outside-model'))
-    found.push(note('outside-model', 'caution', { ceilingBar: Math.min(...both.map(({ ceilingBar }) => ceilingBar)) }))
+    found.push(note('outside-model', 'caution', { ceilingBar: lowest.ceilingBar }))
   if (!shown) return found
   if (both.some(({ ceilingFrom }) => ceilingFrom === 'tyre-assumed') || (tyre.maxBar ?? null) === null)
     found.push(note('tyre-max-assumed', 'info', { field: 'tyre.maxBar' }))
   if (seat === 'hookless')
-    found.push(note('hookless-limit', 'caution', { ceilingBar: Math.min(...both.map(({ ceilingBar }) => ceilingBar)) }))
+    found.push(note('hookless-limit', 'caution', { ceilingBar: lowest.ceilingBar, ...decidedBy(lowest.ceilingRow) }))
   if (seat === 'hookless' && (tyre.hooklessApproved ?? null) === null)
     found.push(note('confirm-hookless-tyre', 'caution'))
   const wider = both.find(({ verdict }) => verdict === 'wider-tyre')
   if (wider)
     found.push(
-      note('wider-tyre', 'caution', { widthMm: wider.nominalMm, widthThatWouldDoMm: wider.widthThatWouldDoMm }),
+      note('wider-tyre', 'caution', {
+        widthMm: wider.nominalMm,
+        widthThatWouldDoMm: wider.widthThatWouldDoMm,
+        loadKg: wider.loadKg,
+        ceilingBar: wider.ceilingBar,
+        ceilingFrom: wider.ceilingFrom,
+        ...decidedBy(wider.ceilingRow),
+      }),
     )
   if (both.some(({ verdict }) => verdict === 'at-ceiling')) found.push(note('at-ceiling', 'caution'))
   if (both.some(({ verdict }) => verdict === 'at-floor'))
     found.push(note('at-floor', 'caution', { floorBar: Math.max(...both.map(({ floorBar }) => floorBar)) }))
-  const differs = both.find(({ nominalMm, effectiveMm }) => Math.abs(effectiveMm - nominalMm) > 1.5)
+  const { warnBeyondMm } = rules['measuring-rims']
+  const differs = both.find(({ nominalMm, effectiveMm }) => Math.abs(effectiveMm - nominalMm) > warnBeyondMm)
   if (differs)
     found.push(note('width-differs', 'caution', { nominalMm: differs.nominalMm, effectiveMm: differs.effectiveMm }))
-  const low = both.find(
-    ({ pressure, nominalMm }) => pressure && pressure.startBar < isoMinimumBar(nominalMm, offRoad(filled.ride)),
-  )
-  if (low && tyre.setup === 'tube')
-    found.push(note('below-iso-minimum', 'caution', { minimumBar: isoMinimumBar(low.nominalMm, offRoad(filled.ride)) }))
-  const { innerWidthMm } = filled
-  if (innerWidthMm !== null && seat !== 'any') {
-    const [least, most] = [Math.min(tyre.frontWidthMm, tyre.rearWidthMm), Math.max(tyre.frontWidthMm, tyre.rearWidthMm)]
-    if (least / innerWidthMm < 1.4) found.push(note('narrow-pairing', 'caution', { widthMm: least, innerWidthMm }))
-    if (most / innerWidthMm > 2.25) found.push(note('wide-pairing', 'caution', { widthMm: most, innerWidthMm }))
+  const isoBar = ({ nominalMm }: PressureResult) => isoMinimumBar(nominalMm, offRoad(filled.ride), rules['tyre-minima'])
+  const low = both.find((one) => one.pressure && one.pressure.startBar < isoBar(one))
+  if (low && tyre.setup === 'tube') found.push(note('below-iso-minimum', 'caution', { minimumBar: isoBar(low) }))
+  for (const { pairing, widthMm, innerWidthMm } of ownPairs(
+    filled,
+    seat === 'hookless' ? 'hookless' : 'hooked',
+    rules,
+  )) {
+    const { code, row, leastTyreMm } = pairing
+    const named = code === 'narrow-pairing' || code === 'wide-pairing'
+    if (named && !found.some((one) => one.code === code))
+      found.push(note(code, 'caution', { widthMm, innerWidthMm, ...decidedBy(row) }))
+    // The tables go by the printed width; a tyre that a wide rim has spread may measure enough and be printed too little.
+    if (tyre.measured && widthMm < leastTyreMm + 2 && !found.some((one) => one.code === 'printed-width-counts'))
+      found.push(note('printed-width-counts', 'caution', { widthMm, leastTyreMm, innerWidthMm }))
   }
-  return found
+  return [...found, ...settingNotes(filled, results, rules)]
+}
+
+/** How to set a pressure and what to look at, with what warmth and height do to it, and what some like on rough ground. */
+function settingNotes(
+  { surface }: Filled,
+  { front, rear }: { front: PressureResult; rear: PressureResult },
+  rules: Rules,
+): Note[] {
+  if (!front.pressure || !rear.pressure) return []
+  const { startBar } = rear.pressure
+  const warmer = gaugeAfter(startBar, { fromC: 20, toC: 30, fromM: 0, toM: 0 })
+  const higher = gaugeAfter(startBar, { fromC: 20, toC: 20, fromM: 0, toM: 1000 })
+  const found = [
+    note('measure-cold', 'info', { perTenDegreesBar: warmer - startBar, perThousandMetresBar: higher - startBar }),
+    note('check-bead', 'info'),
+  ]
+  if (surface !== 'rough') return found
+  const factor = preferenceFactor(['rough'], rules['pressure-preferences'])
+  const softer = (pressure: WheelPressure) => ({
+    ...start(pressure),
+    startBar: Math.max(pressure.floorBar, pressure.startBar * factor),
+  })
+  return [
+    ...found,
+    note('softer-by-taste', 'info', { factor, front: softer(front.pressure), rear: softer(rear.pressure) }),
+  ]
 }
 
 /**
@@ -149,9 +220,9 @@ export function hooklessOfferNotes(
   onHookless: { front: PressureResult; rear: PressureResult } | null,
 ): Note[] {
   if (!tyre || !onHookless || !offers.some(({ front, rear }) => [front.seat, rear.seat].includes('hookless'))) return []
-  const ceilingBar = Math.min(onHookless.front.ceilingBar, onHookless.rear.ceilingBar)
+  const { ceilingBar, ceilingRow } = lowestCeiling([onHookless.front, onHookless.rear])
   return [
-    note('hookless-limit', 'caution', { ceilingBar }),
+    note('hookless-limit', 'caution', { ceilingBar, ...decidedBy(ceilingRow) }),
     ...((tyre.hooklessApproved ?? null) === null ? [note('confirm-hookless-tyre', 'caution')] : []),
   ]
 }
@@ -159,7 +230,6 @@ export function hooklessOfferNotes(
 /** Start values for the ride without the bags. */
 export function bareNotes({ luggageKg }: Filled, bare: { front: PressureResult; rear: PressureResult } | null): Note[] {
   if (luggageKg === 0 || !bare?.front.pressure || !bare.rear.pressure) return []
-  const start = ({ startBar, floorBar, ceilingBar }: WheelPressure) => ({ startBar, floorBar, ceilingBar })
   return [
     note('bare-ride-lower-pressure', 'info', {
       front: start(bare.front.pressure),

@@ -4,20 +4,106 @@ import { z } from 'zod'
 const perWidth = z.array(z.tuple([z.number(), z.number()])).min(1)
 const perRide = z.record(z.string(), z.number())
 
+/** A row that can decide a verdict by itself names itself and its own source. */
+const sourced = {
+  row: z.string().regex(/^[a-z0-9.-]{3,40}$/),
+  source: z.string().trim().min(10),
+  label: z.enum(['read', 'memory', 'derived', 'practice']),
+}
+const positive = z.number().positive()
+const upward = (values: readonly number[]) =>
+  values.every((value, index) => index === 0 || value > (values[index - 1] ?? 0))
+const eachOnce = (names: readonly string[]) => new Set(names).size === names.length
+const loadEdges = z.tuple([positive, positive, positive, positive, positive, positive]).refine(upward)
+const band = z.object({ half: positive.max(0.5), loadKg: loadEdges })
+
 /** One schema a table; the name is the table's name in `rule_tables`. */
 const tables = {
   'load-split': z.object({ frontShare: perRide, luggageFrontShare: perRide }),
+  /** The front wheel's design load: at least a part of the rear's, at most a multiple of its own. */
+  'front-design-load': z.object({ leastOfRear: positive.max(1), mostOfOwn: z.number().min(1).max(2) }),
   'target-drops': z.object({
     byRide: perRide,
-    fastTubelessFrom28: z.number(),
-    onRoadMost: z.number(),
-    offRoadMost: z.number(),
-    atLimitSlack: z.number(),
+    fastTubeless: z.object({ fromMm: positive, drop: positive.max(0.3) }),
+    onRoadMost: positive.max(0.3),
+    offRoadMost: positive.max(0.3),
+    atLimitSlack: z.number().min(0).max(0.05),
   }),
-  'assumed-tyre-maxima': z.object({ rows: perWidth, beyondBar: z.number() }),
-  'hookless-caps': z.object({ rows: perWidth }),
-  'hookless-least-tyres': z.object({ rows: perWidth }),
-  'measuring-rims': z.object({ rows: perWidth }),
+  'assumed-tyre-maxima': z.object({ rows: perWidth, beyondBar: positive }),
+  /** Widths upward, caps never rising with width: a wider tyre must not be given more. */
+  'hookless-ceilings': z.object({
+    rows: z
+      .array(z.object({ ...sourced, upToMm: positive, maxBar: positive }))
+      .min(1)
+      .refine((rows) => upward(rows.map(({ upToMm }) => upToMm)), 'widths must rise')
+      .refine((rows) => upward(rows.map(({ maxBar }) => -maxBar)), 'caps must fall'),
+    road: z.object({ ...sourced, maxBar: positive }),
+    tension: z.object({ ...sourced, maxNPerMm: positive }),
+  }),
+  /**
+   * Each row speaks for rims of its bead wall from an inner width on. `inner-plus` and `inner-times`: the edge is worked out from the inner
+   * width; `width`: the edge is a tyre width. `below` and `above` say on which side of the edge the verdict holds.
+   */
+  'tyre-rim-pairing': z.object({
+    rows: z
+      .array(
+        z.object({
+          ...sourced,
+          seat: z.enum(['hooked', 'hookless']),
+          innerFromMm: z.number().min(0),
+          side: z.enum(['below', 'above', 'within']),
+          by: z.enum(['inner-plus', 'inner-times', 'width']),
+          value: z.number().min(0),
+          verdict: z.enum(['ok', 'check', 'no']),
+        }),
+      )
+      .min(1)
+      .refine((rows) => eachOnce(rows.map(({ row }) => row)), 'two rows of one name')
+      .refine(
+        (rows) => rows.every(({ side, verdict }) => (side === 'within') === (verdict === 'ok')),
+        'only within is ok',
+      )
+      .refine(
+        (rows) =>
+          (['hooked', 'hookless'] as const).every((seat) =>
+            (['below', 'above'] as const).every((side) =>
+              rows.some(
+                (one) => one.seat === seat && one.side === side && one.verdict === 'no' && one.innerFromMm === 0,
+              ),
+            ),
+          ),
+        'each bead wall needs a least and a widest tyre for every rim',
+      ),
+    demands: z.object({
+      tubular: z.object(sourced),
+      notApproved: z.object(sourced),
+      tube: z.object(sourced),
+      confirm: z.object(sourced),
+    }),
+    otherwise: z.object(sourced),
+    ownRange: z.object(sourced),
+  }),
+  /** Printed charts, for people to compare with; the verdicts go by the pairing table. */
+  'rim-tyre-charts': z.object({
+    rows: z.array(z.object({ ...sourced, innerMm: positive, fromMm: positive, toMm: positive })).min(1),
+  }),
+  'measuring-rims': z.object({ rows: perWidth, growthPerMm: positive.max(1), warnBeyondMm: positive }),
+  'pressure-bands': z.object({
+    widthMm: z.tuple([positive, positive, positive, positive]).refine(upward),
+    measured: band,
+    nominal: band,
+    outerHalf: positive.max(0.5),
+  }),
+  'tyre-minima': z.object({
+    unmarkedFloorBar: positive,
+    iso: z.object({ narrowUpToMm: positive, narrowBar: positive, otherBar: positive, offRoadBar: positive }),
+  }),
+  'pressure-preferences': z.object({
+    least: positive.max(1),
+    most: z.number().min(1),
+    rows: z.array(z.object({ ...sourced, factor: positive })),
+  }),
+  'rim-proof': z.object({ proofPsi: positive, testFactor: z.number().min(1) }),
   'spoke-limits': z.object({
     counts: z.array(z.number().int()),
     extraKg: z.record(z.string(), z.number()),

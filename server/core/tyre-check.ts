@@ -2,8 +2,9 @@
 import type { Filled } from './answers.ts'
 import type { WheelFacts, WheelsetFacts } from './catalogue.ts'
 import type { Rules } from './rules.ts'
+import type { DecidingRow } from './tyre-pressure.ts'
 import { pairTyre } from './tyre-rim.ts'
-import { wheelPressure } from './wheel-pressure.ts'
+import { pressureOn, wheelTyre, type WheelTyre } from './wheel-pressure.ts'
 
 export interface NearestChange {
   code: string
@@ -22,58 +23,67 @@ export interface TyreCheck {
   codes: string[]
   /** Start values on these rims; null without a tyre, outside the model and where it is ruled out. */
   startBar: { front: number; rear: number } | null
+  /** The rows that judged the pair in front and behind; null without a tyre. */
+  pairing: { front: DecidingRow; rear: DecidingRow } | null
 }
 
 type Tyre = NonNullable<Filled['tyre']>
+type Position = 'front' | 'rear'
+type RimOf = Pick<WheelFacts, 'seat' | 'innerWidthMm' | 'maxPressureBar' | 'tyreMinMm' | 'tyreMaxMm'>
 interface Loaded {
   filled: Filled
   loadsKg: { front: number; rear: number }
   rules: Rules
 }
 
-const positions = ['front', 'rear'] as const
-const widthOf = (tyre: Tyre, position: 'front' | 'rear') =>
-  position === 'front' ? tyre.frontWidthMm : tyre.rearWidthMm
+interface OnRim {
+  rim: RimOf
+  /** Why this rim does not take the tyre. */
+  no: { verdict: 'mismatch' | 'pressure'; code: string } | null
+  codes: string[]
+  startBar: number | null
+  row: DecidingRow
+}
 
-function onWheel(
-  wheel: WheelFacts,
-  tyre: Tyre,
-  { filled, loadsKg, rules }: Loaded,
-): { removal: Removal | null; codes: string[]; startBar: number | null } {
-  const { position, seat, innerWidthMm, maxPressureBar, tyreMinMm, tyreMaxMm } = wheel
-  const widthMm = widthOf(tyre, position)
-  const no = (code: string, verdict: 'mismatch' | 'pressure' = 'mismatch') => ({
-    removal: { verdict, code },
+const positions = ['front', 'rear'] as const
+
+/**
+ * One tyre on one rim. The wheel's own approved range comes before what the general rows would have checked; it never lifts a `no`.
+ * @source tyres reference step 12
+ */
+function onRim(rim: RimOf, tyre: WheelTyre, rules: Rules): OnRim {
+  const { seat, innerWidthMm, maxPressureBar, tyreMinMm, tyreMaxMm } = rim
+  const { widthMm, setup, hooklessApproved } = tyre
+  const table = rules['tyre-rim-pairing']
+  const pairing = pairTyre({ seat, innerWidthMm, widthMm, setup, hooklessApproved }, table)
+  const no = (code: string, row: DecidingRow, verdict: 'mismatch' | 'pressure' = 'mismatch'): OnRim => ({
+    rim,
+    no: { verdict, code },
     codes: [],
     startBar: null,
+    row,
   })
-  const pairing = pairTyre({
-    seat,
-    innerWidthMm,
-    widthMm,
-    setup: tyre.setup,
-    hooklessApproved: tyre.hooklessApproved ?? null,
-    leastOnHookless: rules['hookless-least-tyres'].rows,
-  })
-  if (pairing.verdict === 'no') return no(pairing.code)
-  if (widthMm < tyreMinMm) return no('tyre-too-narrow-for-rim')
-  if (widthMm > tyreMaxMm) return no('tyre-too-wide-for-rim')
-  const result = wheelPressure(
-    { ...filled, tyre },
-    position,
-    loadsKg[position],
-    { seat, innerWidthMm, maxBar: maxPressureBar },
-    rules,
-  )
-  if (result.verdict === 'not-suitable') return no('pressure-not-suitable', 'pressure')
-  const codes = [
-    ...(pairing.verdict === 'check' ? [pairing.code] : []),
-    // The narrow or wide row may be the one that answered: the tyre's approval still has to be asked for.
-    ...(seat === 'hookless' && (tyre.hooklessApproved ?? null) === null ? ['confirm-hookless-tyre'] : []),
-    ...(result.verdict === 'ok' ? [] : [result.verdict]),
-  ]
-  return { removal: null, codes, startBar: result.pressure?.startBar ?? null }
+  if (pairing.verdict === 'no') return no(pairing.code, pairing.row)
+  if (widthMm < tyreMinMm) return no('tyre-too-narrow-for-rim', table.ownRange)
+  if (widthMm > tyreMaxMm) return no('tyre-too-wide-for-rim', table.ownRange)
+  const result = pressureOn(tyre, { seat, innerWidthMm, maxBar: maxPressureBar }, rules)
+  if (result.verdict === 'not-suitable')
+    return no('pressure-not-suitable', result.ceilingRow ?? pairing.row, 'pressure')
+  const codes: string[] = []
+  if (seat === 'hookless' && hooklessApproved === null) codes.push('confirm-hookless-tyre')
+  if (result.verdict !== 'ok') codes.push(result.verdict)
+  const answered = pairing.code === 'narrow-pairing' || pairing.code === 'wide-pairing'
+  const row = answered ? table.ownRange : pairing.row
+  return { rim, no: null, codes, startBar: result.pressure?.startBar ?? null, row }
 }
+
+const alike = (a: RimOf, b: RimOf) =>
+  a === b ||
+  (a.innerWidthMm === b.innerWidthMm &&
+    a.seat === b.seat &&
+    a.maxPressureBar === b.maxPressureBar &&
+    a.tyreMinMm === b.tyreMinMm &&
+    a.tyreMaxMm === b.tyreMaxMm)
 
 /** The tyre that another width would be: its own maximum, minimum and measure are not known. */
 const otherTyre = (tyre: Tyre, widths: Partial<Pick<Tyre, 'frontWidthMm' | 'rearWidthMm'>>): Tyre => ({
@@ -86,43 +96,92 @@ const otherTyre = (tyre: Tyre, widths: Partial<Pick<Tyre, 'frontWidthMm' | 'rear
 
 /**
  * The smallest change of the tyre that lets this wheelset take it: the nearest whole width, else another set-up, else an approved tyre.
+ * @param wrong wheels that do not take the tyre as it is, at least one
  * @returns undefined where none of them does
  */
-function wayBack(set: WheelsetFacts, tyre: Tyre, loaded: Loaded): NearestChange | undefined {
-  const takes = (changed: Tyre) => positions.every((position) => !onWheel(set[position], changed, loaded).removal)
-  const wrong = positions.filter((position) => onWheel(set[position], tyre, loaded).removal)
-  const rims = wrong.map((position) => set[position])
-  const least = Math.ceil(Math.max(...rims.map(({ tyreMinMm }) => tyreMinMm)))
-  const most = Math.floor(Math.min(loaded.filled.bike.maxTyreMm ?? Infinity, ...rims.map(({ tyreMaxMm }) => tyreMaxMm)))
-  const distance = (widthMm: number) =>
-    Math.max(...wrong.map((position) => Math.abs(widthMm - widthOf(tyre, position))))
-  const widthMm = Array.from({ length: Math.max(0, most - least + 1) }, (_, index) => least + index)
-    .sort((a, b) => distance(a) - distance(b))
-    .find((width) => takes(otherTyre(tyre, Object.fromEntries(wrong.map((position) => [`${position}WidthMm`, width])))))
-  if (widthMm !== undefined) {
+function wayBack(
+  rims: Record<Position, RimOf>,
+  tyre: Tyre,
+  wrong: readonly Position[],
+  { filled, loadsKg, rules }: Loaded,
+): NearestChange | undefined {
+  const takes = (changed: Tyre, asked: readonly Position[]) =>
+    asked.every((position) => {
+      const given = { ...filled, tyre: changed }
+      return onRim(rims[position], wheelTyre(given, position, loadsKg[position], rules), rules).no === null
+    })
+  const widthOf = (position: Position) => (position === 'front' ? tyre.frontWidthMm : tyre.rearWidthMm)
+  const widths = wrong.map(widthOf)
+  const least = Math.ceil(Math.max(...wrong.map((position) => rims[position].tyreMinMm)))
+  const most = Math.floor(
+    Math.min(filled.bike.maxTyreMm ?? Infinity, ...wrong.map((position) => rims[position].tyreMaxMm)),
+  )
+  // The nearest to the present widths are the nearest to their middle; of two equally near the narrower comes first. The other wheel keeps its
+  // width, but its printed maximum goes with the old pair.
+  const middle = (Math.min(...widths) + Math.max(...widths)) / 2
+  let down = Math.min(most, Math.floor(middle))
+  let up = Math.max(least, Math.floor(middle) + 1)
+  while (down >= least || up <= most) {
+    const widthMm = down >= least && (up > most || middle - down <= up - middle) ? down-- : up++
+    const changed = otherTyre(tyre, Object.fromEntries(wrong.map((position) => [`${position}WidthMm`, widthMm])))
+    if (!takes(changed, positions)) continue
     const change = { code: 'other-tyre', field: 'tyre.widthMm', to: widthMm }
     return wrong.length === 2 ? change : { ...change, field: `tyre.${wrong[0] ?? 'rear'}WidthMm` }
   }
-  if (tyre.setup !== 'tubeless' && takes({ ...tyre, setup: 'tubeless' }))
+  if (tyre.setup !== 'tubeless' && takes({ ...tyre, setup: 'tubeless' }, positions))
     return { code: 'other-fact', field: 'tyre.setup', to: 'tubeless' }
-  if (tyre.hooklessApproved === false && takes({ ...tyre, hooklessApproved: true }))
+  if (tyre.hooklessApproved === false && takes({ ...tyre, hooklessApproved: true }, positions))
     return { code: 'other-fact', field: 'tyre.hooklessApproved', to: true }
   return undefined
 }
 
-/** @returns the first rule by which these rims do not take the tyre, or the pressures to start from on them */
-export function tyreCheck(set: WheelsetFacts, loaded: Loaded): TyreCheck {
-  const { tyre } = loaded.filled
-  if (!tyre) return { removal: null, codes: ['tyre-unknown'], startBar: null }
-  const [front, rear] = [onWheel(set.front, tyre, loaded), onWheel(set.rear, tyre, loaded)]
-  const removal = front.removal ?? rear.removal
-  if (removal) {
-    const change = wayBack(set, tyre, loaded)
-    return { removal: change ? { ...removal, change } : removal, codes: [], startBar: null }
+/**
+ * Judges wheelsets for one rider's tyre. Rims that are alike in what counts are worked out once, as a range shares few of them.
+ * @returns for each wheelset the first rule by which its rims do not take the tyre, or the pressures to start from on them; answers are shared
+ *   between wheelsets and must not be changed
+ */
+export function tyreChecker(loaded: Loaded): (set: Pick<WheelsetFacts, Position>) => TyreCheck {
+  const { filled, loadsKg, rules } = loaded
+  const { tyre } = filled
+  if (!tyre) {
+    const unknown: TyreCheck = { removal: null, codes: ['tyre-unknown'], startBar: null, pairing: null }
+    return () => unknown
+  }
+  const given = { ...filled, tyre }
+  const tyres = {
+    front: wheelTyre(given, 'front', loadsKg.front, rules),
+    rear: wheelTyre(given, 'rear', loadsKg.rear, rules),
+  }
+  const known: Record<Position, OnRim[]> = { front: [], rear: [] }
+  const of = (position: Position, rim: RimOf): OnRim => {
+    for (const one of known[position]) if (alike(one.rim, rim)) return one
+    const found = onRim(rim, tyres[position], rules)
+    known[position].push(found)
+    return found
+  }
+  const pairs: { front: OnRim; rear: OnRim; check: TyreCheck }[] = []
+  return (set) => {
+    const front = of('front', set.front)
+    const rear = of('rear', set.rear)
+    for (const pair of pairs) if (pair.front === front && pair.rear === rear) return pair.check
+    const check = checkOf(front, rear, tyre, loaded)
+    pairs.push({ front, rear, check })
+    return check
+  }
+}
+
+function checkOf(front: OnRim, rear: OnRim, tyre: Tyre, loaded: Loaded): TyreCheck {
+  const pairing = { front: front.row, rear: rear.row }
+  const no = front.no ?? rear.no
+  if (no) {
+    const wrong = positions.filter((position) => (position === 'front' ? front : rear).no)
+    const change = wayBack({ front: front.rim, rear: rear.rim }, tyre, wrong, loaded)
+    return { removal: change ? { ...no, change } : no, codes: [], startBar: null, pairing }
   }
   return {
     removal: null,
     codes: [...new Set([...front.codes, ...rear.codes])],
     startBar: front.startBar === null || rear.startBar === null ? null : { front: front.startBar, rear: rear.startBar },
+    pairing,
   }
 }

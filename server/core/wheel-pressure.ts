@@ -3,17 +3,18 @@ import type { Filled } from './answers.ts'
 import { offRoad } from './answers.ts'
 import type { Rules } from './rules.ts'
 import { lookUp } from './rules.ts'
+import { pairTyre } from './tyre-rim.ts'
 import {
   bandHalfWidth,
-  byWidth,
   casingTension,
   dropAtPressure,
+  dropFactor,
   effectiveWidth,
   pressureAt15,
-  pressureAtDrop,
   pressureCeiling,
   widthThatWouldDo,
   type CeilingFrom,
+  type DecidingRow,
 } from './tyre-pressure.ts'
 
 export type PressureVerdict = 'ok' | 'at-ceiling' | 'wider-tyre' | 'not-suitable' | 'at-floor' | 'outside-model'
@@ -33,12 +34,16 @@ export interface PressureResult {
   pressure: WheelPressure | null
   ceilingBar: number
   ceilingFrom: CeilingFrom
+  /** The table's row behind the ceiling; null for a maximum printed on tyre or rim. */
+  ceilingRow: DecidingRow | null
   floorBar: number
   loadKg: number
   nominalMm: number
   effectiveMm: number
   p15Bar: number
   targetDrop: number
+  /** Pressure for the target drop, before ceiling and floor. */
+  wantedBar: number
   bandHalf: number | null
   tensionNPerMm: number
   /** Narrowest tyre that would do on this rim; only where the present one does not. */
@@ -51,105 +56,182 @@ export interface RimFacts {
   maxBar: number | null
 }
 
+/** What one wheel's tyre brings to any rim; worked out once for a rider, as a range of rims is asked with it. */
+export interface WheelTyre {
+  widthMm: number
+  measured: boolean
+  /** Inner width of the rim it was measured on, where that is known. */
+  measuredOnMm: number | null
+  setup: 'tubeless' | 'tube' | 'tubular'
+  hooklessApproved: boolean | null
+  loadKg: number
+  beadSeatMm: number
+  targetDrop: number
+  /** (0.15/s)^1.5 of that drop. */
+  factor: number
+  /** Drop at the ceiling up to which the ceiling serves as start, and up to which a wider tyre is advised; beyond: not suitable. */
+  slackDrop: number
+  mostDrop: number
+  maxBar: number | null
+  floorBar: number
+}
+
 /** Drop the use asks for. @source rule table target-drops, PRACTICE */
 export function targetDrop(ride: string, setup: string, widthMm: number, rules: Rules): number {
+  const { byRide, fastTubeless } = rules['target-drops']
+  return ride === 'road-fast' && setup === 'tubeless' && widthMm >= fastTubeless.fromMm
+    ? fastTubeless.drop
+    : lookUp(byRide, ride)
+}
+
+type WithTyre = Pick<Filled, 'ride' | 'beadSeatMm' | 'innerWidthMm'> & { tyre: NonNullable<Filled['tyre']> }
+
+/**
+ * @param loadKg load this wheel is set for (the front's design load in front), > 0
+ * @throws RangeError for a load that is not positive
+ */
+export function wheelTyre(
+  { tyre, ride, beadSeatMm, innerWidthMm }: WithTyre,
+  position: 'front' | 'rear',
+  loadKg: number,
+  rules: Rules,
+): WheelTyre {
+  if (!(loadKg > 0)) throw new RangeError('wheelTyre: out of range')
   const drops = rules['target-drops']
-  return ride === 'road-fast' && setup === 'tubeless' && widthMm >= 28
-    ? drops.fastTubelessFrom28
-    : lookUp(drops.byRide, ride)
+  const widthMm = position === 'front' ? tyre.frontWidthMm : tyre.rearWidthMm
+  const drop = targetDrop(ride, tyre.setup, widthMm, rules)
+  const measured = tyre.measured ?? false
+  return {
+    widthMm,
+    measured,
+    measuredOnMm: measured ? innerWidthMm : null,
+    setup: tyre.setup,
+    hooklessApproved: tyre.hooklessApproved ?? null,
+    loadKg,
+    beadSeatMm,
+    targetDrop: drop,
+    factor: dropFactor(drop),
+    slackDrop: drop + drops.atLimitSlack,
+    mostDrop: offRoad(ride) ? drops.offRoadMost : drops.onRoadMost,
+    maxBar: tyre.maxBar ?? null,
+    floorBar: tyre.minBar ?? rules['tyre-minima'].unmarkedFloorBar,
+  }
+}
+
+/**
+ * Width at which the tyre stands on a rim. A measured width counts as it is on the rim it was measured on, and grows or shrinks from there.
+ * @param innerWidthMm null: unknown, the width stands as given
+ * @source tyres reference step 3
+ */
+export function widthOn(
+  { widthMm, measured, measuredOnMm }: Pick<WheelTyre, 'widthMm' | 'measured' | 'measuredOnMm'>,
+  innerWidthMm: number | null,
+  rules: Rules,
+): number {
+  const table = rules['measuring-rims']
+  if (!measured) return effectiveWidth(widthMm, innerWidthMm, table)
+  return measuredOnMm === null || innerWidthMm === null
+    ? widthMm
+    : widthMm + table.growthPerMm * (innerWidthMm - measuredOnMm)
+}
+
+/**
+ * The pressure of one tyre on one rim. p = clip(p15 · (0.15/s)^1.5, floor, ceiling); over the ceiling the drop at the ceiling decides.
+ * @returns widthThatWouldDoMm always null here; `wheelPressure` looks for it
+ * @source tyres reference steps 3 to 11
+ */
+export function pressureOn(tyre: WheelTyre, rim: RimFacts, rules: Rules): PressureResult {
+  const { widthMm, measured, loadKg, beadSeatMm, factor, floorBar } = tyre
+  const effectiveMm = widthOn(tyre, rim.innerWidthMm, rules)
+  const ceiling = pressureCeiling(
+    { seat: rim.seat, nominalMm: widthMm, effectiveMm, tyreMaxBar: tyre.maxBar, rimMaxBar: rim.maxBar },
+    rules,
+  )
+  const ceilingBar = ceiling.bar
+  const p15Bar = pressureAt15(loadKg, effectiveMm, beadSeatMm)
+  const wantedBar = p15Bar * factor
+  const bandHalf = bandHalfWidth(loadKg, effectiveMm, measured, rules['pressure-bands'])
+
+  let verdict: PressureVerdict = 'ok'
+  if (wantedBar > ceilingBar) {
+    const drop = dropAtPressure(p15Bar, ceilingBar)
+    verdict = drop <= tyre.slackDrop ? 'at-ceiling' : drop <= tyre.mostDrop ? 'wider-tyre' : 'not-suitable'
+  } else if (wantedBar < floorBar) verdict = 'at-floor'
+  // A tyre whose marked minimum lies above its ceiling cannot be set at all.
+  if (floorBar > ceilingBar) verdict = 'not-suitable'
+  const suitable = verdict !== 'not-suitable'
+  if (suitable && bandHalf === null) verdict = 'outside-model'
+
+  const clip = (bar: number) => Math.min(ceilingBar, Math.max(floorBar, bar))
+  // The band lies around the wanted value and is clipped with it: around the clipped one, more load could lower its edge.
+  const startBar = clip(wantedBar)
+  return {
+    verdict,
+    pressure:
+      suitable && bandHalf !== null
+        ? {
+            lowBar: clip(wantedBar * (1 - bandHalf)),
+            startBar,
+            highBar: clip(wantedBar * (1 + bandHalf)),
+            ceilingBar,
+            ceilingFrom: ceiling.from,
+            floorBar,
+          }
+        : null,
+    ceilingBar,
+    ceilingFrom: ceiling.from,
+    ceilingRow: ceiling.row,
+    floorBar,
+    loadKg,
+    nominalMm: widthMm,
+    effectiveMm,
+    p15Bar,
+    targetDrop: tyre.targetDrop,
+    wantedBar,
+    bandHalf,
+    tensionNPerMm: casingTension(startBar, effectiveMm),
+    widthThatWouldDoMm: null,
+  }
+}
+
+/**
+ * Narrowest whole width of another tyre that carries this wheel's load on this rim at the wanted drop. Its own maximum is not known, so the
+ * usual one for its width counts; the rim has to take it.
+ * @source tyres reference step 8
+ */
+export function widerTyre(tyre: WheelTyre, rim: RimFacts, rules: Rules): number | null {
+  const { innerWidthMm, seat } = rim
+  const effectiveAt = (widthMm: number) => effectiveWidth(widthMm, innerWidthMm, rules['measuring-rims'])
+  return widthThatWouldDo(
+    tyre.loadKg,
+    tyre.beadSeatMm,
+    tyre.targetDrop,
+    tyre.widthMm + 1,
+    (widthMm) =>
+      pressureCeiling(
+        { seat, nominalMm: widthMm, effectiveMm: effectiveAt(widthMm), tyreMaxBar: null, rimMaxBar: rim.maxBar },
+        rules,
+      ).bar,
+    effectiveAt,
+    (widthMm) =>
+      innerWidthMm === null ||
+      pairTyre({ seat, innerWidthMm, widthMm, setup: 'tubeless', hooklessApproved: true }, rules['tyre-rim-pairing'])
+        .verdict !== 'no',
+  )
 }
 
 /** @param loadKg load this wheel is set for (the front's design load in front) */
 export function wheelPressure(
-  filled: Filled & { tyre: NonNullable<Filled['tyre']> },
+  filled: WithTyre,
   position: 'front' | 'rear',
   loadKg: number,
   rim: RimFacts,
   rules: Rules,
 ): PressureResult {
-  const { tyre, ride, beadSeatMm } = filled
-  const nominalMm = position === 'front' ? tyre.frontWidthMm : tyre.rearWidthMm
-  const measured = tyre.measured ?? false
-  const effectiveMm = measured ? nominalMm : effectiveWidth(nominalMm, rim.innerWidthMm, rules['measuring-rims'].rows)
-  const assumed = rules['assumed-tyre-maxima']
-  const ceilingAt = (width: number, effective: number) =>
-    pressureCeiling({
-      seat: rim.seat,
-      nominalMm: width,
-      effectiveMm: effective,
-      tyreMaxBar: tyre.maxBar ?? null,
-      rimMaxBar: rim.maxBar,
-      assumedMaxBar: byWidth(assumed.rows, width) ?? assumed.beyondBar,
-      capsBar: rules['hookless-caps'].rows,
-    })
-  const { bar: ceilingBar, from: ceilingFrom } = ceilingAt(nominalMm, effectiveMm)
-  const floorBar = tyre.minBar ?? 1
-  const p15Bar = pressureAt15(loadKg, effectiveMm, beadSeatMm)
-  const drop = targetDrop(ride, tyre.setup, nominalMm, rules)
-  const wanted = pressureAtDrop(p15Bar, drop)
-  const bandHalf = bandHalfWidth(loadKg, effectiveMm, measured)
-  const base = {
-    ceilingBar,
-    ceilingFrom,
-    floorBar,
-    loadKg,
-    nominalMm,
-    effectiveMm,
-    p15Bar,
-    targetDrop: drop,
-    bandHalf,
-    tensionNPerMm: casingTension(Math.min(wanted, ceilingBar), effectiveMm),
-  }
-
-  const drops = rules['target-drops']
-  const dropAtCeiling = dropAtPressure(p15Bar, ceilingBar)
-  let verdict: PressureVerdict = 'ok'
-  if (wanted > ceilingBar) {
-    if (dropAtCeiling <= drop + drops.atLimitSlack) verdict = 'at-ceiling'
-    else
-      verdict = dropAtCeiling <= (offRoad(ride) ? drops.offRoadMost : drops.onRoadMost) ? 'wider-tyre' : 'not-suitable'
-  } else if (wanted < floorBar) verdict = 'at-floor'
-  // A tyre whose marked minimum lies above its ceiling cannot be set at all.
-  if (floorBar > ceilingBar) verdict = 'not-suitable'
-
-  const needsWider = verdict === 'wider-tyre' || verdict === 'not-suitable'
-  const widthThatWouldDoMm = needsWider
-    ? widthThatWouldDo(
-        loadKg,
-        beadSeatMm,
-        drop,
-        Math.max(nominalMm + 1, rim.seat === 'hookless' ? (rim.innerWidthMm ?? 0) + 4 : 0),
-        (width) => {
-          const open = { ...tyre, maxBar: null }
-          return pressureCeiling({
-            seat: rim.seat,
-            nominalMm: width,
-            effectiveMm: width,
-            tyreMaxBar: open.maxBar,
-            rimMaxBar: rim.maxBar,
-            assumedMaxBar: byWidth(assumed.rows, width) ?? assumed.beyondBar,
-            capsBar: rules['hookless-caps'].rows,
-          }).bar
-        },
-      )
-    : null
-  if (verdict !== 'not-suitable' && bandHalf === null) verdict = 'outside-model'
-  if (verdict === 'not-suitable' || bandHalf === null) return { ...base, verdict, pressure: null, widthThatWouldDoMm }
-
-  const clip = (bar: number) => Math.min(ceilingBar, Math.max(floorBar, bar))
-  // The band lies around the wanted value and is clipped with it: around the clipped one, more load could lower its edge.
-  const startBar = clip(wanted)
-  return {
-    ...base,
-    verdict,
-    pressure: {
-      lowBar: clip(wanted * (1 - bandHalf)),
-      startBar,
-      highBar: clip(wanted * (1 + bandHalf)),
-      ceilingBar,
-      ceilingFrom,
-      floorBar,
-    },
-    widthThatWouldDoMm,
-  }
+  const tyre = wheelTyre(filled, position, loadKg, rules)
+  const result = pressureOn(tyre, rim, rules)
+  const tooNarrow =
+    result.wantedBar > result.ceilingBar && dropAtPressure(result.p15Bar, result.ceilingBar) > tyre.slackDrop
+  if (tooNarrow || result.verdict === 'not-suitable') result.widthThatWouldDoMm = widerTyre(tyre, rim, rules)
+  return result
 }
