@@ -3,8 +3,8 @@ import type { Filled } from './answers.ts'
 import type { WheelFacts, WheelsetFacts } from './catalogue.ts'
 import type { Rules } from './rules.ts'
 import type { DecidingRow } from './tyre-pressure.ts'
-import { pairTyre } from './tyre-rim.ts'
-import { pressureOn, wheelTyre, type WheelTyre } from './wheel-pressure.ts'
+import { notOfWidth, pairTyre } from './tyre-rim.ts'
+import { otherWidth, pressureOn, wheelTyre, type WheelTyre } from './wheel-pressure.ts'
 
 export interface NearestChange {
   code: string
@@ -27,7 +27,6 @@ export interface TyreCheck {
   pairing: { front: DecidingRow; rear: DecidingRow } | null
 }
 
-type Tyre = NonNullable<Filled['tyre']>
 type Position = 'front' | 'rear'
 type RimOf = Pick<WheelFacts, 'seat' | 'innerWidthMm' | 'maxPressureBar' | 'tyreMinMm' | 'tyreMaxMm'>
 interface Loaded {
@@ -47,6 +46,14 @@ interface OnRim {
 
 const positions = ['front', 'rear'] as const
 
+const refused = (rim: RimOf, code: string, row: DecidingRow, verdict: 'mismatch' | 'pressure' = 'mismatch'): OnRim => ({
+  rim,
+  no: { verdict, code },
+  codes: [],
+  startBar: null,
+  row,
+})
+
 /**
  * One tyre on one rim. The wheel's own approved range comes before what the general rows would have checked; it never lifts a `no`.
  * @source tyres reference step 12
@@ -56,19 +63,12 @@ function onRim(rim: RimOf, tyre: WheelTyre, rules: Rules): OnRim {
   const { widthMm, setup, hooklessApproved } = tyre
   const table = rules['tyre-rim-pairing']
   const pairing = pairTyre({ seat, innerWidthMm, widthMm, setup, hooklessApproved }, table)
-  const no = (code: string, row: DecidingRow, verdict: 'mismatch' | 'pressure' = 'mismatch'): OnRim => ({
-    rim,
-    no: { verdict, code },
-    codes: [],
-    startBar: null,
-    row,
-  })
-  if (pairing.verdict === 'no') return no(pairing.code, pairing.row)
-  if (widthMm < tyreMinMm) return no('tyre-too-narrow-for-rim', table.ownRange)
-  if (widthMm > tyreMaxMm) return no('tyre-too-wide-for-rim', table.ownRange)
+  if (pairing.verdict === 'no') return refused(rim, pairing.code, pairing.row)
+  if (widthMm < tyreMinMm) return refused(rim, 'tyre-too-narrow-for-rim', table.ownRange)
+  if (widthMm > tyreMaxMm) return refused(rim, 'tyre-too-wide-for-rim', table.ownRange)
   const result = pressureOn(tyre, { seat, innerWidthMm, maxBar: maxPressureBar }, rules)
   if (result.verdict === 'not-suitable')
-    return no('pressure-not-suitable', result.ceilingRow ?? pairing.row, 'pressure')
+    return refused(rim, 'pressure-not-suitable', result.ceilingRow ?? pairing.row, 'pressure')
   const codes: string[] = []
   if (seat === 'hookless' && hooklessApproved === null) codes.push('confirm-hookless-tyre')
   if (result.verdict !== 'ok') codes.push(result.verdict)
@@ -85,54 +85,83 @@ const alike = (a: RimOf, b: RimOf) =>
     a.tyreMinMm === b.tyreMinMm &&
     a.tyreMaxMm === b.tyreMaxMm)
 
-/** The tyre that another width would be: its own maximum, minimum and measure are not known. */
-const otherTyre = (tyre: Tyre, widths: Partial<Pick<Tyre, 'frontWidthMm' | 'rearWidthMm'>>): Tyre => ({
-  ...tyre,
-  ...widths,
-  minBar: null,
-  maxBar: null,
-  measured: false,
-})
-
 /**
  * The smallest change of the tyre that lets this wheelset take it: the nearest whole width, else another set-up, else an approved tyre.
  * @param wrong wheels that do not take the tyre as it is, at least one
+ * @param byWidth the refusals have to do with the width, so that another one may lift them
  * @returns undefined where none of them does
  */
 function wayBack(
   rims: Record<Position, RimOf>,
-  tyre: Tyre,
+  tyres: Record<Position, WheelTyre>,
   wrong: readonly Position[],
-  { filled, loadsKg, rules }: Loaded,
+  byWidth: boolean,
+  { filled, rules }: Loaded,
 ): NearestChange | undefined {
-  const takes = (changed: Tyre, asked: readonly Position[]) =>
-    asked.every((position) => {
-      const given = { ...filled, tyre: changed }
-      return onRim(rims[position], wheelTyre(given, position, loadsKg[position], rules), rules).no === null
-    })
-  const widthOf = (position: Position) => (position === 'front' ? tyre.frontWidthMm : tyre.rearWidthMm)
-  const widths = wrong.map(widthOf)
-  const least = Math.ceil(Math.max(...wrong.map((position) => rims[position].tyreMinMm)))
-  const most = Math.floor(
-    Math.min(filled.bike.maxTyreMm ?? Infinity, ...wrong.map((position) => rims[position].tyreMaxMm)),
-  )
-  // The nearest to the present widths are the nearest to their middle; of two equally near the narrower comes first. The other wheel keeps its
-  // width, but its printed maximum goes with the old pair.
-  const middle = (Math.min(...widths) + Math.max(...widths)) / 2
+  if (byWidth) {
+    const widthMm = nearestWidth(rims, tyres, wrong, filled, rules)
+    if (widthMm !== null) {
+      const field = wrong.length === 2 ? 'tyre.widthMm' : `tyre.${wrong[0] ?? 'rear'}WidthMm`
+      return { code: 'other-tyre', field, to: widthMm }
+    }
+  }
+  const { front, rear } = tyres
+  const takes = (change: Partial<WheelTyre>) =>
+    !onRim(rims.front, { ...front, ...change }, rules).no && !onRim(rims.rear, { ...rear, ...change }, rules).no
+  if (front.setup !== 'tubeless') {
+    // Another set-up may ask for another drop; the width stays as it is measured and marked.
+    const setUp = (position: Position) => {
+      const tyre = filled.tyre
+      return (
+        tyre && wheelTyre({ ...filled, tyre: { ...tyre, setup: 'tubeless' } }, position, tyres[position].loadKg, rules)
+      )
+    }
+    const [inFront, behind] = [setUp('front'), setUp('rear')]
+    if (inFront && behind && !onRim(rims.front, inFront, rules).no && !onRim(rims.rear, behind, rules).no)
+      return { code: 'other-fact', field: 'tyre.setup', to: 'tubeless' }
+  }
+  if (front.hooklessApproved === false && takes({ hooklessApproved: true }))
+    return { code: 'other-fact', field: 'tyre.hooklessApproved', to: true }
+  return undefined
+}
+
+/** Nearest whole width that every wheel in question takes, the narrower of two equally near; the other wheel keeps its own. */
+function nearestWidth(
+  rims: Record<Position, RimOf>,
+  tyres: Record<Position, WheelTyre>,
+  wrong: readonly Position[],
+  { ride, bike }: Filled,
+  rules: Rules,
+): number | null {
+  let least = 0
+  let most = bike.maxTyreMm ?? Infinity
+  let narrowest = Infinity
+  let widest = 0
+  for (const position of wrong) {
+    least = Math.max(least, rims[position].tyreMinMm)
+    most = Math.min(most, rims[position].tyreMaxMm)
+    narrowest = Math.min(narrowest, tyres[position].widthMm)
+    widest = Math.max(widest, tyres[position].widthMm)
+  }
+  // The other wheel's width stays, but what is printed on the old tyre goes with it.
+  for (const position of positions) {
+    if (wrong.includes(position)) continue
+    const kept = otherWidth(tyres[position], tyres[position].widthMm, ride, rules)
+    if (onRim(rims[position], kept, rules).no) return null
+  }
+  least = Math.ceil(least)
+  most = Math.floor(most)
+  const middle = (narrowest + widest) / 2
   let down = Math.min(most, Math.floor(middle))
   let up = Math.max(least, Math.floor(middle) + 1)
   while (down >= least || up <= most) {
     const widthMm = down >= least && (up > most || middle - down <= up - middle) ? down-- : up++
-    const changed = otherTyre(tyre, Object.fromEntries(wrong.map((position) => [`${position}WidthMm`, widthMm])))
-    if (!takes(changed, positions)) continue
-    const change = { code: 'other-tyre', field: 'tyre.widthMm', to: widthMm }
-    return wrong.length === 2 ? change : { ...change, field: `tyre.${wrong[0] ?? 'rear'}WidthMm` }
+    let taken = true
+    for (const position of wrong)
+      taken &&= onRim(rims[position], otherWidth(tyres[position], widthMm, ride, rules), rules).no === null
+    if (taken) return widthMm
   }
-  if (tyre.setup !== 'tubeless' && takes({ ...tyre, setup: 'tubeless' }, positions))
-    return { code: 'other-fact', field: 'tyre.setup', to: 'tubeless' }
-  if (tyre.hooklessApproved === false && takes({ ...tyre, hooklessApproved: true }, positions))
-    return { code: 'other-fact', field: 'tyre.hooklessApproved', to: true }
-  return undefined
+  return null
 }
 
 /**
@@ -164,18 +193,19 @@ export function tyreChecker(loaded: Loaded): (set: Pick<WheelsetFacts, Position>
     const front = of('front', set.front)
     const rear = of('rear', set.rear)
     for (const pair of pairs) if (pair.front === front && pair.rear === rear) return pair.check
-    const check = checkOf(front, rear, tyre, loaded)
+    const check = checkOf(front, rear, tyres, loaded)
     pairs.push({ front, rear, check })
     return check
   }
 }
 
-function checkOf(front: OnRim, rear: OnRim, tyre: Tyre, loaded: Loaded): TyreCheck {
+function checkOf(front: OnRim, rear: OnRim, tyres: Record<Position, WheelTyre>, loaded: Loaded): TyreCheck {
   const pairing = { front: front.row, rear: rear.row }
   const no = front.no ?? rear.no
   if (no) {
     const wrong = positions.filter((position) => (position === 'front' ? front : rear).no)
-    const change = wayBack({ front: front.rim, rear: rear.rim }, tyre, wrong, loaded)
+    const byWidth = !(front.no && notOfWidth(front.no.code)) && !(rear.no && notOfWidth(rear.no.code))
+    const change = wayBack({ front: front.rim, rear: rear.rim }, tyres, wrong, byWidth, loaded)
     return { removal: change ? { ...no, change } : no, codes: [], startBar: null, pairing }
   }
   return {

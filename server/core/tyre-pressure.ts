@@ -194,15 +194,12 @@ export function bandHalfWidth(
   measured: boolean,
   table: Rules['pressure-bands'],
 ): number | null {
-  const [leastMm, plainMm, outerMm, mostMm] = table.widthMm
-  const { half, loadKg: edges } = measured ? table.measured : table.nominal
-  const [leastKg, lightKg, plainFromKg, plainToKg, heavyKg, mostKg] = edges
-  if (widthMm < leastMm || widthMm > mostMm || loadKg < leastKg || loadKg > mostKg) return null
-  const outside = Math.max(
-    ramp(widthMm, plainMm, outerMm),
-    ramp(loadKg, plainToKg, heavyKg),
-    1 - ramp(loadKg, lightKg, plainFromKg),
-  )
+  const { half, loadKg: kg } = measured ? table.measured : table.nominal
+  const mm = table.widthMm
+  // Read by place: taking the edges apart by pattern costs as much as the rest of the pressure.
+  if (widthMm < mm[0] || widthMm > mm[3] || loadKg < kg[0] || loadKg > kg[5]) return null
+  if (widthMm <= mm[1] && loadKg >= kg[2] && loadKg <= kg[3]) return half
+  const outside = Math.max(ramp(widthMm, mm[1], mm[2]), ramp(loadKg, kg[3], kg[4]), 1 - ramp(loadKg, kg[1], kg[2]))
   return half + (table.outerHalf - half) * outside
 }
 

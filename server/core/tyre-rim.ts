@@ -26,6 +26,12 @@ const sayings = {
   },
 } as const
 
+const tubular = { verdict: 'no', code: 'tubular' } as const
+const notApproved = { verdict: 'no', code: 'tyre-not-for-hookless' } as const
+const tubeInside = { verdict: 'no', code: 'tube-on-hookless' } as const
+const confirm = { verdict: 'check', code: 'confirm-hookless-tyre' } as const
+const fitting = { verdict: 'ok', code: 'pairing-ok' } as const
+
 /** Width at which a row begins to speak, mm. */
 export const edgeOf = ({ by, value }: Pick<PairingRow, 'by' | 'value'>, innerWidthMm: number) =>
   by === 'inner-plus' ? innerWidthMm + value : by === 'inner-times' ? innerWidthMm * value : value
@@ -33,10 +39,51 @@ export const edgeOf = ({ by, value }: Pick<PairingRow, 'by' | 'value'>, innerWid
 /** A float's last bit must not move a tyre over an edge. */
 const GUARD_MM = 1e-9
 
+/** A row as numbers: edge = inner · times + plus. */
+interface Edge {
+  innerFromMm: number
+  times: number
+  plus: number
+  below: boolean
+  refuses: boolean
+  row: PairingRow
+}
+interface Edges {
+  edges: readonly Edge[]
+  fits: PairingRow | null
+}
+const prepared = new WeakMap<PairingTable, Record<'hooked' | 'hookless', Edges>>()
+
+/** The rows of each bead wall as numbers, worked out once a table: a range of rims is asked with every rider. */
+function edgesOf(table: PairingTable): Record<'hooked' | 'hookless', Edges> {
+  const known = prepared.get(table)
+  if (known) return known
+  const of = (seat: 'hooked' | 'hookless'): Edges => {
+    const rows = table.rows.filter((row) => row.seat === seat)
+    return {
+      edges: rows
+        .filter(({ side }) => side !== 'within')
+        .map((row) => ({
+          innerFromMm: row.innerFromMm,
+          times: row.by === 'inner-times' ? row.value : row.by === 'inner-plus' ? 1 : 0,
+          plus: row.by === 'inner-times' ? 0 : row.value,
+          below: row.side === 'below',
+          refuses: row.verdict === 'no',
+          row,
+        })),
+      fits: rows.find(({ side }) => side === 'within') ?? null,
+    }
+  }
+  const made = { hooked: of('hooked'), hookless: of('hookless') }
+  prepared.set(table, made)
+  return made
+}
+
 /**
  * The strictest row wins: too narrow, then the demands on the tyre, then too wide, then what has to be checked.
  * @param pair widthMm: printed tyre width; hooklessApproved: null when nobody knows
  * @param table rows speak for rims from their inner width on; the largest least width and the smallest widest width count
+ * @throws RangeError for widths that are not positive
  * @source tyres reference step 12; each row carries its own source, from READ to judgement
  * @example pairTyre({ seat: 'hookless', innerWidthMm: 25, widthMm: 28, … }, table) // no: needs 29, row hookless-25
  */
@@ -51,48 +98,62 @@ export function pairTyre(
   table: PairingTable,
 ): Pairing {
   const { seat, innerWidthMm, widthMm, setup, hooklessApproved } = pair
+  if (!(innerWidthMm > 0 && widthMm > 0)) throw new RangeError('pairTyre: out of range')
+  const { edges, fits } = edgesOf(table)[seat]
   let leastTyreMm = 0
   let widestTyreMm = Infinity
   let least: PairingRow | null = null
   let widest: PairingRow | null = null
-  let check: PairingRow | null = null
-  let fits: PairingRow | null = null
-  for (const row of table.rows) {
-    if (row.seat !== seat || innerWidthMm < row.innerFromMm) continue
-    if (row.side === 'within') {
-      fits ??= row
-      continue
-    }
-    const edgeMm = edgeOf(row, innerWidthMm)
-    if (row.verdict === 'no') {
-      if (row.side === 'below' && edgeMm > leastTyreMm) {
-        leastTyreMm = edgeMm
-        least = row
-      } else if (row.side === 'above' && edgeMm < widestTyreMm) {
+  let check: Edge | null = null
+  for (const edge of edges) {
+    if (innerWidthMm < edge.innerFromMm) continue
+    const edgeMm = innerWidthMm * edge.times + edge.plus
+    if (edge.refuses) {
+      if (edge.below) {
+        if (edgeMm > leastTyreMm) {
+          leastTyreMm = edgeMm
+          least = edge.row
+        }
+      } else if (edgeMm < widestTyreMm) {
         widestTyreMm = edgeMm
-        widest = row
+        widest = edge.row
       }
-    } else if (row.side === 'below' ? widthMm < edgeMm - GUARD_MM : widthMm > edgeMm + GUARD_MM) check ??= row
+    } else if (edge.below ? widthMm < edgeMm - GUARD_MM : widthMm > edgeMm + GUARD_MM) check ??= edge
   }
-  const say = ({ verdict, code }: { verdict: Pairing['verdict']; code: string }, row: DecidingRow | null): Pairing => ({
-    verdict,
-    code,
-    leastTyreMm,
-    widestTyreMm,
-    row: row ?? table.otherwise,
-  })
-  const { tubular, notApproved, tube, confirm } = table.demands
-  if (setup === 'tubular') return say({ verdict: 'no', code: 'tubular' }, tubular)
+  let said: { verdict: Pairing['verdict']; code: string }
+  let row: DecidingRow | null
   const hookless = seat === 'hookless'
-  if (hookless && hooklessApproved === false) return say({ verdict: 'no', code: 'tyre-not-for-hookless' }, notApproved)
-  if (widthMm < leastTyreMm - GUARD_MM) return say(sayings.below.no, least)
-  if (hookless && setup === 'tube' && hooklessApproved !== true)
-    return say({ verdict: 'no', code: 'tube-on-hookless' }, tube)
-  if (widthMm > widestTyreMm + GUARD_MM) return say(sayings.above.no, widest)
-  if (check) return say(sayings[check.side === 'below' ? 'below' : 'above'].check, check)
-  if (hookless && hooklessApproved === null) return say({ verdict: 'check', code: 'confirm-hookless-tyre' }, confirm)
-  return say({ verdict: 'ok', code: 'pairing-ok' }, fits)
+  if (setup === 'tubular') {
+    said = tubular
+    row = table.demands.tubular
+  } else if (hookless && hooklessApproved === false) {
+    said = notApproved
+    row = table.demands.notApproved
+  } else if (widthMm < leastTyreMm - GUARD_MM) {
+    said = sayings.below.no
+    row = least
+  } else if (hookless && setup === 'tube' && hooklessApproved !== true) {
+    said = tubeInside
+    row = table.demands.tube
+  } else if (widthMm > widestTyreMm + GUARD_MM) {
+    said = sayings.above.no
+    row = widest
+  } else if (check) {
+    said = check.below ? sayings.below.check : sayings.above.check
+    row = check.row
+  } else if (hookless && hooklessApproved === null) {
+    said = confirm
+    row = table.demands.confirm
+  } else {
+    said = fitting
+    row = fits
+  }
+  return { verdict: said.verdict, code: said.code, leastTyreMm, widestTyreMm, row: row ?? table.otherwise }
 }
+
+/** Refusals that no other width would lift. */
+export const notOfWidth = (code: string) =>
+  code === tubular.code || code === notApproved.code || code === tubeInside.code
 
 /** Rows of the printed charts that speak of this rim, for the working: the class at or below its inner width. */
 export function chartRows(

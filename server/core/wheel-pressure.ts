@@ -10,6 +10,7 @@ import {
   dropAtPressure,
   dropFactor,
   effectiveWidth,
+  interpolate,
   pressureAt15,
   pressureCeiling,
   widthThatWouldDo,
@@ -74,6 +75,8 @@ export interface WheelTyre {
   mostDrop: number
   maxBar: number | null
   floorBar: number
+  /** Inner width of the rim that its printed width stands for. */
+  measuringRimMm: number
 }
 
 /** Drop the use asks for. @source rule table target-drops, PRACTICE */
@@ -115,6 +118,25 @@ export function wheelTyre(
     mostDrop: offRoad(ride) ? drops.offRoadMost : drops.onRoadMost,
     maxBar: tyre.maxBar ?? null,
     floorBar: tyre.minBar ?? rules['tyre-minima'].unmarkedFloorBar,
+    measuringRimMm: interpolate(rules['measuring-rims'].rows, widthMm),
+  }
+}
+
+/** Another tyre on the same wheel: its own maximum, minimum and measured width are not known. @param ride what the rider rides */
+export function otherWidth(tyre: WheelTyre, widthMm: number, ride: string, rules: Rules): WheelTyre {
+  const drops = rules['target-drops']
+  const drop = targetDrop(ride, tyre.setup, widthMm, rules)
+  return {
+    ...tyre,
+    widthMm,
+    measured: false,
+    measuredOnMm: null,
+    targetDrop: drop,
+    factor: drop === tyre.targetDrop ? tyre.factor : dropFactor(drop),
+    slackDrop: drop + drops.atLimitSlack,
+    maxBar: null,
+    floorBar: rules['tyre-minima'].unmarkedFloorBar,
+    measuringRimMm: interpolate(rules['measuring-rims'].rows, widthMm),
   }
 }
 
@@ -124,16 +146,17 @@ export function wheelTyre(
  * @source tyres reference step 3
  */
 export function widthOn(
-  { widthMm, measured, measuredOnMm }: Pick<WheelTyre, 'widthMm' | 'measured' | 'measuredOnMm'>,
+  tyre: Pick<WheelTyre, 'widthMm' | 'measured' | 'measuredOnMm' | 'measuringRimMm'>,
   innerWidthMm: number | null,
   rules: Rules,
 ): number {
-  const table = rules['measuring-rims']
-  if (!measured) return effectiveWidth(widthMm, innerWidthMm, table)
-  return measuredOnMm === null || innerWidthMm === null
-    ? widthMm
-    : widthMm + table.growthPerMm * (innerWidthMm - measuredOnMm)
+  const knownOnMm = tyre.measured ? tyre.measuredOnMm : tyre.measuringRimMm
+  return innerWidthMm === null || knownOnMm === null
+    ? tyre.widthMm
+    : tyre.widthMm + rules['measuring-rims'].growthPerMm * (innerWidthMm - knownOnMm)
 }
+
+const within = (bar: number, floorBar: number, ceilingBar: number) => Math.min(ceilingBar, Math.max(floorBar, bar))
 
 /**
  * The pressure of one tyre on one rim. p = clip(p15 · (0.15/s)^1.5, floor, ceiling); over the ceiling the drop at the ceiling decides.
@@ -162,17 +185,16 @@ export function pressureOn(tyre: WheelTyre, rim: RimFacts, rules: Rules): Pressu
   const suitable = verdict !== 'not-suitable'
   if (suitable && bandHalf === null) verdict = 'outside-model'
 
-  const clip = (bar: number) => Math.min(ceilingBar, Math.max(floorBar, bar))
   // The band lies around the wanted value and is clipped with it: around the clipped one, more load could lower its edge.
-  const startBar = clip(wantedBar)
+  const startBar = within(wantedBar, floorBar, ceilingBar)
   return {
     verdict,
     pressure:
       suitable && bandHalf !== null
         ? {
-            lowBar: clip(wantedBar * (1 - bandHalf)),
+            lowBar: within(wantedBar * (1 - bandHalf), floorBar, ceilingBar),
             startBar,
-            highBar: clip(wantedBar * (1 + bandHalf)),
+            highBar: within(wantedBar * (1 + bandHalf), floorBar, ceilingBar),
             ceilingBar,
             ceilingFrom: ceiling.from,
             floorBar,

@@ -2,18 +2,18 @@
 import { readdirSync, readFileSync } from 'node:fs'
 import path from 'node:path'
 import { describe, expect, it } from 'vitest'
-import { labels, outcomes, rides, verdicts } from '#contract/advisor.ts'
+import { labels, outcomes, rides, verdicts, wheelCriteria } from '#contract/advisor.ts'
 import { locales } from '#contract/common.ts'
+import { rankedBy } from '#core/judge.ts'
 
 const root = path.resolve(import.meta.dirname, '../..')
 const core = (file: string) => readFileSync(path.join(root, 'server/core', file), 'utf8')
 const all = (text: string, pattern: RegExp) => [...new Set([...text.matchAll(pattern)].map(([, code]) => code ?? ''))]
 
-const [advise, judge, pairing, spokes, pressure, wheelPressure, reasons] = [
+const [advise, judge, pairing, pressure, wheelPressure, reasons] = [
   core('advise.ts') + core('notes.ts'),
   core('judge.ts') + core('tyre-check.ts'),
   core('tyre-rim.ts'),
-  core('spokes.ts'),
   core('tyre-pressure.ts'),
   core('wheel-pressure.ts'),
   core('reasons.ts'),
@@ -26,18 +26,23 @@ const codesOf = {
   'findings.removed': [
     ...all(judge, /code: '([\w-]+)'(?!, field)/g).filter((code) => !/^(other-|lower-)/.test(code)),
     ...all(judge, /\w+\.(?:axles|freehubs), '([\w-]+)'/g),
-    ...all(judge, /return no\('([\w-]+)'/g),
+    ...all(/const limitCodes = (.*?)\n\}/s.exec(judge)?.[1] ?? '', /: '([\w-]+)'/g),
+    ...all(judge, /return refused\(rim, '([\w-]+)'/g),
     ...refusedPairings,
   ],
   'findings.change': all(judge, /change[:=]? ?=? ?\{ code: '([\w-]+)'/g),
   'findings.verdict': verdicts,
   'findings.why': [
-    ...all(/const codes = \[(.*?)\n {4}\]/s.exec(judge)?.[1] ?? '', /'([\w-]+)'/g).filter((code) => code !== ''),
+    ...all(/codes\.push\((.*?)\n {4}judgement\.startBar/s.exec(judge)?.[1] ?? '', /'([a-z]+-[\w-]+)'/g).filter(
+      (code) => code !== 'wheel-criteria',
+    ),
+    ...all(/function spokeVerdict(.*?)\n\}/s.exec(judge)?.[1] ?? '', /'((?:spokes|structure)-[\w-]+)'/g),
     ...all(judge, /codes: \['([\w-]+)'\]/g),
     ...checkedPairings,
     ...pressureVerdicts.filter((code) => code !== 'ok' && code !== 'not-suitable'),
   ],
-  'findings.governedBy': [...all(/const criteria = (.*)/.exec(spokes)?.[1] ?? '', /'([\w-]+)'/g), 'floor'],
+  'findings.governedBy': [...wheelCriteria, 'floor'],
+  'findings.behindBy': rankedBy,
   'findings.ceilingFrom': all(/type CeilingFrom =(.*)/.exec(pressure)?.[1] ?? '', /'([\w-]+)'/g),
   refusal: [...all(advise, /note\(\s*'([\w-]+)',\s*'stop'/g), ...refusedPairings],
 } as const
