@@ -67,7 +67,10 @@ async function migrate(sequelize: Sequelize): Promise<string[]> {
  * @throws PrepareError when there are orders but no marker: that is somebody's real shop
  */
 export async function seedDemo(sequelize: Sequelize, { orders = true }: { orders?: boolean } = {}): Promise<boolean> {
-  if ((await DemoMarker.count()) > 0) return false
+  if ((await DemoMarker.count()) > 0) {
+    await addNewRuleTables()
+    return false
+  }
   if ((await Order.count()) > 0)
     throw new PrepareError('The database holds orders and no demo marker, so the demo is not put into it.')
   const users = await demoUserRows()
@@ -81,6 +84,21 @@ export async function seedDemo(sequelize: Sequelize, { orders = true }: { orders
     await DemoMarker.create({ id: 1, note: DEMO_NOTE, seededAt: DEMO_NOW }, { transaction })
   })
   return true
+}
+
+/**
+ * A demo that was seeded by older code lacks the tables, or the shape of them, that today's sums read. The versions it has stay as they are, and
+ * so does advice frozen under them; what is new comes in force beside them.
+ */
+async function addNewRuleTables() {
+  const known = new Set((await RuleTable.findAll({ raw: true })).map(({ name, version }) => `${name} ${version}`))
+  const fresh = ruleTables.filter(({ name }) => !known.has(`${name} ${RULES_VERSION}`))
+  await RuleTable.bulkCreate(
+    fresh.map(({ name, source, label, data }) => ({
+      ...{ name, source, label, data, version: RULES_VERSION },
+      ...{ inForceFrom: DEMO_NOW, state: 'in-force' as const, ...dated(DEMO_NOW) },
+    })),
+  )
 }
 
 /** Ids are given, not counted by the database, so that two seeds are equal even where rows were deleted before. */
