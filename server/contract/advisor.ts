@@ -102,12 +102,17 @@ const wheelPressure = z.object({
 })
 export type WheelPressure = z.infer<typeof wheelPressure>
 const depthRange = z.object({ from: z.number(), to: z.number() })
+export const wheelCriteria = ['tension-reserve', 'side-stiffness', 'fatigue', 'torque'] as const
 const spokeAdvice = z.object({
   min: z.number(),
   advised: z.number(),
   /** What decides: a criterion of the wheel's structure, or a floor of the trade. */
-  governedBy: z.enum(['tension-reserve', 'side-stiffness', 'fatigue', 'torque', 'floor']),
+  governedBy: z.enum([...wheelCriteria, 'floor']),
   beyondTable: z.boolean(),
+  /** Least count of the trade for this rider, whatever the rim. Advice given before 2026-12.2 lacks this and the limit. */
+  floor: z.number().optional(),
+  /** Ready-to-ride total that the least count carries on the reference rim, with its band. */
+  limitKg: z.object({ low: z.number(), estimate: z.number(), high: z.number() }).nullish(),
 })
 const data = z.record(z.string(), z.unknown())
 
@@ -131,8 +136,16 @@ export const wheelsetVerdict = z.object({
   name: z.string(),
   rank: z.number().int().nullable(),
   verdict: z.enum(verdicts),
+  /** The lowest limit for this rider; limitFrom names it. Advice given before 2026-12.2 knew the stated one alone. */
   limitKg: z.number(),
+  limitFrom: z.enum(['system', 'structure', 'axle-front', 'axle-rear']).optional(),
   marginKg: z.number(),
+  /** What its weaker wheel carries by the structural model, ±25 %. */
+  structure: z
+    .object({ position: z.enum(['front', 'rear']), limitKg: z.number(), governedBy: z.enum(wheelCriteria) })
+    .nullish(),
+  /** What puts it behind the one ranked before it. */
+  behindBy: z.enum(['spokes', 'margin', 'depth', 'made-for', 'tyre', 'mass', 'name']).nullish(),
   codes: z.array(z.string()),
   /** The smallest change that would bring it back. */
   nearestChange: z.object({ code: z.string(), field: z.string(), to: z.unknown() }).optional(),

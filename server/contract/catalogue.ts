@@ -28,6 +28,8 @@ export const wheelFacts = z.object({
   freehubs: z.array(z.string()),
   rotorMount: z.enum(['centre-lock', 'six-bolt']).nullable(),
   massG: z.number(),
+  /** Most that this axle carries, kg; null where its maker states none. */
+  maxAxleLoadKg: z.number().nullable(),
 })
 export type WheelFactsView = z.infer<typeof wheelFacts>
 

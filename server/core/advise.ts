@@ -35,7 +35,8 @@ import {
 } from './reasons.ts'
 import { depthRange, SHALLOWEST_MM, tradeOff, type DepthInputs } from './rim-depth.ts'
 import { lookUp, type Rules } from './rules.ts'
-import { designOf, spokeAdvice, type SpokeAdvice } from './spokes.ts'
+import { useOf } from './rider-limits.ts'
+import { extraKgOf, spokeAdvice, type SpokeAdvice } from './spokes.ts'
 import { wheelPressure, type WheelPressure } from './wheel-pressure.ts'
 
 export interface Advice {
@@ -167,10 +168,13 @@ export function advise(
     rules,
   )
   const brakeHeat = brakeHeatOf(filled, totalKg, rules)
+  const heavier = totalKg / (loads.frontKg + loads.rearKg)
   const situation: Situation = {
     filled,
     totalKg,
     loadsKg,
+    // Limits count the heavier reading of a band, so what rests on the axles grows with it.
+    restingKg: { front: loads.frontKg * heavier, rear: loads.rearKg * heavier },
     depth,
     spokes,
     noCarbonRimBrakes: brakeHeat?.verdict === 'alloy-or-disc',
@@ -236,7 +240,7 @@ export function advise(
       catalogue.filter(({ brake }) => brake === filled.brakes).flatMap((set) => [set.front.depthMm, set.rear.depthMm]),
     ),
   ]
-  const extraKg = lookUp(rules['spoke-limits'].extraKg, designOf(filled.ride, filled.brakes))
+  const extraKg = extraKgOf(useOf(filled.ride, filled.brakes), rules)
   const reasons: Record<string, Reason> = {
     systemMassKg: massReason(filled, totalKg),
     loads: loadReason(filled, loads, share, luggageShare),

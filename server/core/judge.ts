@@ -1,9 +1,10 @@
 /** One wheelset before one rider: the first rule that removes it, or how it ranks. Every reason is a code; the words live with the pages. */
 import type { Filled } from './answers.ts'
 import type { WheelFacts, WheelsetFacts } from './catalogue.ts'
-import { checkLimit } from './limits.ts'
-import type { Rules } from './rules.ts'
-import { structuralLimitKg, type SpokeAdvice } from './spokes.ts'
+import { checkLimit, lowestLimit, type LimitSource } from './limits.ts'
+import { useOf, type Criterion } from './rider-limits.ts'
+import { lookUp, type Rules } from './rules.ts'
+import { structuralLimit, type SpokeAdvice, type StructuralLimit } from './spokes.ts'
 import { tyreChecker, type NearestChange, type Removal, type TyreCheck } from './tyre-check.ts'
 
 export interface Judgement {
@@ -12,9 +13,15 @@ export interface Judgement {
   name: string
   rank: number | null
   verdict: 'fits' | 'no-margin' | 'over-limit' | 'mismatch' | 'pressure'
+  /** The lowest of its limits for this rider, and which one that is. */
   limitKg: number
+  limitFrom: LimitSource
   marginKg: number
+  /** What its weaker wheel carries in this use by the structural model, ±25 %; null while it is not solved. */
+  structure: { position: 'front' | 'rear'; limitKg: number; governedBy: Criterion } | null
   codes: string[]
+  /** What puts it behind the one ranked before it; null for the first and for what is ruled out. */
+  behindBy: (typeof rankedBy)[number] | null
   nearestChange?: NearestChange
   /** Start values on this wheelset's own rims; null where no tyre is known or it is ruled out. */
   startBar: { front: number; rear: number } | null
@@ -38,6 +45,8 @@ export interface Situation {
   filled: Filled
   totalKg: number
   loadsKg: { front: number; rear: number }
+  /** What rests on each wheel, without the design rule for the front. */
+  restingKg: { front: number; rear: number }
   depth: { front: { from: number; to: number }; rear: { from: number; to: number } }
   spokes: { front: SpokeAdvice; rear: SpokeAdvice }
   /** Carbon rim brakes are ruled out on this rider's descents. */
@@ -100,9 +109,11 @@ function bikeMismatch(set: WheelsetFacts, { filled, rules }: Situation): Removal
   return null
 }
 
-function useMismatch(set: WheelsetFacts, { filled, noCarbonRimBrakes }: Situation): Removal | null {
+function useMismatch(set: WheelsetFacts, { filled, noCarbonRimBrakes, rules }: Situation): Removal | null {
   if (!set.rides.includes(filled.ride))
     return { verdict: 'mismatch', code: 'use', change: { code: 'other-fact', field: 'ride', to: set.rides } }
+  if (set.useCondition < lookUp(rules['use-conditions'].leastByRide, filled.ride))
+    return { verdict: 'mismatch', code: 'use-condition' }
   if (filled.assist !== 'none' && !set.assistRated)
     return { verdict: 'mismatch', code: 'assist', change: { code: 'other-fact', field: 'assist', to: 'none' } }
   const seat = filled.seat === 'any' ? undefined : wheels(set).find((wheel) => wheel.seat !== filled.seat)
@@ -114,93 +125,136 @@ function useMismatch(set: WheelsetFacts, { filled, noCarbonRimBrakes }: Situatio
 }
 
 /** Millimetres by which the pair lies outside the advised depths. */
-const outsideDepth = (set: WheelsetFacts, { depth }: Situation) =>
-  [
-    Math.max(0, depth.front.from - set.front.depthMm),
-    Math.max(0, set.front.depthMm - depth.front.to),
-    Math.max(0, depth.rear.from - set.rear.depthMm),
-    Math.max(0, set.rear.depthMm - depth.rear.to),
-  ].reduce((sum, one) => sum + one, 0)
+function outsideDepth({ front, rear }: WheelsetFacts, { depth }: Situation): number {
+  return (
+    Math.max(0, depth.front.from - front.depthMm, front.depthMm - depth.front.to) +
+    Math.max(0, depth.rear.from - rear.depthMm, rear.depthMm - depth.rear.to)
+  )
+}
+
+/** How the spokes stand: met, fewer than usual but carried by this rim with 15 % in hand, or below the advice. */
+function spokeVerdict(set: WheelsetFacts, situation: Situation, structural: StructuralLimit | null) {
+  const { front, rear } = situation.spokes
+  const [frontCount, rearCount] = [set.front.spokeCount, set.rear.spokeCount]
+  if (frontCount >= front.min && rearCount >= rear.min) return 'spokes-met'
+  const floorsMet = frontCount >= front.floor && rearCount >= rear.floor
+  const share = situation.rules['wheel-criteria'].inHandShare
+  return floorsMet && structural && situation.totalKg <= share * structural.limit.systemKg
+    ? 'structure-carries'
+    : 'spokes-below-advice'
+}
 
 const rowsOf = (tyre: TyreCheck | null) =>
   tyre?.pairing ? { front: tyre.pairing.front.row, rear: tyre.pairing.rear.row } : null
 
+/** What ranks the offered ones, in this order; the names are the ones that a judgement gives for standing behind the one before it. */
+export const rankedBy = ['spokes', 'margin', 'depth', 'made-for', 'tyre', 'mass', 'name'] as const
+interface Offered {
+  judgement: Judgement
+  key: readonly number[]
+}
+const bySlug = (a: Judgement, b: Judgement) => (a.slug < b.slug ? -1 : a.slug > b.slug ? 1 : 0)
+
+function firstDifference(a: Offered, b: Offered): number {
+  for (let i = 0; i < a.key.length; i += 1) if (a.key[i] !== b.key[i]) return i
+  return a.key.length
+}
+const byKey = (a: Offered, b: Offered) => {
+  const i = firstDifference(a, b)
+  return i < a.key.length ? (a.key[i] ?? 0) - (b.key[i] ?? 0) : bySlug(a.judgement, b.judgement)
+}
+
 /**
- * Judges and ranks a catalogue for one rider. First what the bike and the use rule out, then the limit, then tyre and pressure. What is left is
- * ranked by: spokes at or above the advice, margin left, depth inside the advised range (too deep in front counts double), made for this ride first,
- * then the lighter pair. Price and stock play no part.
- * @returns ranked ones first, then the ruled-out by name; stable for equal input
+ * Judges and ranks a catalogue for one rider. First what the bike and the use rule out, then the lowest limit, then tyre and pressure. What is
+ * left is ranked by: spokes at or above the advice, margin left, depth inside the advised range (too deep in front counts double), made for this
+ * ride first, tyre wide enough, then the lighter pair. Price and stock play no part.
+ * @returns ranked ones first, each naming what puts it behind the one before it, then the ruled-out by name; stable for equal input
  */
 export function judgeAll(sets: readonly WheelsetFacts[], situation: Situation): Judgement[] {
-  const { totalKg, rules, filled, spokes, depth } = situation
+  const { totalKg, rules, filled, depth } = situation
+  const use = useOf(filled.ride, filled.brakes)
   const tyreOf = tyreChecker(situation)
-  const judged = sets.map((set) => {
-    const { sku, slug, name, limitKg } = set
-    const limit = checkLimit(totalKg, limitKg, rules.limits.noMarginFrom)
-    const base = { sku, slug, name, limitKg, marginKg: limit.marginKg }
-    const over: Removal | null =
-      limit.verdict === 'over-limit'
-        ? {
-            verdict: 'over-limit',
-            code: 'system-mass',
-            change: { code: 'lower-total', field: 'systemMassKg', to: limitKg },
-          }
-        : null
-    const early = bikeMismatch(set, situation) ?? useMismatch(set, situation) ?? over
+  const offered: Offered[] = []
+  const removed: Judgement[] = []
+  for (const set of sets) {
+    const structural = structuralLimit(set, use, rules)
+    const lowest = lowestLimit(set, totalKg, situation.restingKg, structural)
+    const limit = checkLimit(totalKg, lowest.limitKg, rules.limits.noMarginFrom)
+    const judgement: Judgement = {
+      sku: set.sku,
+      slug: set.slug,
+      name: set.name,
+      rank: null,
+      verdict: limit.verdict,
+      limitKg: lowest.limitKg,
+      limitFrom: lowest.from,
+      marginKg: limit.marginKg,
+      structure: structural && {
+        position: structural.position,
+        limitKg: structural.limit.systemKg,
+        governedBy: structural.limit.governedBy,
+      },
+      codes: [],
+      behindBy: null,
+      startBar: null,
+      pairingRows: null,
+    }
+    const early =
+      bikeMismatch(set, situation) ??
+      useMismatch(set, situation) ??
+      (structural && !structural.limit.robust ? notRobust : null) ??
+      (limit.verdict === 'over-limit' ? overLimit(lowest) : null)
     const tyre = early ? null : tyreOf(set)
+    judgement.pairingRows = rowsOf(tyre)
     const removal = early ?? tyre?.removal ?? null
     if (removal) {
-      const judgement: Judgement = {
-        ...base,
-        rank: null,
-        verdict: removal.verdict,
-        codes: [removal.code],
-        startBar: null,
-        pairingRows: rowsOf(tyre),
-      }
+      judgement.verdict = removal.verdict
+      judgement.codes.push(removal.code)
       if (removal.change) judgement.nearestChange = removal.change
-      return { judgement, key: null }
+      removed.push(judgement)
+      continue
     }
     const outsideMm = outsideDepth(set, situation)
     const tooDeepInFront = Math.max(0, set.front.depthMm - depth.front.to)
-    const fewSpokes = set.front.spokeCount < spokes.front.min || set.rear.spokeCount < spokes.rear.min
-    const structural = [set.front, set.rear]
-      .map((wheel) => structuralLimitKg(filled.ride, filled.brakes, wheel, rules))
-      .filter((kg) => kg !== null)
-    const codes = [
-      outsideMm === 0 ? 'depth-in-range' : tooDeepInFront > 0 ? 'depth-too-deep' : 'depth-outside',
-      fewSpokes ? 'spokes-below-advice' : 'spokes-met',
-      ...(set.rides[0] === filled.ride ? ['made-for-this'] : []),
-      ...(structural.some((kg) => totalKg > kg) ? ['structure-near'] : []),
-      ...(tyre?.codes ?? []),
-    ]
-    const key = [
-      Number(fewSpokes),
-      Number(limit.verdict === 'no-margin'),
-      outsideMm + tooDeepInFront,
-      Number(set.rides[0] !== filled.ride),
-      Number(codes.includes('wider-tyre')),
-      set.massG,
-    ]
-    const judgement: Judgement = {
-      ...base,
-      rank: null,
-      verdict: limit.verdict,
-      codes,
-      startBar: tyre?.startBar ?? null,
-      pairingRows: rowsOf(tyre),
-    }
-    return { judgement, key }
+    const spokes = spokeVerdict(set, situation, structural)
+    const madeForThis = set.rides[0] === filled.ride
+    const { codes } = judgement
+    codes.push(outsideMm === 0 ? 'depth-in-range' : tooDeepInFront > 0 ? 'depth-too-deep' : 'depth-outside', spokes)
+    if (madeForThis) codes.push('made-for-this')
+    if (structural && totalKg > rules['wheel-criteria'].inHandShare * structural.limit.systemKg)
+      codes.push('structure-near')
+    if (tyre) codes.push(...tyre.codes)
+    judgement.startBar = tyre?.startBar ?? null
+    offered.push({
+      judgement,
+      key: [
+        Number(spokes === 'spokes-below-advice'),
+        Number(limit.verdict === 'no-margin'),
+        outsideMm + tooDeepInFront,
+        Number(!madeForThis),
+        Number(codes.includes('wider-tyre')),
+        set.massG,
+      ],
+    })
+  }
+  offered.sort(byKey)
+  offered.forEach((one, index) => {
+    one.judgement.rank = index + 1
+    const before = offered[index - 1]
+    if (before) one.judgement.behindBy = rankedBy[firstDifference(before, one)] ?? 'name'
   })
-  const bySlug = (a: Judgement, b: Judgement) => (a.slug < b.slug ? -1 : a.slug > b.slug ? 1 : 0)
-  const offered = judged
-    .flatMap(({ judgement, key }) => (key ? [{ judgement, key }] : []))
-    .sort(
-      (a, b) =>
-        a.key.reduce((found, value, index) => found || value - (b.key[index] ?? 0), 0) ||
-        bySlug(a.judgement, b.judgement),
-    )
-    .map(({ judgement }, index) => ({ ...judgement, rank: index + 1 }))
-  const removed = judged.flatMap(({ judgement, key }) => (key ? [] : [judgement])).sort(bySlug)
-  return [...offered, ...removed]
+  return [...offered.map(({ judgement }) => judgement), ...removed.sort(bySlug)]
 }
+
+const notRobust: Removal = { verdict: 'mismatch', code: 'not-robust' }
+const limitCodes = {
+  system: 'system-mass',
+  structure: 'structure',
+  'axle-front': 'axle-load',
+  'axle-rear': 'axle-load',
+} as const satisfies Record<LimitSource, string>
+const overLimit = ({ limitKg, from }: ReturnType<typeof lowestLimit>): Removal => ({
+  verdict: 'over-limit',
+  code: limitCodes[from],
+  change: { code: 'lower-total', field: 'systemMassKg', to: limitKg },
+})

@@ -17,6 +17,19 @@ const eachOnce = (names: readonly string[]) => new Set(names).size === names.len
 const loadEdges = z.tuple([positive, positive, positive, positive, positive, positive]).refine(upward)
 const band = z.object({ half: positive.max(0.5), loadKg: loadEdges })
 
+/** A wheel of the reference builds with what the structural model found of it. */
+const solved = z.object({
+  count: z.number().int(),
+  firstSlackN: z.number(),
+  lateralNPerMm: z.number(),
+  rangePerN: z.number(),
+  torqueWeightN: z.number(),
+  brokenShiftMm: z.number(),
+  brokenLeastTensionN: z.number(),
+  lateralFirstSlackN: z.number(),
+  share: z.number(),
+})
+
 /** One schema a table; the name is the table's name in `rule_tables`. */
 const tables = {
   'load-split': z.object({ frontShare: perRide, luggageFrontShare: perRide }),
@@ -104,22 +117,34 @@ const tables = {
     rows: z.array(z.object({ ...sourced, factor: positive })),
   }),
   'rim-proof': z.object({ proofPsi: positive, testFactor: z.number().min(1) }),
-  'spoke-limits': z.object({
-    counts: z.array(z.number().int()),
-    extraKg: z.record(z.string(), z.number()),
-    /** Rider limit in kg with its governing letter; x: fails with a broken spoke, f: below the trade floor. */
-    rows: z.array(
+  'wheel-criteria': z.object({
+    byUse: z.record(
+      z.string(),
       z.object({
-        design: z.enum(['road-rim', 'road-disc', 'gravel', 'mountain']),
-        material: z.enum(['alloy', 'carbon']),
-        depthMm: z.number(),
-        front: z.array(z.string().regex(/^\d+[ABCE][xf]?$/)),
-        rear: z.array(z.string().regex(/^\d+[ABCE][xf]?$/)),
+        tyreLoss: z.number(),
+        dynamicFactor: z.number(),
+        sideShare: z.number(),
+        sideMm: z.number(),
+        fatigueFactor: z.number(),
+        loadShare: z.object({ front: z.number(), rear: z.number() }),
+        extraKg: z.number(),
+        leastSideN: z.number(),
       }),
     ),
-    referenceDepthMm: z.record(z.string(), z.number()),
+    buildScatter: z.number(),
+    realStiffness: z.number(),
+    elbowRangeN: z.number(),
+    brokenShiftMm: z.number(),
+    bandShare: z.number(),
+    inHandShare: z.number(),
+  }),
+  /** Solved wheels of the usual builds, by use: what the advised counts are read from. */
+  'reference-wheels': z.object({
+    byUse: z.record(z.string(), z.object({ front: z.array(solved), rear: z.array(solved) })),
   }),
   'spoke-floors': z.object({
+    /** Least count of the trade by use, front and rear. */
+    byUse: z.record(z.string(), z.object({ front: z.number(), rear: z.number() })),
     rearAbove100Kg: z.number(),
     rearAbove120Kg: z.number(),
     bikepacking: z.number(),
@@ -146,6 +171,8 @@ const tables = {
     rotor160AboveKg: z.number(),
     rotor180AboveKg: z.number(),
   }),
+  /** ASTM F2043 condition that a ride asks of the wheels, 1 to 5. */
+  'use-conditions': z.object({ leastByRide: z.record(z.string(), z.number().int().min(1).max(5)) }),
   limits: z.object({ noMarginFrom: z.number(), caliperSlackMm: z.number(), assumedBikeExtraKg: z.number() }),
   defaults: z.object({
     kitMassKg: z.number(),

@@ -1,48 +1,7 @@
-/** How many spokes a wheel needs for a rider: advice on durability, ±20-25 %, never a guarantee. Masses in kg. */
-import type { WheelFacts } from './catalogue.ts'
-import { lookUp, type Rules } from './rules.ts'
-
-export type Design = 'road-rim' | 'road-disc' | 'gravel' | 'mountain'
-
-export function designOf(ride: string, brakes: 'rim' | 'disc'): Design {
-  if (ride === 'cross-country' || ride === 'trail') return 'mountain'
-  if (ride === 'gravel' || ride === 'cyclocross' || ride === 'bikepacking') return 'gravel'
-  return brakes === 'rim' ? 'road-rim' : 'road-disc'
-}
-
-const criteria = { A: 'tension-reserve', B: 'side-stiffness', C: 'fatigue', E: 'torque' } as const
-export type Criterion = (typeof criteria)[keyof typeof criteria]
-
-interface Cell {
-  count: number
-  riderKg: number
-  criterion: Criterion
-  usable: boolean
-}
-
-function cells(
-  row: Rules['spoke-limits']['rows'][number],
-  position: 'front' | 'rear',
-  counts: readonly number[],
-): Cell[] {
-  return row[position].map((text, index) => {
-    const [, kg = '0', letter = 'A', mark = ''] = /^(\d+)([ABCE])([xf]?)$/.exec(text) ?? []
-    return {
-      count: counts[index] ?? 0,
-      riderKg: Number(kg),
-      criterion: criteria[letter as keyof typeof criteria],
-      usable: mark === '',
-    }
-  })
-}
-
-/** The row of the next shallower rim of the same kind, so that the table is never read in the rider's favour. */
-function rowFor(design: Design, material: 'alloy' | 'carbon', depthMm: number, rules: Rules) {
-  return rules['spoke-limits'].rows
-    .filter((row) => row.design === design && row.material === material && row.depthMm <= depthMm)
-    .sort((a, b) => a.depthMm - b.depthMm)
-    .at(-1)
-}
+/** How many spokes a wheel needs for a rider: advice on durability, ±20–25 %, never a guarantee. Masses in kg. */
+import type { WheelFacts, WheelsetFacts } from './catalogue.ts'
+import { riderLimit, useOf, type Criterion, type RiderLimit, type WheelUse } from './rider-limits.ts'
+import type { Rules } from './rules.ts'
 
 export interface SpokeAdvice {
   min: number
@@ -50,73 +9,179 @@ export interface SpokeAdvice {
   governedBy: Criterion | 'floor'
   /** No count up to 36 meets every criterion on the reference rim. */
   beyondTable: boolean
+  /** Least count of the trade for this rider, whatever the rim. */
+  floor: number
+  /** What the least count carries on the reference rim as a ready-to-ride total; the band is ±25 %. Null beyond the table. */
+  limitKg: { low: number; estimate: number; high: number } | null
+}
+
+export interface CountLimit extends RiderLimit {
+  count: number
+}
+
+type Both<T> = Record<'front' | 'rear', T>
+const referenceByRules = new WeakMap<Rules, Map<WheelUse, Both<CountLimit[]>>>()
+
+/** Limits of the reference wheels of a use by count; worked out once for each set of rules. */
+export function referenceLimits(use: WheelUse, rules: Rules): Both<CountLimit[]> {
+  let byUse = referenceByRules.get(rules)
+  if (!byUse) referenceByRules.set(rules, (byUse = new Map<WheelUse, Both<CountLimit[]>>()))
+  const known = byUse.get(use)
+  if (known) return known
+  const wheels = rules['reference-wheels'].byUse[use]
+  if (!wheels) throw new Error(`reference wheels have no row ${use}`)
+  const of = (position: 'front' | 'rear') =>
+    wheels[position].map(({ count, ...strength }) => ({ count, ...riderLimit(strength, position, use, rules) }))
+  const fresh = { front: of('front'), rear: of('rear') }
+  byUse.set(use, fresh)
+  return fresh
+}
+
+export interface CountFloors {
+  front: number
+  rear: number
+  frontMayBeFewerBy: number
 }
 
 /**
- * Least and advised spoke count, front and rear, on the reference rim of the use (30 mm carbon; 25 mm in the mountains).
- * The rider counts as total − (bike and kit that the table adds), so bags count in full. Least: the first usable count whose limit is not below
- * that; then the floors; then the front no more than 4 below the rear. Advised: the same with 15 % in hand.
- * @param totalKg ready-to-ride total
- * @source wheel reference 2.10 and 4.12 (DERIVED), floors PRACTICE
+ * Least count front and rear for a rider, by the limits of one kind of wheel.
+ * The first count at or above the floor that is robust and whose limit is not below the rider. Then front ≥ rear − 4, then rear ≥ front. Where one wheel has no count the pairing is not applied to the other.
+ * @param riderKg rider equivalent: total less the bike and kit of the table
+ * @returns null for a wheel that no count up to 36 serves
+ * @source wheel reference 2.10 steps 4 and 5; pairing is common practice
  */
-export function spokeAdvice(
-  given: { ride: string; brakes: 'rim' | 'disc'; assist: string; totalKg: number; luggageKg: number },
+export function leastCounts(
+  limits: Both<readonly CountLimit[]>,
+  riderKg: number,
+  floors: CountFloors,
+): Both<CountLimit | null> {
+  const least = (position: 'front' | 'rear', floor: number) =>
+    limits[position].find((row) => row.count >= floor && row.robust && row.riderKg >= riderKg) ?? null
+  let front = least('front', floors.front)
+  let rear = least('rear', floors.rear)
+  if (front && rear) {
+    const pairedFloor = rear.count - floors.frontMayBeFewerBy
+    if (front.count < pairedFloor) front = least('front', pairedFloor)
+    if (front && rear.count < front.count) rear = least('rear', front.count)
+  }
+  return { front, rear }
+}
+
+/** Trade floors for this rider on top of those of the use. @source table spoke-floors, PRACTICE */
+function floorsFor(
+  given: { ride: string; assist: string; luggageKg: number },
+  use: WheelUse,
+  riderKg: number,
   rules: Rules,
-): { front: SpokeAdvice; rear: SpokeAdvice } {
-  const design = designOf(given.ride, given.brakes)
-  const { extraKg, referenceDepthMm, counts } = rules['spoke-limits']
-  const riderKg = given.totalKg - lookUp(extraKg, design)
-  const row = rowFor(design, 'carbon', lookUp(referenceDepthMm, design), rules)
-  if (!row) throw new Error(`spoke table has no reference row for ${design}`)
+): CountFloors {
   const floors = rules['spoke-floors']
-  const rearFloor = Math.max(
+  const own = floors.byUse[use] ?? { front: 16, rear: 16 }
+  const rear = Math.max(
+    own.rear,
     riderKg > 120 ? floors.rearAbove120Kg : riderKg > 100 ? floors.rearAbove100Kg : 0,
     given.ride === 'bikepacking' ? floors.bikepacking : 0,
     given.assist === '25' ? floors.assist : 0,
     given.luggageKg >= floors.loadedFromKg ? floors.loaded : 0,
   )
-  const least = (position: 'front' | 'rear', neededKg: number, floor: number): SpokeAdvice => {
-    const usable = cells(row, position, counts).filter((cell) => cell.usable)
-    // Once a count is enough, every higher one has to be enough as well: the table dips at changes of lacing.
-    const found = usable.findIndex((_, index) => usable.slice(index).every((cell) => cell.riderKg >= neededKg))
-    const cell = usable[found] ?? usable.at(-1)
-    const min = Math.max(cell?.count ?? 36, floor)
-    return {
-      min,
-      advised: min,
-      governedBy: cell && cell.count >= floor ? cell.criterion : 'floor',
-      beyondTable: found === -1,
-    }
-  }
-  const both = (neededKg: number) => {
-    const rear = least('rear', neededKg, rearFloor)
-    const front = least('front', neededKg, rear.min - floors.frontMayBeFewerBy)
-    return { front, rear: rear.min >= front.min ? rear : { ...rear, min: front.min } }
-  }
-  const now = both(riderKg)
-  const inHand = both(riderKg / 0.85)
   return {
-    front: { ...now.front, advised: Math.max(now.front.min, inHand.front.min) },
-    rear: { ...now.rear, advised: Math.max(now.rear.min, inHand.rear.min) },
+    front: Math.max(own.front, rear - floors.frontMayBeFewerBy),
+    rear,
+    frontMayBeFewerBy: floors.frontMayBeFewerBy,
   }
 }
 
 /**
- * Structural limit of one wheel as a system mass, from the stand-in table; null where the table has no usable row. Information beside the stated
- * system limit, which decides.
+ * Least and advised spoke count, front and rear, on the reference wheels of the use.
+ * The rider counts as total − (bike and kit that the table adds), so bags count in full. Advised: the same with 15 % in hand.
+ * @param totalKg ready-to-ride total
+ * @source wheel reference 2.10 (DERIVED), floors PRACTICE
  */
-export function structuralLimitKg(
-  ride: string,
-  brakes: 'rim' | 'disc',
-  wheel: Pick<WheelFacts, 'position' | 'material' | 'depthMm' | 'spokeCount'>,
+export function spokeAdvice(
+  given: { ride: string; brakes: 'rim' | 'disc'; assist: string; totalKg: number; luggageKg: number },
   rules: Rules,
-): number | null {
-  const design = designOf(ride, brakes)
-  const row = rowFor(design, wheel.material, wheel.depthMm, rules)
-  const cell =
-    row &&
-    cells(row, wheel.position, rules['spoke-limits'].counts).find(
-      ({ count, usable }) => usable && count === wheel.spokeCount,
-    )
-  return cell ? cell.riderKg + lookUp(rules['spoke-limits'].extraKg, design) : null
+): Both<SpokeAdvice> {
+  const use = useOf(given.ride, given.brakes)
+  const riderKg = given.totalKg - extraKgOf(use, rules)
+  const limits = referenceLimits(use, rules)
+  const floors = floorsFor(given, use, riderKg, rules)
+  const most = limits.rear.at(-1)?.count ?? 36
+  // A rear wheel that nothing serves counts as the highest count for the pairing, so that a heavier rider is never told fewer in front.
+  const counts = (kg: number) => {
+    const found = leastCounts(limits, kg, floors)
+    if (found.rear || !found.front) return found
+    return leastCounts(limits, kg, { ...floors, front: Math.max(floors.front, most - floors.frontMayBeFewerBy) })
+  }
+  const now = counts(riderKg)
+  const inHand = counts(riderKg / rules['wheel-criteria'].inHandShare)
+  const advice = (position: 'front' | 'rear'): SpokeAdvice => {
+    const cell = now[position]
+    const min = cell?.count ?? most
+    return {
+      min,
+      advised: Math.max(min, inHand[position]?.count ?? most),
+      // At a floor the criterion did not decide: the next count down would have carried the rider as well.
+      governedBy: cell
+        ? atFloor(limits[position], cell, riderKg, floors, position, now)
+          ? 'floor'
+          : cell.governedBy
+        : worst(limits[position]),
+      beyondTable: cell === null,
+      floor: floors[position],
+      limitKg: cell ? { low: cell.bandKg.low, estimate: cell.systemKg, high: cell.bandKg.high } : null,
+    }
+  }
+  return { front: advice('front'), rear: advice('rear') }
+}
+
+const worst = (rows: readonly CountLimit[]) => rows.at(-1)?.governedBy ?? 'tension-reserve'
+
+function atFloor(
+  rows: readonly CountLimit[],
+  cell: CountLimit,
+  riderKg: number,
+  floors: CountFloors,
+  position: 'front' | 'rear',
+  found: Both<CountLimit | null>,
+): boolean {
+  const other = position === 'front' ? (found.rear?.count ?? 0) - floors.frontMayBeFewerBy : (found.front?.count ?? 0)
+  if (cell.count !== Math.max(floors[position], other)) return false
+  const below = rows[rows.indexOf(cell) - 1]
+  return below === undefined || (below.robust && below.riderKg >= riderKg)
+}
+
+export const extraKgOf = (use: WheelUse, rules: Rules): number => {
+  const row = rules['wheel-criteria'].byUse[use]
+  if (!row) throw new Error(`wheel criteria have no row ${use}`)
+  return row.extraKg
+}
+
+export interface StructuralLimit {
+  position: 'front' | 'rear'
+  limit: RiderLimit
+}
+const byWheelset = new WeakMap<WheelsetFacts, Map<Rules, Map<WheelUse, StructuralLimit | null>>>()
+
+/**
+ * Structural limit of a wheelset as a ready-to-ride total: the wheel that gives first. Null while a wheel is not solved.
+ * Worked out once for each wheelset, use and set of rules.
+ */
+export function structuralLimit(set: WheelsetFacts, use: WheelUse, rules: Rules): StructuralLimit | null {
+  let byRules = byWheelset.get(set)
+  if (!byRules) byWheelset.set(set, (byRules = new Map<Rules, Map<WheelUse, StructuralLimit | null>>()))
+  let byUse = byRules.get(rules)
+  if (!byUse) byRules.set(rules, (byUse = new Map<WheelUse, StructuralLimit | null>()))
+  const known = byUse.get(use)
+  if (known !== undefined) return known
+  const of = (wheel: WheelFacts): StructuralLimit | null =>
+    wheel.strength ? { position: wheel.position, limit: riderLimit(wheel.strength, wheel.position, use, rules) } : null
+  const [front, rear] = [of(set.front), of(set.rear)]
+  const found = !front || !rear ? null : weaker(front, rear)
+  byUse.set(use, found)
+  return found
+}
+
+/** A wheel that is not robust gives before any that is. */
+const weaker = (front: StructuralLimit, rear: StructuralLimit) => {
+  const rank = ({ limit }: StructuralLimit) => (limit.robust ? limit.systemKg : limit.systemKg - 1e6)
+  return rank(front) < rank(rear) ? front : rear
 }

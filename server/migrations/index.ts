@@ -20,6 +20,7 @@ import * as createRuleTables from './20261201-1015-create-rule-tables.ts'
 import * as createDemoMarker from './20261201-1016-create-demo-marker.ts'
 import * as protectHistory from './20261201-1017-protect-history.ts'
 import * as addRefundLines from './20261201-1018-add-refund-lines.ts'
+import * as addWheelStructure from './20261201-1020-add-wheel-structure.ts'
 
 interface Migration {
   up: (q: QueryInterface) => Promise<unknown>
@@ -46,6 +47,7 @@ const migrations: Record<string, Migration> = {
   '20261201-1016-create-demo-marker': createDemoMarker,
   '20261201-1017-protect-history': protectHistory,
   '20261201-1018-add-refund-lines': addRefundLines,
+  '20261201-1020-add-wheel-structure': addWheelStructure,
 }
 
 /** In the order they run. The shop itself may only read and write rows, so its health check compares names and runs nothing. */

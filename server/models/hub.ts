@@ -16,6 +16,7 @@ export class Hub extends Model<InferAttributes<Hub>, InferCreationAttributes<Hub
   declare flangeLeftMm: number
   declare flangeRightMm: number
   declare assistRated: CreationOptional<boolean>
+  declare maxAxleLoadKg: CreationOptional<number | null> // most that this axle carries; null where its maker states none
   declare massG: number
   declare createdAt: CreationOptional<Date>
   declare updatedAt: CreationOptional<Date>
@@ -37,6 +38,7 @@ export const initHub = (sequelize: Sequelize) =>
       flangeLeftMm: { type: DataTypes.DOUBLE, allowNull: false },
       flangeRightMm: { type: DataTypes.DOUBLE, allowNull: false },
       assistRated: { type: DataTypes.BOOLEAN, allowNull: false, defaultValue: false },
+      maxAxleLoadKg: { type: DataTypes.DOUBLE, allowNull: true },
       massG: { type: DataTypes.DOUBLE, allowNull: false },
       createdAt: DataTypes.DATE(3),
       updatedAt: DataTypes.DATE(3),

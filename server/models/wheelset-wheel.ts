@@ -1,6 +1,8 @@
 /** The front or the rear wheel of a wheelset: which parts, how many spokes, how laced, how tight. */
 import { DataTypes, Model } from 'sequelize'
 import type { CreationOptional, InferAttributes, InferCreationAttributes, NonAttribute, Sequelize } from 'sequelize'
+import type { WheelStrength } from '#core/rider-limits.ts'
+import type { WheelStructure } from '#core/wheel-structure.ts'
 import type { Hub } from './hub.ts'
 import type { Rim } from './rim.ts'
 import type { Spoke } from './spoke.ts'
@@ -18,6 +20,9 @@ export class WheelsetWheel extends Model<InferAttributes<WheelsetWheel>, InferCr
   declare crossesRight: number
   declare tensionTightN: number // on the tighter side
   declare massG: number // whole wheel without rim tape
+  declare designDigest: CreationOptional<string | null>
+  declare strength: CreationOptional<WheelStrength | null> // what the criteria read
+  declare structure: CreationOptional<WheelStructure | null> // all that the model found
   declare createdAt: CreationOptional<Date>
   declare updatedAt: CreationOptional<Date>
 
@@ -41,6 +46,9 @@ export const initWheelsetWheel = (sequelize: Sequelize) =>
       crossesRight: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false },
       tensionTightN: { type: DataTypes.DOUBLE, allowNull: false },
       massG: { type: DataTypes.DOUBLE, allowNull: false },
+      designDigest: { type: DataTypes.CHAR(16), allowNull: true },
+      strength: { type: DataTypes.JSON, allowNull: true },
+      structure: { type: DataTypes.JSON, allowNull: true },
       createdAt: DataTypes.DATE(3),
       updatedAt: DataTypes.DATE(3),
     },

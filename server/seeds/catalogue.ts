@@ -1,5 +1,6 @@
 /** From the rows of wheelset-rows.ts to parts and wheels with ids, as the tables hold them. */
 import type { HubFamily, WheelsetRow } from './wheelset-rows.ts'
+import { usualLacing } from './reference-builds.ts'
 import { wheelsetRows } from './wheelset-rows.ts'
 
 export interface RimSeed {
@@ -74,6 +75,8 @@ interface HubClass {
   freehubs: string[]
   axles: [front: string[], rear: string[]]
   massG: [front: number, rear: number]
+  /** Most that either axle carries, kg, front and rear: invented, as all of the demo. */
+  axleLoadKg: [front: number, rear: number]
   /** left PCD, right PCD, left flange, right flange, mm; wheel reference 3.3 */
   frontMm: [number, number, number, number]
   rearMm: [number, number, number, number]
@@ -93,6 +96,7 @@ const hubClasses: Record<HubFamily, HubClass> = {
     freehubs: ['spline-road', 'pattern-i'],
     axles: [['qr-9x100'], ['qr-10x130']],
     massG: [78, 212],
+    axleLoadKg: [85, 100],
     frontMm: [38, 38, 36, 36],
     rearMm: [44, 50, 37, 17.5],
   },
@@ -107,6 +111,7 @@ const hubClasses: Record<HubFamily, HubClass> = {
       ['12x142', 'qr-10x135'],
     ],
     massG: [112, 232],
+    axleLoadKg: [90, 110],
     frontMm: DISC_FRONT,
     rearMm: DISC_REAR,
   },
@@ -121,6 +126,7 @@ const hubClasses: Record<HubFamily, HubClass> = {
       ['12x142', 'qr-10x135'],
     ],
     massG: [124, 248],
+    axleLoadKg: [95, 115],
     frontMm: DISC_FRONT,
     rearMm: DISC_REAR,
   },
@@ -135,6 +141,7 @@ const hubClasses: Record<HubFamily, HubClass> = {
       ['12x142', 'qr-10x135'],
     ],
     massG: [182, 338],
+    axleLoadKg: [110, 140],
     frontMm: DISC_FRONT,
     rearMm: DISC_REAR,
   },
@@ -149,6 +156,7 @@ const hubClasses: Record<HubFamily, HubClass> = {
       ['12x142', 'qr-10x135'],
     ],
     massG: [198, 384],
+    axleLoadKg: [115, 145],
     frontMm: DISC_FRONT,
     rearMm: DISC_REAR,
   },
@@ -160,6 +168,7 @@ const hubClasses: Record<HubFamily, HubClass> = {
     freehubs: ['thread-mountain', 'fine-spline', 'spline-short'],
     axles: [['15x110'], ['12x148']],
     massG: [148, 268],
+    axleLoadKg: [95, 120],
     frontMm: WIDE_FRONT,
     rearMm: WIDE_REAR,
   },
@@ -171,6 +180,7 @@ const hubClasses: Record<HubFamily, HubClass> = {
     freehubs: ['thread-mountain', 'fine-spline', 'spline-short'],
     axles: [['15x110'], ['12x148']],
     massG: [192, 362],
+    axleLoadKg: [110, 140],
     frontMm: WIDE_FRONT,
     rearMm: WIDE_REAR,
   },
@@ -196,6 +206,7 @@ export const hubs = Object.entries(hubClasses).flatMap(([family, hub], f) =>
       flangeRightMm,
       assistRated: hub.assistRated,
       massG: position === 'front' ? hub.massG[0] : hub.massG[1],
+      maxAxleLoadKg: position === 'front' ? hub.axleLoadKg[0] : hub.axleLoadKg[1],
     }
   }),
 )
@@ -240,14 +251,6 @@ export const spokes = [
   },
 ]
 
-/** Crosses left and right: the builds of the wheel reference 3.6. */
-function lacing(brake: 'rim' | 'disc', position: 'front' | 'rear', count: number): [left: number, right: number] {
-  if (count >= 32) return [3, 3]
-  if (brake === 'disc') return count === 16 ? [1, 1] : count <= 24 ? [2, 2] : [3, 3]
-  if (position === 'front') return count <= 24 ? [0, 0] : [2, 2]
-  return count === 16 ? [0, 1] : count <= 24 ? [0, 2] : [3, 3]
-}
-
 export const rims: RimSeed[] = []
 function rimFor(w: WheelsetRow, depthMm: number): RimSeed {
   const rim = rimOf(w, depthMm, rims.length + 1)
@@ -271,7 +274,7 @@ export const catalogue = wheelsetRows.map((w, i) => {
     const hub = found(hubs, `${w.hubs.toUpperCase()}-${position === 'front' ? 'F' : 'R'}`)
     const spoke = found(spokes, w.spoke)
     const spokeCount = position === 'front' ? w.spokes[0] : w.spokes[1]
-    const [crossesLeft, crossesRight] = lacing(w.brake, position, spokeCount)
+    const [crossesLeft, crossesRight] = usualLacing(w.brake, position, spokeCount)
     const massG = Math.round(rim.massG + hub.massG + spokeCount * spoke.massG)
     return {
       id: 1 + i * 2 + p,

@@ -23,11 +23,14 @@ import { Wheelset } from '../models/wheelset.ts'
 import { WheelsetText } from '../models/wheelset-text.ts'
 import { WheelsetWheel } from '../models/wheelset-wheel.ts'
 import { migrator } from '../migrations/index.ts'
+import { keepSolved } from '../wheel-designs/keep-solved.ts'
+import { designDigest, solveDesign, type WheelToSolve } from '../wheel-designs/solve.ts'
 import { catalogue, hubs, rims, spokes } from './catalogue.ts'
 import { limitProof } from './facts.ts'
 import { markets } from './markets.ts'
 import { demoOrders } from './orders.ts'
 import { RULES_VERSION, ruleTables } from './rule-tables.ts'
+import { solvedWheels } from './solved-wheels.ts'
 import { texts } from './texts.ts'
 import { demoUserRows } from './users.ts'
 
@@ -47,9 +50,9 @@ export class PrepareError extends Error {}
  */
 export async function prepareDatabase(sequelize: Sequelize, { seed }: { seed: boolean }) {
   const migrated = await migrate(sequelize)
-  if (!seed) return { migrated, seeded: false }
   if (!sequelize.isDefined('DemoMarker')) initModels(sequelize)
-  return { migrated, seeded: await seedDemo(sequelize) }
+  const seeded = seed && (await seedDemo(sequelize))
+  return { migrated, seeded, solved: await keepSolved() }
 }
 
 /** Names of the migrations that were run. The runner's own error carries the connection with its password, so only its words go on. */
@@ -84,6 +87,12 @@ export async function seedDemo(sequelize: Sequelize, { orders = true }: { orders
     await DemoMarker.create({ id: 1, note: DEMO_NOTE, seededAt: DEMO_NOW }, { transaction })
   })
   return true
+}
+
+/** From the file of solved wheels where it is up to date, else solved now. */
+function keptSolution(wheel: WheelToSolve) {
+  const { digest, strength, structure } = solvedWheels.designs[designDigest(wheel)] ?? solveDesign(wheel)
+  return { designDigest: digest, strength, structure }
 }
 
 /**
@@ -137,6 +146,7 @@ async function seedRange(transaction: Transaction) {
     catalogue.flatMap((w) =>
       w.wheels.map(({ rim, hub, spoke, ...wheel }) => ({
         ...wheel,
+        ...keptSolution({ rim, hub, spoke, ...wheel }),
         wheelsetId: w.id,
         rimId: rim.id,
         hubId: hub.id,

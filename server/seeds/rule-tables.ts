@@ -1,5 +1,6 @@
 /** The first rule tables: dated data with source and label, which product staff may later replace by newer versions. */
 import type { TableName } from '#core/rules.ts'
+import { solvedWheels } from './solved-wheels.ts'
 
 export const RULES_VERSION = '2026-12.2'
 
@@ -82,12 +83,12 @@ const chart = (
     source,
   }))
 
-const limit = (design: string, material: string, depthMm: number, front: string, rear: string) => ({
-  design,
-  material,
-  depthMm,
-  front: front.split(' '),
-  rear: rear.split(' '),
+/** A row of the criteria with what all uses but the mountains share. */
+const wheelUse = (own: Record<string, number>) => ({
+  ...own,
+  sideShare: 0.15,
+  loadShare: { front: 0.5, rear: 0.6 },
+  leastSideN: 250,
 })
 
 export const ruleTables: readonly RuleTableSeed[] = [
@@ -445,41 +446,50 @@ export const ruleTables: readonly RuleTableSeed[] = [
     data: { proofPsi: 150, testFactor: 1.1 },
   },
   {
-    name: 'spoke-limits',
+    name: 'wheel-criteria',
     label: 'derived',
     source:
-      'Rider limits by spoke count from a finite-element model of rim and pre-tensioned spokes, ±20–25 %; stands in until the model runs for each design',
+      'Criteria of a wheel under a rider and their thresholds by use, ±20–25 % in all: dynamic factor from the variation of hub loads (De Lorenzo & Hull 1999, READ in abstract), side load 0.15 of the rider (DERIVED), elbow range from a Goodman estimate (DERIVED), shift with a broken spoke from the least tyre clearance of ISO 4210-2 (MEMORY), side load 250 N and 370 N from ISO 4210-7 (READ), the rest common practice or assumption',
     data: {
-      counts: [16, 20, 24, 28, 32, 36],
-      extraKg: { 'road-rim': 11, 'road-disc': 11, gravel: 14, mountain: 15 },
-      referenceDepthMm: { 'road-rim': 30, 'road-disc': 30, gravel: 30, mountain: 25 },
-      rows: [
-        limit('road-rim', 'alloy', 18, '82Bx 96Cx 111C 121C 133C 145C', '56Bx 61Ax 69Ax 84A 92A 100A'),
-        limit('road-rim', 'alloy', 24, '97Cx 116C 131C 143C 160C 176C', '67Ax 73Ax 84A 102A 112A 123A'),
-        limit('road-rim', 'carbon', 30, '98Bx 119B 137B 144B 152B 168B', '66Bx 78B 92B 92B 105B 117B'),
-        limit('road-rim', 'carbon', 45, '122B 146B 169B 177B 187B 207B', '80Bf 94B 112B 111B 127B 143B'),
-        limit('road-rim', 'carbon', 60, '143B 172B 199B 208B 219B 244B', '94Bf 110B 131B 128B 149B 168B'),
-        limit('road-disc', 'alloy', 24, '75Ex 99Ex 111E 130E 144E 156E', '71Cx 82Cx 95C 108C 121C 134C'),
-        limit('road-disc', 'carbon', 30, '84Bx 92B 112B 118B 135B 151B', '74Bx 82Bf 100B 105B 121B 136B'),
-        limit('road-disc', 'carbon', 45, '95Ef 111B 136B 143B 166B 186B', '91Bf 98Bf 121B 127B 148B 167B'),
-        limit('road-disc', 'carbon', 60, '102Ef 129B 159B 167B 194B 219B', '106Bf 114Bf 141B 148B 173B 196B'),
-        limit('gravel', 'alloy', 24, '75Cx 86Cx 99C 113C 126C 140C', '57Cx 67Cx 78C 90C 101C 112C'),
-        limit('gravel', 'carbon', 30, '86Ex 101Bf 123C 130B 149B 166B', '68Cx 82Cf 97C 113C 126C 139C'),
-        limit('gravel', 'carbon', 45, '96Ef 123Bf 150B 158B 182B 205B', '84Cf 104Cf 123C 140B 158C 175C'),
-        limit('gravel', 'carbon', 60, '103Ef 143Bf 170E 184B 213B 241B', '97Cf 122Cf 142C 163B 184C 204C'),
-        limit('mountain', 'carbon', 25, '64Cx 78Cf 92C 106C 120C 132C', '56Cx 69Cf 81C 95C 107C 118C'),
-        limit('mountain', 'carbon', 30, '66Cx 80Cf 95C 110C 124C 136C', '58Cx 71Cf 84C 98C 110C 121C'),
-        limit('mountain', 'carbon', 45, '83Cf 103Cf 123C 141C 157C 173C', '72Cx 91Cf 108C 124C 139C 153C'),
-        limit('mountain', 'carbon', 60, '98Cf 123Cf 143C 165C 184C 203C', '85Cx 107Cf 125C 144C 162C 179C'),
-      ],
+      byUse: {
+        'road-rim': wheelUse({ tyreLoss: 0.1, dynamicFactor: 2, sideMm: 2.5, fatigueFactor: 1, extraKg: 11 }),
+        'road-disc': wheelUse({ tyreLoss: 0.1, dynamicFactor: 2, sideMm: 3, fatigueFactor: 1, extraKg: 11 }),
+        gravel: wheelUse({ tyreLoss: 0.05, dynamicFactor: 2.3, sideMm: 3, fatigueFactor: 1.15, extraKg: 14 }),
+        mountain: {
+          ...wheelUse({ tyreLoss: 0.05, dynamicFactor: 2.6, sideMm: 3, fatigueFactor: 1.3, extraKg: 15 }),
+          sideShare: 0.18,
+          loadShare: { front: 0.55, rear: 0.6 },
+          leastSideN: 370,
+        },
+      },
+      buildScatter: 0.15,
+      realStiffness: 0.65,
+      // 100 MPa on the elbow of a 2.0 mm spoke, 3.1416 mm²
+      elbowRangeN: 314.16,
+      brokenShiftMm: 4,
+      bandShare: 0.25,
+      inHandShare: 0.85,
     },
+  },
+  {
+    name: 'reference-wheels',
+    label: 'derived',
+    source:
+      'Usual builds of each use (30 mm carbon rim, in the mountains 25 mm; generic hubs; tight side 1200 N) through the finite-element model of rim and pre-tensioned spokes',
+    data: { byUse: solvedWheels.reference },
   },
   {
     name: 'spoke-floors',
     label: 'practice',
     source:
-      'Trade floors: rear 28 above 100 kg whatever the rim, rear 32 above 120 kg, 28 for bikepacking and assistance, 32 with heavy luggage, front at most 4 fewer than the rear; common practice, no source',
+      'Trade floors: front/rear 16/20 on rim brakes, 20/24 on road discs, 24/24 off the road, rear 28 above 100 kg whatever the rim, rear 32 above 120 kg, 28 for bikepacking and assistance, 32 with heavy luggage, front at most 4 fewer than the rear; common practice, no source',
     data: {
+      byUse: {
+        'road-rim': { front: 16, rear: 20 },
+        'road-disc': { front: 20, rear: 24 },
+        gravel: { front: 24, rear: 24 },
+        mountain: { front: 24, rear: 24 },
+      },
       rearAbove100Kg: 28,
       rearAbove120Kg: 32,
       bikepacking: 28,
@@ -538,6 +548,15 @@ export const ruleTables: readonly RuleTableSeed[] = [
       limitC: 120,
       rotor160AboveKg: 85,
       rotor180AboveKg: 120,
+    },
+  },
+  {
+    name: 'use-conditions',
+    label: 'memory',
+    source:
+      'Conditions of use of ASTM F2043: 1 paved road, 2 unpaved roads and small drops, 3 rough trails; which ride asks for which is judgement',
+    data: {
+      leastByRide: everyRide({ cyclocross: 2, gravel: 2, bikepacking: 2, 'cross-country': 3, trail: 3 }, 1),
     },
   },
   {

@@ -4,7 +4,7 @@ import { advice as adviceSchema, riderAnswers, rides, type RiderAnswers } from '
 import { advise } from '#core/advise.ts'
 import { checkLimit } from '#core/limits.ts'
 import { rulesFrom, tableNames } from '#core/rules.ts'
-import { spokeAdvice, structuralLimitKg } from '#core/spokes.ts'
+import { spokeAdvice } from '#core/spokes.ts'
 import { KG_PER_LB } from '#core/units.ts'
 import { wheelsetFacts } from '../../server/seeds/facts.ts'
 import { ruleTables } from '../../server/seeds/rule-tables.ts'
@@ -341,7 +341,7 @@ describe('limits', () => {
   })
 })
 
-describe('spokes, from the stand-in table (wheel reference 4.12 and 4.13)', () => {
+describe('spokes, from the reference wheels (wheel reference 4.13)', () => {
   const of = (totalKg: number, more: Partial<Parameters<typeof spokeAdvice>[0]> = {}) => {
     const { front, rear } = spokeAdvice(
       { ride: 'road-long', brakes: 'disc', assist: 'none', luggageKg: 0, totalKg, ...more },
@@ -378,12 +378,6 @@ describe('spokes, from the stand-in table (wheel reference 4.12 and 4.13)', () =
     expect(of(90, { ride: 'bikepacking' })).toBe('24/28')
     expect(of(90, { assist: '25' })).toBe('24/28')
     expect(of(90, { luggageKg: 25 })).toBe('28/32')
-  })
-  it('reads the table at the next shallower rim, never in the rider’s favour', () => {
-    const rear = { position: 'rear', material: 'carbon', spokeCount: 24 } as const
-    expect(structuralLimitKg('road-long', 'disc', { ...rear, depthMm: 44 }, rules)).toBe(100 + 11)
-    expect(structuralLimitKg('road-long', 'disc', { ...rear, depthMm: 45 }, rules)).toBe(121 + 11)
-    expect(structuralLimitKg('road-long', 'disc', { ...rear, depthMm: 25 }, rules)).toBeNull()
   })
 })
 

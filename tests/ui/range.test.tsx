@@ -20,7 +20,15 @@ const wheel = (position: 'front' | 'rear', depthMm: number, spokeCount: number):
   ...{ position, rimName: 'Rim', hubName: 'Hub', spokeName: 'Spoke', material: 'carbon', depthMm, spokeCount },
   ...{ innerWidthMm: 21, outerWidthMm: 28, seat: 'hooked', maxPressureBar: 7, tyreMinMm: 28, tyreMaxMm: 47 },
   ...{ crossesLeft: 2, crossesRight: 2, tensionTightN: 1200 },
-  ...{ pcdLeftMm: 58, pcdRightMm: 54, flangeLeftMm: 34, flangeRightMm: 19, rotorMount: 'centre-lock', massG: 700 },
+  ...{
+    pcdLeftMm: 58,
+    pcdRightMm: 54,
+    flangeLeftMm: 34,
+    flangeRightMm: 19,
+    maxAxleLoadKg: 90,
+    rotorMount: 'centre-lock',
+    massG: 700,
+  },
   axles: position === 'front' ? ['12x100'] : ['12x142', 'qr-10x135'],
   freehubs: position === 'front' ? [] : ['spline-road', 'thread-road'],
 })

@@ -3,16 +3,20 @@
  * Two statements however many wheelsets there are, and no cache: a lowered limit counts from the next call on.
  */
 import { QueryTypes, type Transaction } from 'sequelize'
-import type { Wheelset } from '#contract/catalogue.ts'
+import type { Wheelset, WheelFactsView } from '#contract/catalogue.ts'
 import type { Locale } from '#contract/common.ts'
+import type { WheelStrength } from '#core/rider-limits.ts'
 import type { Deps } from '../../deps.ts'
 
 /** What the shop knows of a wheelset beyond what riders see. */
-export interface StoredWheelset extends Wheelset {
+export interface StoredWheelset extends Omit<Wheelset, 'front' | 'rear'> {
   id: number
   version: number
   onSale: boolean
+  front: StoredWheel
+  rear: StoredWheel
 }
+export type StoredWheel = WheelFactsView & { strength: WheelStrength | null }
 
 interface WheelRow {
   id: number
@@ -45,7 +49,8 @@ const WHEELS = `
     r.inner_width_mm AS innerWidthMm, r.outer_width_mm AS outerWidthMm, r.seat, r.max_pressure_bar AS maxPressureBar,
     r.tyre_min_mm AS tyreMinMm, r.tyre_max_mm AS tyreMaxMm, ww.spoke_count AS spokeCount, ww.crosses_left AS crossesLeft,
     ww.crosses_right AS crossesRight, ww.tension_tight_n AS tensionTightN, h.pcd_left_mm AS pcdLeftMm, h.pcd_right_mm AS pcdRightMm,
-    h.flange_left_mm AS flangeLeftMm, h.flange_right_mm AS flangeRightMm, h.axles, h.freehubs, h.rotor_mount AS rotorMount, ww.mass_g AS massG
+    h.flange_left_mm AS flangeLeftMm, h.flange_right_mm AS flangeRightMm, h.axles, h.freehubs, h.rotor_mount AS rotorMount, ww.mass_g AS massG,
+    h.max_axle_load_kg AS maxAxleLoadKg, ww.strength
   FROM wheelsets w
   JOIN wheelset_wheels ww ON ww.wheelset_id = w.id
   JOIN rims r ON r.id = ww.rim_id
@@ -152,8 +157,8 @@ function emptySet(row: WheelRow): StoredWheelset {
 const wheelFields = [
   'position', 'rimName', 'hubName', 'spokeName', 'material', 'depthMm', 'innerWidthMm', 'outerWidthMm', 'seat', 'maxPressureBar',
   'tyreMinMm', 'tyreMaxMm', 'spokeCount', 'crossesLeft', 'crossesRight', 'tensionTightN', 'pcdLeftMm', 'pcdRightMm', 'flangeLeftMm',
-  'flangeRightMm', 'axles', 'freehubs', 'rotorMount', 'massG',
-] as const satisfies readonly (keyof Wheelset['front'])[] // prettier-ignore
+  'flangeRightMm', 'axles', 'freehubs', 'rotorMount', 'massG', 'maxAxleLoadKg', 'strength',
+] as const satisfies readonly (keyof StoredWheel)[] // prettier-ignore
 
-const wheelOf = (row: Record<string, unknown>): Wheelset['front'] =>
-  Object.fromEntries(wheelFields.map((name) => [name, row[name]])) as unknown as Wheelset['front']
+const wheelOf = (row: Record<string, unknown>): StoredWheel =>
+  Object.fromEntries(wheelFields.map((name) => [name, row[name]])) as unknown as StoredWheel
