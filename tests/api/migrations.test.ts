@@ -165,6 +165,21 @@ describe('the demo seed', () => {
     expect(await contents()).toBe(before)
   })
 
+  it('gives a demo of older code the rule tables it lacks, and leaves those it has', async () => {
+    await db.query("DELETE FROM rule_tables WHERE name = 'tyre-rim-pairing'")
+    await db.query("UPDATE rule_tables SET version = '2026-12.0', data = '{}' WHERE name = 'measuring-rims'")
+    const versions = () => all<object>('SELECT name, version FROM rule_tables ORDER BY name, version')
+    const before = await versions()
+    expect((await prepareDatabase(db, { seed: true })).seeded).toBe(false)
+    const after = await versions()
+    expect(after).toEqual(expect.arrayContaining(before))
+    expect(after).toHaveLength(before.length + 2)
+    const newest = await all<{ data: unknown }>(
+      "SELECT data FROM rule_tables WHERE name = 'measuring-rims' ORDER BY in_force_from DESC, id DESC LIMIT 1",
+    )
+    expect(JSON.stringify(newest)).toContain('growthPerMm')
+  })
+
   it('is the same, byte for byte, in an emptied database', async () => {
     await emptyDatabase(db)
     await prepareDatabase(db, { seed: true })
