@@ -30,11 +30,14 @@ export function DataTable({
   columns,
   children,
   className,
+  still = false,
 }: {
   caption: ReactNode
   columns: readonly Column[]
   children: ReactNode
   className?: string
+  /** A table of a few rows: its head need not follow. */
+  still?: boolean
 }) {
   return (
     // The arrows only move the focus between the rows' own links, which stay reachable by Tab without them.
@@ -47,7 +50,7 @@ export function DataTable({
             <th
               key={key}
               scope="col"
-              className={`sticky top-0 z-10 border-b border-ink bg-sheet px-2 py-2 align-bottom text-xs font-[650] text-soft first:ps-0 last:pe-0 print:static ${figure ? 'text-end' : 'text-start'} ${extra ?? ''}`}
+              className={`${still ? '' : 'sticky top-0 z-10'} border-b border-ink bg-sheet px-2 py-2 align-bottom text-xs font-[650] text-soft first:ps-0 last:pe-0 print:static ${figure ? 'text-end' : 'text-start'} ${extra ?? ''}`}
             >
               {head}
             </th>

@@ -32,7 +32,8 @@ export function LimitDecision({ row, change }: { row: LimitRow; change: LimitVer
       <div className="grid gap-x-8 gap-y-3 p-4 md:grid-cols-[minmax(0,1fr)_minmax(0,1.15fr)]">
         <div>
           <h3 className="text-lg!">
-            {row.name}{' '}
+            {row.name}
+            {', '}
             <span className="whitespace-nowrap">
               {currentKg === null
                 ? kg(change.limitKg)

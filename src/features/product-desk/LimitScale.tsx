@@ -10,7 +10,7 @@ export function LimitScale({ currentKg, newKg }: { currentKg: number | null; new
   const to = currentKg === null ? newKg : Math.max(currentKg, newKg)
   const lowered = currentKg !== null && newKg < currentKg
   return (
-    <svg aria-hidden viewBox={`-2 0 ${WIDTH + 4} 34`} className="w-full max-w-90">
+    <svg aria-hidden viewBox={`-9 0 ${WIDTH + 18} 34`} className="w-full max-w-90">
       <rect x="0" y="8" width={at(from)} height="6" fill="var(--line)" />
       <rect
         x={at(from)}

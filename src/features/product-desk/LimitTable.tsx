@@ -26,7 +26,7 @@ export function LimitTable({ rows }: { rows: readonly LimitRow[] }) {
               type="button"
               data-row
               aria-expanded={open === sku}
-              className="text-start font-bold underline decoration-1 underline-offset-4"
+              className="text-start font-bold whitespace-nowrap underline decoration-1 underline-offset-4"
               onClick={() => setOpen(open === sku ? null : sku)}
             >
               {name}

@@ -32,7 +32,7 @@ export function WheelsetTable({ rows }: { rows: readonly ProductRow[] }) {
             <Link data-row to={`/product/wheelsets/${row.sku}`} className="font-bold text-ink">
               {row.name}
             </Link>
-            <span className="block text-xs text-soft">{row.sku}</span>
+            <span className="block text-xs break-words text-soft">{row.sku}</span>
           </Cell>
           <Cell className="max-lg:hidden">
             {t(`brake.${row.brake}`)}, {row.beadSeatMm}
@@ -51,7 +51,7 @@ export function WheelsetTable({ rows }: { rows: readonly ProductRow[] }) {
               `${f.number(row.limitKg, Number.isInteger(row.limitKg) ? 0 : 1)}\u00a0kg`
             )}
             {row.draftedLimits > 0 && (
-              <span className="block text-xs font-bold text-near">
+              <span className="ms-auto block max-w-32 text-xs font-bold whitespace-normal text-near">
                 {t('wheelsets.drafted', { count: row.draftedLimits })}
               </span>
             )}
@@ -62,7 +62,10 @@ export function WheelsetTable({ rows }: { rows: readonly ProductRow[] }) {
             </Cell>
           ))}
           <Cell figure>
-            <span className={row.onHand - row.reserved === 0 ? 'font-bold text-near' : ''}>{f.number(row.onHand)}</span>
+            {f.number(row.onHand)}
+            {row.onHand <= row.reserved && (
+              <span className="block text-xs font-bold text-near">{t('wheelsets.noneFree')}</span>
+            )}
             {row.reserved > 0 && (
               <span className="block text-xs text-soft">{t('wheelsets.reserved', { count: row.reserved })}</span>
             )}

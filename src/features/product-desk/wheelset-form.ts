@@ -1,6 +1,6 @@
 /** What the edit form holds while it is typed in, and how it becomes the contract's change. Only touched groups are sent. */
 import { z } from 'zod'
-import { currencies, locales, type Currency } from '#contract/common.ts'
+import { currencies, locales, staffReason, type Currency } from '#contract/common.ts'
 import { productChange, type ProductChange, type ProductWheelset } from '#contract/product-desk.ts'
 import { readMoney, typeMoney } from '../../lib/form-words.ts'
 
@@ -37,6 +37,7 @@ const whole = z.string().transform((text, ctx) => {
   if (!/^\d{1,6}$/.test(text.trim())) ctx.addIssue({ code: 'custom', message: 'not-whole' })
   return Number(text)
 })
+// Empty words may be there already; they are refused only where they were typed.
 const words = z.object({ tagline: z.string(), description: z.string() })
 
 const same = (a: { tagline: string; description: string }, b: { tagline: string; description: string }) =>
@@ -50,7 +51,8 @@ export const wheelsetSchema = (seen: ProductWheelset) =>
       prices: z.object({ EUR: money, GBP: money, USD: money }),
       stock: z.object({ onHand: whole }),
       onSale: z.boolean(),
-      reason: z.string(),
+      // Said here as well as in the contract, so that every wrong field is named at once.
+      reason: staffReason,
       confirmJump: z.boolean(),
     })
     .transform(({ texts, prices, stock, onSale, reason, confirmJump }): z.input<typeof productChange> => {

@@ -43,8 +43,13 @@ export function FrozenAdvicePanel({ advice, orderNumber }: { advice: readonly Fr
 }
 
 function OneAdvice({ advice, onReveal }: { advice: FrozenAdvice; onReveal: () => void }) {
-  const { t } = useTranslation('support-desk')
+  const { t } = useTranslation(['support-desk', 'advisor'])
   const f = useFormat()
+  // A note whose sentence needs figures stays a code here: those figures are withheld.
+  const noteWords = (code: string) => {
+    const words = t([`advisor:notes.${code}`, 'answer.name.other'], { name: code, skipInterpolation: true })
+    return words.includes('{{') ? code : words
+  }
   // Frozen under whatever contract held then: what no longer reads is passed over, never guessed.
   const pressure = adviceContract.shape.pressure.safeParse(advice.pressure).data ?? null
   const depth = adviceContract.shape.rimDepthMm.safeParse(advice.rimDepthMm).data ?? null
@@ -68,11 +73,17 @@ function OneAdvice({ advice, onReveal }: { advice: FrozenAdvice; onReveal: () =>
       <h3 className="mt-4 mb-1">{t('advice.said')}</h3>
       {advice.outcome !== null && <p>{t([`advice.outcome.${advice.outcome}`, 'advice.outcome.other'])}</p>}
       <table className="w-full">
-        <thead className="sr-only">
+        <thead className="text-xs text-soft">
           <tr>
-            <th>{t('advice.quantity')}</th>
-            <th>{t('advice.front')}</th>
-            <th>{t('advice.rear')}</th>
+            <th scope="col">
+              <span className="sr-only">{t('advice.quantity')}</span>
+            </th>
+            <th scope="col" className="text-end font-medium">
+              {t('advice.front')}
+            </th>
+            <th scope="col" className="ps-3 text-end font-medium">
+              {t('advice.rear')}
+            </th>
           </tr>
         </thead>
         <tbody>
@@ -120,7 +131,11 @@ function OneAdvice({ advice, onReveal }: { advice: FrozenAdvice; onReveal: () =>
         ))}
       </ul>
       {advice.notes.length > 0 && (
-        <p className="mt-1 text-soft">{t('advice.notes', { codes: f.list(advice.notes.map(({ code }) => code)) })}</p>
+        <ul className="mt-1 list-disc ps-4 text-soft">
+          {advice.notes.map(({ code }) => (
+            <li key={code}>{noteWords(code)}</li>
+          ))}
+        </ul>
       )}
 
       <h3 className="mt-4 mb-1 flex flex-wrap items-end justify-between gap-2">

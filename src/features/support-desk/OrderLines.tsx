@@ -20,7 +20,7 @@ export function OrderLines({ lines }: { lines: readonly DeskLine[] }) {
     { key: 'total', head: t('line.total'), figure: true },
   ]
   return (
-    <DataTable caption={t('line.title')} columns={columns}>
+    <DataTable caption={t('line.title')} columns={columns} still>
       {lines.map((line) => (
         <Row key={line.id}>
           <Cell>

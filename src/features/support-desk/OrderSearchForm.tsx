@@ -72,7 +72,7 @@ export function OrderSearchForm({
           }}
         />
       </label>
-      <label className="text-sm font-[650]">
+      <label className="text-sm font-[650] max-sm:w-full">
         {t('search.state')}
         <Select
           value={search.state}

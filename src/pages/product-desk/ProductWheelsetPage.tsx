@@ -40,7 +40,7 @@ export function ProductWheelsetPage() {
             <TitleBlock
               items={[
                 {
-                  label: t('limits.title'),
+                  label: t('column.limit'),
                   value:
                     data.limitKg === null
                       ? t('limits.noneShort')

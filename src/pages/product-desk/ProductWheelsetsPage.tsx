@@ -70,7 +70,7 @@ export function ProductWheelsetsPage() {
             }}
           />
         </label>
-        <label className="text-sm font-[650]">
+        <label className="text-sm font-[650] max-sm:w-full">
           {t('wheelsets.show')}
           <Select
             value={show}

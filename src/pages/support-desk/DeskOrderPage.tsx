@@ -43,6 +43,14 @@ export function DeskOrderPage() {
           <Panel title={t('mail.title', { count: data.mails.length })}>
             <OrderMails mails={data.mails} />
           </Panel>
+          <Panel title={t('timeline.title')}>
+            <div className="grid gap-x-10 gap-y-5 sm:grid-cols-[minmax(0,1.2fr)_minmax(0,1fr)]">
+              <OrderTimeline events={data.timeline} />
+              <div className="no-print">
+                <NoteForm orderNumber={data.orderNumber} />
+              </div>
+            </div>
+          </Panel>
           <Panel title={t('audit.title')}>
             <AuditTrail subjectType="order" subjectId={data.orderNumber} />
           </Panel>
@@ -53,12 +61,6 @@ export function DeskOrderPage() {
           </Panel>
           <Panel title={t('advice.title')}>
             <FrozenAdvicePanel advice={data.advice} orderNumber={data.orderNumber} />
-          </Panel>
-          <Panel title={t('timeline.title')}>
-            <OrderTimeline events={data.timeline} />
-            <div className="no-print mt-5">
-              <NoteForm orderNumber={data.orderNumber} />
-            </div>
           </Panel>
         </div>
       </div>
