@@ -70,7 +70,9 @@ function edgesOf(table: PairingTable): Record<'hooked' | 'hookless', Edges> {
           below: row.side === 'below',
           refuses: row.verdict === 'no',
           row,
-        })),
+        }))
+        // Of two rows with one edge the one that speaks of wider rims alone, which comes later, is named.
+        .sort((a, b) => a.innerFromMm - b.innerFromMm),
       fits: rows.find(({ side }) => side === 'within') ?? null,
     }
   }
@@ -110,11 +112,11 @@ export function pairTyre(
     const edgeMm = innerWidthMm * edge.times + edge.plus
     if (edge.refuses) {
       if (edge.below) {
-        if (edgeMm > leastTyreMm) {
+        if (edgeMm >= leastTyreMm) {
           leastTyreMm = edgeMm
           least = edge.row
         }
-      } else if (edgeMm < widestTyreMm) {
+      } else if (edgeMm <= widestTyreMm) {
         widestTyreMm = edgeMm
         widest = edge.row
       }

@@ -406,7 +406,7 @@ export const ruleTables: readonly RuleTableSeed[] = [
     source:
       'Band by class of width and load: ±10 % with a measured width, ±12 % with a printed one, ±15 % for wide tyres, light and heavy loads; judgement, root sum of squares of fit, width and load errors; ramped between the classes',
     data: {
-      widthMm: [20, 37, 38, 60],
+      widthMm: [20, 36.8, 38, 60],
       measured: { half: 0.1, loadKg: [25, 33, 35, 65, 70, 80] },
       nominal: { half: 0.12, loadKg: [25, 33.5, 35, 65, 68, 80] },
       outerHalf: 0.15,
