@@ -192,5 +192,46 @@ export const advice = z.object({
 })
 export type Advice = z.infer<typeof advice>
 
+/** Where the advice turns and which answers it hangs on; asked for beside the advice, as it takes two hundred of them. */
+export const adviceChanges = z.object({
+  rulesVersion: z.string(),
+  tippingPoints: z.array(
+    z.object({
+      input: z.enum(['bodyMassKg', 'tyreWidthMm', 'luggageKg', 'bikeMassKg', 'flatSpeedKmh']),
+      from: z.number(),
+      /** The nearest value at which the advice is another. */
+      at: z.number(),
+      direction: z.enum(['down', 'up']),
+      changes: z.array(
+        z.object({
+          what: z.enum([
+            'outcome',
+            'first',
+            'offered',
+            'depth-front',
+            'depth-rear',
+            'spokes-front',
+            'spokes-rear',
+            'pressure',
+          ]),
+          before: z.string(),
+          after: z.string(),
+        }),
+      ),
+    }),
+  ),
+  /** Strongest first. */
+  influence: z.array(
+    z.object({
+      input: z.string(),
+      step: z.unknown(),
+      score: z.number(),
+      strongest: z.enum(['pressure', 'depth', 'spokes', 'margin', 'offers', 'first', 'outcome']).nullable(),
+      assumed: z.boolean(),
+    }),
+  ),
+})
+export type AdviceChanges = z.infer<typeof adviceChanges>
+
 /** A kept fitting: its id goes into the basket's lines, its digest stands on the order. */
 export const keptAdvice = z.object({ adviceId: z.string(), sha256: z.string() })

@@ -14,6 +14,7 @@ const expected: Record<string, typeof everyone | Role[]> = {
   'get /api/health/ready': everyone,
   'get /api/openapi.json': everyone,
   'post /api/advice': everyone,
+  'post /api/advice/changes': everyone,
   'post /api/advice-snapshots': everyone,
   'get /api/wheelsets': everyone,
   'get /api/wheelsets/:slug': everyone,

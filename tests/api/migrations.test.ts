@@ -23,7 +23,7 @@ const one = async (sql: string) => Number(Object.values((await all<Record<string
 const tableNames = async () =>
   (
     await all<{ name: string }>(
-      "SELECT table_name AS name FROM information_schema.tables WHERE table_schema = DATABASE() AND table_name <> 'migrations'",
+      "SELECT table_name AS name FROM information_schema.tables WHERE table_schema = DATABASE() AND table_name NOT IN ('migrations', 'advice_inputs')",
     )
   )
     .map(({ name }) => name)
@@ -161,7 +161,7 @@ describe('the schema itself refuses', () => {
 describe('the demo seed', () => {
   it('done twice changes nothing', async () => {
     const before = await contents()
-    expect(await prepareDatabase(db, { seed: true })).toEqual({ migrated: [], seeded: false })
+    expect(await prepareDatabase(db, { seed: true })).toEqual({ migrated: [], seeded: false, solved: 0 })
     expect(await contents()).toBe(before)
   })
 
@@ -397,7 +397,8 @@ describe('the demo seed', () => {
 /** Every row of every table in one digest. */
 async function contents(): Promise<string> {
   const digest = createHash('sha256')
-  for (const table of await tableNames()) {
+  // The mark of the advice's inputs is a fresh one after every write.
+  for (const table of (await tableNames()).filter((name) => name !== 'advice_inputs')) {
     digest.update(table).update(JSON.stringify(await all(`SELECT * FROM \`${table}\` ORDER BY 1, 2`)))
   }
   return digest.digest('hex')

@@ -1,6 +1,6 @@
-import { advice, keptAdvice, riderAnswers } from '#contract/advisor.ts'
+import { advice, adviceChanges, keptAdvice, riderAnswers } from '#contract/advisor.ts'
 import { route, type Route } from '../../http/route.ts'
-import { giveAdvice, keepAdvice } from './service.ts'
+import { giveAdvice, keepAdvice, whatChanges } from './service.ts'
 
 const feature = 'advisor'
 
@@ -16,6 +16,18 @@ export const advisorRoutes: Route[] = [
       reply: advice,
     },
     ({ deps, body }) => giveAdvice(deps, body),
+  ),
+  route(
+    {
+      method: 'post',
+      path: '/api/advice/changes',
+      feature,
+      access: 'anyone',
+      summary: 'Where that advice turns, and which answers it hangs on; stores nothing',
+      body: riderAnswers,
+      reply: adviceChanges,
+    },
+    ({ deps, body }) => whatChanges(deps, body),
   ),
   route(
     {

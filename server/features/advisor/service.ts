@@ -1,49 +1,12 @@
 /** Advice from the catalogue and the rules in force. A body mass is private: nothing is stored unless the rider asks for it. */
 import { createHash, randomUUID } from 'node:crypto'
-import { Op, type Transaction } from 'sequelize'
-import type { Advice, RiderAnswers } from '#contract/advisor.ts'
+import type { Transaction } from 'sequelize'
+import type { Advice, AdviceChanges, RiderAnswers } from '#contract/advisor.ts'
 import { advise } from '#core/advise.ts'
-import { rulesFrom, type Rules } from '#core/rules.ts'
+import { influence, tippingPoints } from '#core/what-changes.ts'
 import type { Deps } from '../../deps.ts'
 import { AdviceSnapshot } from '../../models/advice-snapshot.ts'
-import { RuleTable } from '../../models/rule-table.ts'
-import { readCatalogue, type StoredWheelset } from '../catalogue/read.ts'
-
-/** The rule tables in force now, newest of each name. */
-async function readRules(
-  { clock }: Pick<Deps, 'clock'>,
-  transaction?: Transaction,
-): Promise<{ rules: Rules; version: string }> {
-  const rows = await RuleTable.findAll({
-    where: { state: ['seconded', 'in-force'], inForceFrom: { [Op.lte]: clock() } },
-    order: [['name', 'ASC'], ['inForceFrom', 'ASC'], ['id', 'ASC']], // prettier-ignore
-    raw: true,
-    ...(transaction ? { transaction } : {}),
-  })
-  const newest = [...new Map(rows.map((row) => [row.name, row])).values()]
-  const version =
-    newest
-      .map((row) => row.version)
-      .sort()
-      .at(-1) ?? 'none'
-  return { rules: rulesFrom(newest), version }
-}
-
-/**
- * Names everything the reply depends on besides the rider's answers: the rules' own version, then a digest of rules and
- * catalogue together. Two replies with the same version and the same answers are the same bytes.
- */
-function versionOf(version: string, rules: Rules, catalogue: readonly StoredWheelset[]): string {
-  // Words, prices and stock do not enter the advice.
-  const facts = catalogue.map(
-    ({ tagline: _t, description: _d, prices: _p, available: _a, version: _v, ...rest }) => rest,
-  )
-  const digest = createHash('sha256')
-    .update(JSON.stringify([rules, facts]))
-    .digest('hex')
-    .slice(0, 10)
-  return `${version}+${digest}`
-}
+import { adviceInputs } from './inputs.ts'
 
 /** @param transaction reads on its connection */
 export async function giveAdvice(
@@ -51,11 +14,18 @@ export async function giveAdvice(
   answers: RiderAnswers,
   transaction?: Transaction,
 ): Promise<Advice> {
-  const [catalogue, { rules, version }] = await Promise.all([
-    readCatalogue(deps, 'en', false, transaction),
-    readRules(deps, transaction),
-  ])
-  return advise(answers, catalogue, rules, versionOf(version, rules, catalogue))
+  const { catalogue, rules, rulesVersion } = await adviceInputs(deps, transaction)
+  return advise(answers, catalogue, rules, rulesVersion)
+}
+
+/** The nearest values at which the advice turns, and the answers in the order in which they matter for this rider. */
+export async function whatChanges(deps: Pick<Deps, 'db' | 'clock'>, answers: RiderAnswers): Promise<AdviceChanges> {
+  const { catalogue, rules, rulesVersion } = await adviceInputs(deps)
+  return {
+    rulesVersion,
+    tippingPoints: tippingPoints(answers, catalogue, rules, rulesVersion),
+    influence: influence(answers, catalogue, rules, rulesVersion),
+  }
 }
 
 /** Keeps answers and advice, because the rider chose a wheelset on the strength of them or asked to have them kept. */

@@ -1,0 +1,109 @@
+/**
+ * What advice is worked out from besides the rider's answers: the range and the rules in force. Kept in memory for as long as the database says that
+ * nothing of it was written and no dated version has come into force, so a lowered limit counts from the next call on, in every process.
+ */
+import { createHash } from 'node:crypto'
+import { Op, QueryTypes, type Transaction } from 'sequelize'
+import { rulesFrom, type Rules } from '#core/rules.ts'
+import type { Deps } from '../../deps.ts'
+import { RuleTable } from '../../models/rule-table.ts'
+import { readCatalogue, type StoredWheelset } from '../catalogue/read.ts'
+
+type Reach = Pick<Deps, 'db' | 'clock'>
+
+export interface AdviceInputs {
+  catalogue: StoredWheelset[]
+  rules: Rules
+  rulesVersion: string
+}
+
+interface Kept extends AdviceInputs {
+  mark: string | null
+  /** From when to when, ms: outside it another dated version may be in force. */
+  from: number
+  until: number
+}
+
+const keptBy = new WeakMap<Deps['db'], Kept>()
+const asking = new WeakMap<Deps['db'], Promise<string | null>>()
+
+/** @param transaction reads afresh on its connection: what is decided inside a transaction is decided on what that transaction sees */
+export async function adviceInputs(deps: Reach, transaction?: Transaction): Promise<AdviceInputs> {
+  if (transaction) return read(deps, transaction)
+  const kept = keptBy.get(deps.db)
+  const now = deps.clock().getTime()
+  const mark = await presentMark(deps.db)
+  if (kept && mark !== null && kept.mark === mark && now >= kept.from && now < kept.until) return kept
+  // The mark was read before the rest: a write in between makes the next call read again.
+  const [inputs, until] = await Promise.all([read(deps), nextVersionAt(deps)])
+  keptBy.set(deps.db, { ...inputs, mark, from: now, until })
+  return inputs
+}
+
+/** Calls that come in before the question is sent share it. */
+function presentMark(db: Deps['db']): Promise<string | null> {
+  const shared = asking.get(db)
+  if (shared) return shared
+  const asked = Promise.resolve().then(async () => {
+    asking.delete(db)
+    const [row] = await db.query<{ mark: string }>('SELECT mark FROM advice_inputs WHERE id = 1', {
+      type: QueryTypes.SELECT,
+    })
+    return row?.mark ?? null
+  })
+  asking.set(db, asked)
+  return asked
+}
+
+/** When the next seconded limit or table comes into force, ms. */
+async function nextVersionAt({ db, clock }: Reach): Promise<number> {
+  const [row] = await db.query<{ next: Date | null }>(
+    `SELECT MIN(in_force_from) AS next FROM (
+       SELECT in_force_from FROM limit_versions WHERE state IN ('seconded', 'in-force')
+       UNION ALL SELECT in_force_from FROM rule_tables WHERE state IN ('seconded', 'in-force')) AS versions
+     WHERE in_force_from > :now`,
+    { replacements: { now: clock() }, type: QueryTypes.SELECT },
+  )
+  return row?.next ? new Date(row.next).getTime() : Infinity
+}
+
+async function read(deps: Reach, transaction?: Transaction): Promise<AdviceInputs> {
+  const [catalogue, { rules, version }] = await Promise.all([
+    readCatalogue(deps, 'en', false, transaction),
+    readRules(deps, transaction),
+  ])
+  return { catalogue, rules, rulesVersion: versionOf(version, rules, catalogue) }
+}
+
+/** The rule tables in force now, newest of each name. */
+async function readRules({ clock }: Reach, transaction?: Transaction): Promise<{ rules: Rules; version: string }> {
+  const rows = await RuleTable.findAll({
+    where: { state: ['seconded', 'in-force'], inForceFrom: { [Op.lte]: clock() } },
+    order: [['name', 'ASC'], ['inForceFrom', 'ASC'], ['id', 'ASC']], // prettier-ignore
+    raw: true,
+    ...(transaction ? { transaction } : {}),
+  })
+  const newest = [...new Map(rows.map((row) => [row.name, row])).values()]
+  const version =
+    newest
+      .map((row) => row.version)
+      .sort()
+      .at(-1) ?? 'none'
+  return { rules: rulesFrom(newest), version }
+}
+
+/**
+ * Names everything the reply depends on besides the rider's answers: the rules' own version, then a digest of rules and
+ * catalogue together. Two replies with the same version and the same answers are the same bytes.
+ */
+function versionOf(version: string, rules: Rules, catalogue: readonly StoredWheelset[]): string {
+  // Words, prices and stock do not enter the advice.
+  const facts = catalogue.map(
+    ({ tagline: _t, description: _d, prices: _p, available: _a, version: _v, ...rest }) => rest,
+  )
+  const digest = createHash('sha256')
+    .update(JSON.stringify([rules, facts]))
+    .digest('hex')
+    .slice(0, 10)
+  return `${version}+${digest}`
+}
