@@ -2,8 +2,10 @@
  * The whole advice for one rider: scope, sums, verdicts, notes, working. Plain objects in, plain object out; the same input gives the same
  * object, key for key. Nothing here reads a clock, rounds for display or knows a language.
  */
-import { fillAnswers, frontShareOf, offRoad, type Answers, type Filled } from './answers.ts'
-import { worstRim, type RimHeatAdvice } from './brake-heat.ts'
+import { fillAnswers, frontShareOf, type Answers, type Filled } from './answers.ts'
+import { aeroAdvice } from './aero-advice.ts'
+import { aeroReasons } from './aero-reasons.ts'
+import type { RimHeatAdvice } from './brake-heat.ts'
 import type { WheelsetFacts } from './catalogue.ts'
 import { judgeAll, type Judgement, type Situation } from './judge.ts'
 import { frontDesignLoad, systemMass, wheelLoads } from './loads.ts'
@@ -20,21 +22,17 @@ import {
   situationNotes,
   type Note,
 } from './notes.ts'
-import { dragArea } from './power.ts'
 import {
-  brakeHeatReason,
-  depthReason,
   limitReason,
   loadReason,
   massReason,
   pairingReason,
   pressureReason,
   spokeReason,
-  tradeOffReason,
   type Reason,
 } from './reasons.ts'
-import { depthRange, SHALLOWEST_MM, tradeOff, type DepthInputs } from './rim-depth.ts'
 import { lookUp, type Rules } from './rules.ts'
+import type { TradeOffPoint } from './trade-off.ts'
 import { useOf } from './rider-limits.ts'
 import { extraKgOf, spokeAdvice, type SpokeAdvice } from './spokes.ts'
 import { wheelPressure, type WheelPressure } from './wheel-pressure.ts'
@@ -51,63 +49,10 @@ export interface Advice {
   rimDepthMm: { front: { from: number; to: number }; rear: { from: number; to: number } } | null
   spokes: { front: SpokeAdvice; rear: SpokeAdvice } | null
   wheelsets: Judgement[]
-  tradeOff: ReturnType<typeof tradeOff>
+  tradeOff: TradeOffPoint[]
   brakeHeat: RimHeatAdvice | null
   notes: Note[]
   reasons: Record<string, Reason>
-}
-
-/** Slowest and fastest speed on the flat that the depth method was worked for, km/h. */
-const SPEEDS = [20, 50] as const
-
-/** Aero bars allow more only on the open road: off it, on climbs and in traffic the use keeps its own clamp. */
-function clampOf({ ride, position }: Filled, rules: Rules): number {
-  const { byRide, aeroBarsMm } = rules['depth-clamps']
-  const own = lookUp(byRide, ride)
-  return position === 'aero' && own >= lookUp(byRide, 'road-long') ? Math.max(own, aeroBarsMm) : own
-}
-
-function depthInputs(filled: Filled, rules: Rules): DepthInputs {
-  const { wind, terrain } = rules
-  const aeroBars = filled.position === 'aero'
-  return {
-    bodyMassKg: filled.bodyKg,
-    bikeMassKg: filled.bikeKg,
-    flatSpeedKmh: Math.min(SPEEDS[1], Math.max(SPEEDS[0], filled.flatSpeedKmh)),
-    aeroBars,
-    meanWindMs: lookUp(wind.meanMs, filled.wind),
-    gustMs: lookUp(wind.gustMs, filled.wind),
-    correctionDeg: lookUp(wind.correctionDeg, filled.confidence) * (aeroBars ? wind.aeroBarsFactor : 1),
-    referenceSpeedMs: filled.terrain === 'mountain' ? wind.mountainSpeedMs : wind.speedMs,
-    clampMm: clampOf(filled, rules),
-    terrain: {
-      flatShare: lookUp(terrain.flatShare, filled.terrain),
-      climbShare: lookUp(terrain.climbShare, filled.terrain),
-      gradient: lookUp(terrain.gradient, filled.terrain),
-    },
-    wideTyre: offRoad(filled.ride),
-  }
-}
-
-/** Rim brakes only: hottest rim on the rider's steepest long descent, and what to make of it. */
-function brakeHeatOf(filled: Filled, totalKg: number, rules: Rules): RimHeatAdvice | null {
-  if (filled.brakes !== 'rim') return null
-  const { warnAboveKg, steerAboveKg, nervousSteerAboveKg, limitC } = rules['brake-heat']
-  const gradient = lookUp(rules.terrain.descent, filled.terrain)
-  const descent = {
-    massKg: totalKg,
-    gradient,
-    cdaM2: dragArea(filled.bodyKg),
-    rollingCoefficient: 0.005,
-    airDensity: 1.2,
-  }
-  const carbonC = worstRim(descent, 'carbon', 0.7)
-  const alloyC = worstRim(descent, 'alloy', 0.6)
-  const long = filled.terrain === 'mountain'
-  const steer = long && (totalKg > steerAboveKg || (filled.confidence === 'nervous' && totalKg > nervousSteerAboveKg))
-  const warn = (long && totalKg > warnAboveKg) || carbonC > limitC
-  const verdict = steer ? 'alloy-or-disc' : warn ? 'caution' : 'fine'
-  return { rimC: steer ? alloyC : carbonC, limitC, verdict, carbonC, alloyC, gradient }
 }
 
 /**
@@ -161,13 +106,12 @@ export function advise(
     rear: loads.rearKg,
   }
 
-  const given = depthInputs(filled, rules)
-  const depth = depthRange(given)
+  const aero = aeroAdvice(filled, totalKg, catalogue, rules)
+  const { depth, brakeHeat } = aero
   const spokes = spokeAdvice(
     { ride: filled.ride, brakes: filled.brakes, assist: filled.assist, totalKg, luggageKg: filled.luggageKg },
     rules,
   )
-  const brakeHeat = brakeHeatOf(filled, totalKg, rules)
   const heavier = totalKg / (loads.frontKg + loads.rearKg)
   const situation: Situation = {
     filled,
@@ -206,7 +150,7 @@ export function advise(
       : []),
     ...(pressure ? bareNotes(filled, pressures(filled, bareKg, seat, rules)) : []),
     ...rimBrakeNotes(filled, offers),
-    ...situationNotes(filled, given, depth.shallow, brakeHeat, spokes, totalKg, rules),
+    ...situationNotes(filled, aero, spokes, totalKg, rules),
     ...(first?.verdict === 'no-margin'
       ? [note('no-margin', 'caution', { marginKg: first.marginKg, limitKg: first.limitKg })]
       : []),
@@ -228,6 +172,9 @@ export function advise(
     'sharpen',
     'rotor-size',
     'race-65',
+    'gusts-beyond',
+    'deeper-behind',
+    'one-step-shallower',
   ])
   const outcome =
     refusals.length > 0
@@ -235,11 +182,6 @@ export function advise(
       : notes.some(({ code }) => !standing.has(code))
         ? 'recommend-with-notes'
         : 'recommend'
-  const depths = [
-    ...new Set(
-      catalogue.filter(({ brake }) => brake === filled.brakes).flatMap((set) => [set.front.depthMm, set.rear.depthMm]),
-    ),
-  ]
   const extraKg = extraKgOf(useOf(filled.ride, filled.brakes), rules)
   const reasons: Record<string, Reason> = {
     systemMassKg: massReason(filled, totalKg),
@@ -251,13 +193,10 @@ export function advise(
         }
       : {}),
     ...(filled.tyre ? { pairing: pairingReason(filled, filled.tyre, seat, wheelsets, rules) } : {}),
-    'rimDepthMm.front': depthReason(filled, given, depth.capMm, 'front'),
-    'rimDepthMm.rear': depthReason(filled, given, depth.capMm, 'rear'),
+    ...aeroReasons(filled, aero, totalKg, rules),
     'spokes.front': spokeReason(filled, totalKg, spokes.front, extraKg),
     'spokes.rear': spokeReason(filled, totalKg, spokes.rear, extraKg),
     limit: limitReason(totalKg, first?.limitKg ?? null),
-    tradeOff: tradeOffReason(given),
-    ...(brakeHeat ? { brakeHeat: brakeHeatReason(totalKg, brakeHeat.gradient) } : {}),
   }
   return {
     ...base,
@@ -267,10 +206,7 @@ export function advise(
     rimDepthMm: { front: depth.front, rear: depth.rear },
     spokes,
     wheelsets,
-    tradeOff: tradeOff(
-      given,
-      depths.filter((mm) => mm >= SHALLOWEST_MM).sort((a, b) => a - b),
-    ),
+    tradeOff: aero.tradeOff,
     brakeHeat,
     notes,
     reasons,

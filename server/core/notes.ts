@@ -1,9 +1,10 @@
 /** What the answer says beside its numbers: refusals with a way on, cautions, and what would sharpen it. Codes and data; the words live with the pages. */
 import { mountainRide, offRoad, type Filled } from './answers.ts'
-import type { RimHeatAdvice } from './brake-heat.ts'
+import type { AeroAdvice } from './aero-advice.ts'
+import { rotorHintMm } from './brake-heat.ts'
 import type { WheelsetFacts } from './catalogue.ts'
 import { onlyTyreAgainst, type Judgement } from './judge.ts'
-import { SHALLOWEST_MM, type DepthInputs } from './rim-depth.ts'
+import { SHALLOWEST_MM } from './rim-depth.ts'
 import type { Rules } from './rules.ts'
 import type { SpokeAdvice } from './spokes.ts'
 import { gaugeAfter } from './air-density.ts'
@@ -254,25 +255,46 @@ function unusual({ bodyKg, bikeKg, assumed, ride, tyre, seat, brakes }: Filled):
   return fields
 }
 
+/** What the depths need said: wind beyond the sums, who should go a step shallower, a deeper rear, the rule of races. */
+function depthNotes(filled: Filled, { given, depth, pair }: AeroAdvice, rules: Rules): Note[] {
+  const found: Note[] = []
+  const { lightBelowKg, stepMm } = given.method
+  const { front } = depth
+  if (depth.shallow) found.push(note('shallowest-stocked', 'info', { depthMm: SHALLOWEST_MM }))
+  else found.push(note('gusts-beyond', 'info', { gustMs: given.gustMs }))
+  if (given.flatSpeedKmh !== filled.flatSpeedKmh)
+    found.push(note('speed-held', 'info', { flatSpeedKmh: given.flatSpeedKmh }))
+  if (pair.rearMm > pair.frontMm)
+    found.push(
+      note('deeper-behind', 'info', {
+        depthMm: pair.rearMm,
+        wattsMore: pair.wattsSaved - pair.matchedWattsSaved,
+      }),
+    )
+  const { race } = rules['depth-clamps']
+  if (filled.ride === 'road-fast')
+    found.push(note('race-65', 'info', { depthMm: race.depthMm, from: race.from, ...decidedBy(race) }))
+  if (filled.bodyKg < lightBelowKg) found.push(note('light-rider', 'info'))
+  const panniers = filled.luggageKg > 0 && ['front', 'rear', 'spread'].includes(filled.luggagePlace)
+  if ((panniers || filled.bodyKg < lightBelowKg) && front.to - stepMm >= SHALLOWEST_MM)
+    found.push(note('one-step-shallower', 'info', { depthMm: front.to - stepMm }))
+  return found
+}
+
 export function situationNotes(
   filled: Filled,
-  given: DepthInputs,
-  shallow: boolean,
-  heat: RimHeatAdvice | null,
+  aero: AeroAdvice,
   spokes: { front: SpokeAdvice; rear: SpokeAdvice },
   totalKg: number,
   rules: Rules,
 ): Note[] {
   const found: Note[] = []
+  const { brakeHeat: heat } = aero
   const fields = unusual(filled)
   if (fields.length > 0) found.push(note('look-again', 'caution', { fields }))
   if (filled.luggageKg > 0)
     found.push(note('luggage-counted', 'info', { luggageKg: filled.luggageKg, bareKg: totalKg - filled.luggageKg }))
-  if (shallow) found.push(note('shallowest-stocked', 'info', { depthMm: SHALLOWEST_MM }))
-  if (given.flatSpeedKmh !== filled.flatSpeedKmh)
-    found.push(note('speed-held', 'info', { flatSpeedKmh: given.flatSpeedKmh }))
-  if (filled.ride === 'road-fast') found.push(note('race-65', 'info', { depthMm: 65 }))
-  if (filled.bodyKg < 55) found.push(note('light-rider', 'info'))
+  found.push(...depthNotes(filled, aero, rules))
   if (heat && heat.verdict !== 'fine')
     found.push(
       note('brake-heat', 'caution', {
@@ -280,14 +302,14 @@ export function situationNotes(
         alloyC: heat.alloyC,
         limitC: heat.limitC,
         verdict: heat.verdict,
+        bandShare: rules['brake-heat'].bandShare,
       }),
     )
   if (spokes.front.beyondTable || spokes.rear.beyondTable)
     found.push(note('spokes-beyond-table', 'caution', { totalKg }))
-  const { rotor160AboveKg, rotor180AboveKg } = rules['brake-heat']
-  if (filled.brakes === 'disc' && (totalKg > rotor160AboveKg || filled.terrain === 'mountain')) {
-    found.push(note('rotor-size', 'info', { rotorMm: totalKg > rotor180AboveKg ? 180 : 160 }))
-  }
+  const rotorMm =
+    filled.brakes === 'disc' ? rotorHintMm(totalKg, filled.terrain === 'mountain', rules['brake-heat']) : null
+  if (rotorMm !== null) found.push(note('rotor-size', 'info', { rotorMm }))
   const { bike } = filled
   const unknown = Object.entries(bike).flatMap(([name, fact]) =>
     fact === null &&

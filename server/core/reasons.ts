@@ -1,7 +1,6 @@
 /** The working behind each value: formula in symbols, the rider's inputs, the constants, the source with its label. The words live with the pages. */
 import type { Filled } from './answers.ts'
 import type { Loads } from './loads.ts'
-import type { DepthInputs } from './rim-depth.ts'
 import type { SpokeAdvice } from './spokes.ts'
 import type { Rules } from './rules.ts'
 import {
@@ -262,42 +261,6 @@ export function pairingReason(
   }
 }
 
-export const depthReason = (f: Filled, given: DepthInputs, capMm: number, position: 'front' | 'rear'): Reason => ({
-  formula:
-    'φ = a · ½ρ(v² + w²) · CsA(d) / (N_f · t) ≤ φ_max; from: least depth with 85 % of the gain; rear: front + 20 mm',
-  inputs: {
-    bodyMassKg: f.bodyKg,
-    bikeMassKg: f.bikeKg,
-    wind: f.wind,
-    confidence: f.confidence,
-    terrain: f.terrain,
-    flatSpeedKmh: given.flatSpeedKmh,
-    gustMs: given.gustMs,
-    correctionDeg: given.correctionDeg,
-    capMm: Number.isFinite(capMm) ? capMm : null,
-    clampMm: given.clampMm,
-  },
-  constants: {
-    leverM: 0.06,
-    trailM: 0.0557,
-    airDensity: 1.225,
-    referenceSpeedMs: given.referenceSpeedMs,
-    rimGramPerMm: 3.8,
-  },
-  source:
-    'Gust model of our own; wheel drag after Greenwell et al. 1995 (from memory) and Crane & Morton 2018 (abstract); power after Martin et al. 1998',
-  label: 'derived',
-  uncertainty: '±15 mm',
-  wouldChangeIf: [
-    'wind',
-    'confidence',
-    'bodyMassKg',
-    'terrain',
-    'flatSpeedKmh',
-    ...(position === 'front' ? ['position'] : []),
-  ],
-})
-
 export const spokeReason = (f: Filled, totalKg: number, advice: SpokeAdvice, extraKg: number): Reason => ({
   formula: 'least n with limit(n) ≥ m − bike and kit of the table, then the trade floors; front ≥ rear − 4',
   inputs: {
@@ -325,31 +288,4 @@ export const limitReason = (totalKg: number, limitKg: number | null): Reason => 
   label: 'practice',
   uncertainty: 'exact',
   wouldChangeIf: ['bodyMassKg', 'bikeMassKg', 'luggageKg', 'limit-change'],
-})
-
-export const tradeOffReason = (given: DepthInputs): Reason => ({
-  formula: 'P = Σ weight · ½ρ(0.9·ΔCdA(d_f, β) + 0.6·ΔCdA(d_r, β)) · V_rel² · v / E_c, against a 25 mm pair',
-  inputs: { flatSpeedKmh: given.flatSpeedKmh, meanWindMs: given.meanWindMs, gradient: given.terrain.gradient },
-  constants: {
-    airDensity: 1.225,
-    chainEfficiency: 0.977,
-    rollingCoefficient: 0.004,
-    frontFactor: 0.9,
-    rearFactor: 0.6,
-  },
-  source:
-    'Martin et al. 1998, J. Appl. Biomech. 14(3):276–291; wheel drag by depth and yaw: semi-empirical, of our own',
-  label: 'derived',
-  uncertainty: given.wideTyre ? '±60 %' : '±35 %',
-  wouldChangeIf: ['flatSpeedKmh', 'wind', 'terrain'],
-})
-
-export const brakeHeatReason = (totalKg: number, gradient: number): Reason => ({
-  formula: 'T = T_air + f·P_b/((21·√v + h_rad)·A), P_b = (m·g·sin θ − C_rr·m·g·cos θ − ½ρCdA·v²)·v, at v = v_free/√5',
-  inputs: { systemMassKg: totalKg, gradient },
-  constants: { airC: 20, frontShareCarbon: 0.7, frontShareAlloy: 0.6 },
-  source: 'A lumped rim of our own, cooled like a flat plate; no measured road temperature was found in print',
-  label: 'derived',
-  uncertainty: '±30 %',
-  wouldChangeIf: ['bodyMassKg', 'terrain', 'brakes', 'luggageKg'],
 })

@@ -1,5 +1,6 @@
 /** The tables and policies that the sums go by. They are dated data with a source, kept in the database; this turns them into one checked object. */
 import { z } from 'zod'
+import { aeroTables } from './rules-aero.ts'
 
 const perWidth = z.array(z.tuple([z.number(), z.number()])).min(1)
 const perRide = z.record(z.string(), z.number())
@@ -153,24 +154,7 @@ const tables = {
     loaded: z.number(),
     frontMayBeFewerBy: z.number(),
   }),
-  wind: z.object({
-    meanMs: perRide,
-    gustMs: perRide,
-    correctionDeg: perRide,
-    aeroBarsFactor: z.number(),
-    speedMs: z.number(),
-    mountainSpeedMs: z.number(),
-  }),
-  'depth-clamps': z.object({ byRide: perRide, aeroBarsMm: z.number() }),
-  terrain: z.object({ flatShare: perRide, climbShare: perRide, gradient: perRide, descent: perRide }),
-  'brake-heat': z.object({
-    warnAboveKg: z.number(),
-    steerAboveKg: z.number(),
-    nervousSteerAboveKg: z.number(),
-    limitC: z.number(),
-    rotor160AboveKg: z.number(),
-    rotor180AboveKg: z.number(),
-  }),
+  ...aeroTables,
   /** ASTM F2043 condition that a ride asks of the wheels, 1 to 5. */
   'use-conditions': z.object({ leastByRide: z.record(z.string(), z.number().int().min(1).max(5)) }),
   limits: z.object({ noMarginFrom: z.number(), caliperSlackMm: z.number(), assumedBikeExtraKg: z.number() }),

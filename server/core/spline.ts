@@ -35,10 +35,7 @@ export function splineOf(values: readonly number[], step: number, start: 'level'
       const t = position - i
       const u = 1 - t
       return (
-        u * (y[i] ?? 0) +
-        t * (y[i + 1] ?? 0) +
-        u * (u * u - 1) * (bend[i] ?? 0) +
-        t * (t * t - 1) * (bend[i + 1] ?? 0)
+        u * (y[i] ?? 0) + t * (y[i + 1] ?? 0) + u * (u * u - 1) * (bend[i] ?? 0) + t * (t * t - 1) * (bend[i + 1] ?? 0)
       )
     },
   }

@@ -89,9 +89,7 @@ const factorsOf = (depthMm: number): DepthFactors => ({
   sailM2: recovered(depthMm) * sideArea(depthMm),
 })
 /** Rims come in whole millimetres; their factors are worked out once. */
-const wholeDepths = Array.from({ length: MOST_DEPTH_MM + 1 }, (_, mm) =>
-  mm < LEAST_DEPTH_MM ? null : factorsOf(mm),
-)
+const wholeDepths = Array.from({ length: MOST_DEPTH_MM + 1 }, (_, mm) => (mm < LEAST_DEPTH_MM ? null : factorsOf(mm)))
 
 /** What of the drag depends on speed and wind alone. */
 export interface WindMeans {

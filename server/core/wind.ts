@@ -171,3 +171,45 @@ export function meanSail(windRatio: number, stallDeg: number): number {
   }
   return sum
 }
+
+/** Steps of the yaw table: half of it is fine enough for a figure shown to a degree. */
+const YAW_STEP = 1 / 16
+let yawCurves: { median: Spline; nineTenths: Spline } | null = null
+
+/**
+ * Yaw that the air stays within half and nine tenths of the time, by a table over ū/v, in degrees; beyond ū/v = 4 the last piece goes on.
+ * @param windRatio ū/v ≥ 0
+ * @throws RangeError below
+ * @source yawQuantileDeg, DERIVED
+ */
+export function yawQuantiles(windRatio: number): { medianDeg: number; nineTenthsDeg: number } {
+  if (!(windRatio >= 0)) throw new RangeError('yawQuantiles: out of range')
+  if (!yawCurves) {
+    const count = MOST_RATIO / YAW_STEP + 1
+    const curve = (share: number) =>
+      splineOf(
+        Array.from({ length: count }, (_, index) => (index === 0 ? 0 : quantileOnce(index * YAW_STEP, share))),
+        YAW_STEP,
+        'straight',
+      )
+    yawCurves = { median: curve(0.5), nineTenths: curve(0.9) }
+  }
+  return { medianDeg: yawCurves.median.at(windRatio), nineTenthsDeg: yawCurves.nineTenths.at(windRatio) }
+}
+
+/** yawQuantileDeg by running along the spread once, a tenth of a degree at a time: quick enough to fill a table. */
+function quantileOnce(windRatio: number, share: number): number {
+  const k = 1 / spreadOf(windRatio)
+  const step = 0.1
+  const density = (deg: number) =>
+    (Math.exp(-((k * Math.sin(deg * RAD)) ** 2) / 2) * firstMoment(k * Math.cos(deg * RAD)) * RAD) / Math.PI
+  let [sum, deg, before] = [0, 0, density(0)]
+  for (;;) {
+    const after = density(deg + step)
+    const part = ((before + after) / 2) * step
+    if (sum + part >= share || deg >= 180) return deg + (step * (share - sum)) / part
+    sum += part
+    deg += step
+    before = after
+  }
+}

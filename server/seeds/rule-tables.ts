@@ -1,5 +1,6 @@
 /** The first rule tables: dated data with source and label, which product staff may later replace by newer versions. */
 import type { TableName } from '#core/rules.ts'
+import { aeroRuleTables } from './rule-tables-aero.ts'
 import { solvedWheels } from './solved-wheels.ts'
 
 export const RULES_VERSION = '2026-12.2'
@@ -499,57 +500,7 @@ export const ruleTables: readonly RuleTableSeed[] = [
       frontMayBeFewerBy: 4,
     },
   },
-  {
-    name: 'wind',
-    label: 'derived',
-    source:
-      'Words to wind at bike height (Rayleigh mean, design gust) and the correction a rider accepts, in degrees: judgement set on common practice, ±15 mm of depth',
-    data: {
-      meanMs: { sheltered: 1.2, typical: 2.2, exposed: 3.5 },
-      gustMs: { sheltered: 5, typical: 7, exposed: 10 },
-      correctionDeg: { nervous: 2.2, average: 3, confident: 3.8 },
-      aeroBarsFactor: 0.95,
-      speedMs: 10,
-      mountainSpeedMs: 12.5,
-    },
-  },
-  {
-    name: 'depth-clamps',
-    label: 'practice',
-    source: 'Deepest rim by use, whatever the wind: policy on impact, mass and handling, common practice, no source',
-    data: {
-      byRide: everyRide(
-        { climbing: 50, gravel: 50, cyclocross: 50, bikepacking: 45, commute: 45, 'cross-country': 35, trail: 35 },
-        80,
-      ),
-      aeroBarsMm: 90,
-    },
-  },
-  {
-    name: 'terrain',
-    label: 'practice',
-    source: 'Share of the way on the flat and uphill, gradient of the climbs and of the steepest long descents; policy',
-    data: {
-      flatShare: { flat: 0.95, rolling: 0.75, hilly: 0.55, mountain: 0.35 },
-      climbShare: { flat: 0.03, rolling: 0.15, hilly: 0.3, mountain: 0.5 },
-      gradient: { flat: 0.03, rolling: 0.04, hilly: 0.06, mountain: 0.08 },
-      descent: { flat: 0.03, rolling: 0.06, hilly: 0.08, mountain: 0.12 },
-    },
-  },
-  {
-    name: 'brake-heat',
-    label: 'derived',
-    source:
-      'Policy on carbon rim brakes on long descents by total mass, from a lumped rim model, ±30 % of the rise; butyl tubes serve to about 120 °C (MEMORY)',
-    data: {
-      warnAboveKg: 90,
-      steerAboveKg: 105,
-      nervousSteerAboveKg: 90,
-      limitC: 120,
-      rotor160AboveKg: 85,
-      rotor180AboveKg: 120,
-    },
-  },
+  ...aeroRuleTables,
   {
     name: 'use-conditions',
     label: 'memory',

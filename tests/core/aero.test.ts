@@ -13,14 +13,10 @@ import {
   worstRimSpeed,
 } from '#core/brake-heat.ts'
 import { dragArea, dragAreaFromHeight, ridingPower, windOnRider } from '#core/power.ts'
-import {
-  breakEvenGradient,
-  depthRange,
-  frontDepthCap,
-  gustMoment,
-  steeringStiffness,
-  type DepthInputs,
-} from '#core/rim-depth.ts'
+import { rulesFrom } from '#core/rules.ts'
+import { breakEvenGradient } from '#core/trade-off.ts'
+import { depthRange, frontDepthCap, gustMoment, steeringStiffness, type DepthInputs } from '#core/rim-depth.ts'
+import { ruleTables } from '../../server/seeds/rule-tables.ts'
 import { dragChange, meanWattsSaved, sideForceArea, wheelDragArea } from '#core/wheel-drag.ts'
 
 describe('power on the road (Martin et al. 1998, worked example READ via open transcriptions)', () => {
@@ -222,7 +218,11 @@ describe('gusts and the front cap', () => {
     bodyMassKg: 75,
     bikeMassKg: 8,
     flatSpeedKmh: 32,
-    aeroBars: false,
+    carriedKg: 0,
+    positionDrag: 1,
+    rollingCoefficient: 0.004,
+    stallDeg: 12,
+    method: rulesFrom(ruleTables)['depth-method'],
     meanWindMs: 2.2,
     gustMs: 7,
     correctionDeg: 3,
