@@ -85,19 +85,40 @@ const alike = (a: RimOf, b: RimOf) =>
     a.tyreMinMm === b.tyreMinMm &&
     a.tyreMaxMm === b.tyreMaxMm)
 
+type Tyres = Record<Position, WheelTyre>
+type Rims = Record<Position, RimOf>
+
+/** One rider's tyre, worked out once, and what stays the same from rim to rim. */
+interface Asked {
+  filled: Filled
+  rules: Rules
+  tyres: Tyres
+  /** The same widths set up without tubes; worked out when a rim first asks for it. */
+  tubeless: Tyres | null
+}
+
+const bothTake = (rims: Rims, tyres: Tyres, rules: Rules) =>
+  !onRim(rims.front, tyres.front, rules).no && !onRim(rims.rear, tyres.rear, rules).no
+
+/** Another set-up may ask for another drop; the widths stay as they are measured and marked. */
+function withoutTubes({ filled, tyres, rules }: Asked): Tyres | null {
+  const { tyre, ride, beadSeatMm, innerWidthMm } = filled
+  if (!tyre) return null
+  const given = { ride, beadSeatMm, innerWidthMm, tyre: { ...tyre, setup: 'tubeless' as const } }
+  return {
+    front: wheelTyre(given, 'front', tyres.front.loadKg, rules),
+    rear: wheelTyre(given, 'rear', tyres.rear.loadKg, rules),
+  }
+}
+
 /**
  * The smallest change of the tyre that lets this wheelset take it: the nearest whole width, else another set-up, else an approved tyre.
  * @param wrong wheels that do not take the tyre as it is, at least one
  * @param byWidth the refusals have to do with the width, so that another one may lift them
  * @returns undefined where none of them does
  */
-function wayBack(
-  rims: Record<Position, RimOf>,
-  tyres: Record<Position, WheelTyre>,
-  wrong: readonly Position[],
-  byWidth: boolean,
-  { filled, rules }: Loaded,
-): NearestChange | undefined {
+function wayBack(rims: Rims, wrong: readonly Position[], byWidth: boolean, asked: Asked): NearestChange | undefined {
+  const { tyres, rules, filled } = asked
   if (byWidth) {
     const widthMm = nearestWidth(rims, tyres, wrong, filled, rules)
     if (widthMm !== null) {
@@ -105,23 +126,18 @@ function wayBack(
       return { code: 'other-tyre', field, to: widthMm }
     }
   }
-  const { front, rear } = tyres
-  const takes = (change: Partial<WheelTyre>) =>
-    !onRim(rims.front, { ...front, ...change }, rules).no && !onRim(rims.rear, { ...rear, ...change }, rules).no
-  if (front.setup !== 'tubeless') {
-    // Another set-up may ask for another drop; the width stays as it is measured and marked.
-    const setUp = (position: Position) => {
-      const tyre = filled.tyre
-      return (
-        tyre && wheelTyre({ ...filled, tyre: { ...tyre, setup: 'tubeless' } }, position, tyres[position].loadKg, rules)
-      )
-    }
-    const [inFront, behind] = [setUp('front'), setUp('rear')]
-    if (inFront && behind && !onRim(rims.front, inFront, rules).no && !onRim(rims.rear, behind, rules).no)
+  if (tyres.front.setup !== 'tubeless') {
+    asked.tubeless ??= withoutTubes(asked)
+    if (asked.tubeless && bothTake(rims, asked.tubeless, rules))
       return { code: 'other-fact', field: 'tyre.setup', to: 'tubeless' }
   }
-  if (front.hooklessApproved === false && takes({ hooklessApproved: true }))
-    return { code: 'other-fact', field: 'tyre.hooklessApproved', to: true }
+  if (tyres.front.hooklessApproved === false) {
+    const approved = {
+      front: { ...tyres.front, hooklessApproved: true },
+      rear: { ...tyres.rear, hooklessApproved: true },
+    }
+    if (bothTake(rims, approved, rules)) return { code: 'other-fact', field: 'tyre.hooklessApproved', to: true }
+  }
   return undefined
 }
 
@@ -176,41 +192,53 @@ export function tyreChecker(loaded: Loaded): (set: Pick<WheelsetFacts, Position>
     const unknown: TyreCheck = { removal: null, codes: ['tyre-unknown'], startBar: null, pairing: null }
     return () => unknown
   }
-  const given = { ...filled, tyre }
+  const { ride, beadSeatMm, innerWidthMm } = filled
+  const given = { ride, beadSeatMm, innerWidthMm, tyre }
   const tyres = {
     front: wheelTyre(given, 'front', loadsKg.front, rules),
     rear: wheelTyre(given, 'rear', loadsKg.rear, rules),
   }
+  const asked: Asked = { filled, rules, tyres, tubeless: null }
   const known: Record<Position, OnRim[]> = { front: [], rear: [] }
-  const of = (position: Position, rim: RimOf): OnRim => {
-    for (const one of known[position]) if (alike(one.rim, rim)) return one
-    const found = onRim(rim, tyres[position], rules)
-    known[position].push(found)
-    return found
-  }
-  const pairs: { front: OnRim; rear: OnRim; check: TyreCheck }[] = []
+  const pairs: Pair[] = []
   return (set) => {
-    const front = of('front', set.front)
-    const rear = of('rear', set.rear)
+    const front = seenBefore(known.front, set.front, tyres.front, rules)
+    const rear = seenBefore(known.rear, set.rear, tyres.rear, rules)
     for (const pair of pairs) if (pair.front === front && pair.rear === rear) return pair.check
-    const check = checkOf(front, rear, tyres, loaded)
+    const check = checkOf(front, rear, asked)
     pairs.push({ front, rear, check })
     return check
   }
 }
 
-function checkOf(front: OnRim, rear: OnRim, tyres: Record<Position, WheelTyre>, loaded: Loaded): TyreCheck {
+interface Pair {
+  front: OnRim
+  rear: OnRim
+  check: TyreCheck
+}
+
+/** A rim like one seen before is not worked out again. */
+function seenBefore(known: OnRim[], rim: RimOf, tyre: WheelTyre, rules: Rules): OnRim {
+  for (const one of known) if (alike(one.rim, rim)) return one
+  const found = onRim(rim, tyre, rules)
+  known.push(found)
+  return found
+}
+
+function checkOf(front: OnRim, rear: OnRim, asked: Asked): TyreCheck {
   const pairing = { front: front.row, rear: rear.row }
   const no = front.no ?? rear.no
   if (no) {
     const wrong = positions.filter((position) => (position === 'front' ? front : rear).no)
     const byWidth = !(front.no && notOfWidth(front.no.code)) && !(rear.no && notOfWidth(rear.no.code))
-    const change = wayBack({ front: front.rim, rear: rear.rim }, tyres, wrong, byWidth, loaded)
+    const change = wayBack({ front: front.rim, rear: rear.rim }, wrong, byWidth, asked)
     return { removal: change ? { ...no, change } : no, codes: [], startBar: null, pairing }
   }
+  const codes = [...front.codes]
+  for (const code of rear.codes) if (!codes.includes(code)) codes.push(code)
   return {
     removal: null,
-    codes: [...new Set([...front.codes, ...rear.codes])],
+    codes,
     startBar: front.startBar === null || rear.startBar === null ? null : { front: front.startBar, rear: rear.startBar },
     pairing,
   }
