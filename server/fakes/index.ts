@@ -1,6 +1,7 @@
 /** The stand-ins as one process beside the shop: payments on one port, mails on two others. */
 import path from 'node:path'
 import { readFakesConfig } from './config.ts'
+import { reachableHost } from './listen.ts'
 import { createMailSink } from './mail/sink.ts'
 import { createStripeFake } from './stripe/server.ts'
 
@@ -23,6 +24,7 @@ const running = [
         createStripeFake({
           port: STRIPE_FAKE_PORT,
           host,
+          payHost: reachableHost(host, config.PUBLIC_URL),
           secretKey: config.STRIPE_SECRET_KEY,
           webhookSecret: config.STRIPE_WEBHOOK_SECRET,
           webhookUrl: config.STRIPE_WEBHOOK_URL ?? `${config.PUBLIC_URL}/api/webhooks/stripe`,

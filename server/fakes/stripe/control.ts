@@ -5,6 +5,10 @@ import { z } from 'zod'
 const faultsSchema = z.strictObject({
   /** What becomes of webhook deliveries. */
   deliver: z.enum(['normal', 'drop', 'duplicate']),
+  /** How often each event comes while `deliver` is `duplicate`. */
+  copies: z.number().int().min(2).max(20),
+  /** Deliveries are gathered so long, ms, and then sent one by one in another order than they came; 0 leaves the order alone. */
+  shuffleMs: z.number().int().min(0).max(60_000),
   /** Wait before a delivery, ms. */
   delayMs: z.number().int().min(0).max(600_000),
   wrongSignature: z.boolean(),
@@ -17,6 +21,8 @@ export type Faults = z.infer<typeof faultsSchema>
 
 export const noFaults = (): Faults => ({
   deliver: 'normal',
+  copies: 2,
+  shuffleMs: 0,
   delayMs: 0,
   wrongSignature: false,
   loseReply: false,

@@ -4,6 +4,8 @@ import type { NextFunction, Request, Response } from 'express'
 export class Refusal extends Error {
   readonly status: number
   readonly body: { error: Record<string, unknown> }
+  /** Refused while being carried out, not for its parameters: such a reply is kept under its idempotency key. */
+  begun = false
   constructor(status: number, type: string, message: string, more: Record<string, unknown> = {}) {
     super(message)
     this.status = status
@@ -13,6 +15,12 @@ export class Refusal extends Error {
 
 export const invalid = (message: string, param?: string, code?: string) =>
   new Refusal(400, 'invalid_request_error', message, { ...(param ? { param } : {}), ...(code ? { code } : {}) })
+
+export function refusedAtWork(message: string, param?: string, code?: string) {
+  const refusal = invalid(message, param, code)
+  refusal.begun = true
+  return refusal
+}
 
 export const absent = (param: string) => invalid(`Missing required param: ${param}.`, param, 'parameter_missing')
 

@@ -4,11 +4,13 @@ import type { Request, Response } from 'express'
 import type { Faults } from './control.ts'
 import { invalid, Refusal } from './errors.ts'
 import { readForm, type Form } from './forms.ts'
-import type { State } from './state.ts'
+import type { KeptReply, State } from './state.ts'
 
 /** Keys may be forgotten after a day; then the request is a new one. */
 const KEPT_S = 86_400
 const LONGEST_KEY = 255
+
+type Reply = Pick<KeptReply, 'status' | 'body'>
 
 export class Once {
   private readonly running = new Set<string>()
@@ -22,14 +24,14 @@ export class Once {
     this.now = now
   }
 
-  /** Answers a creating call. A refusal of the parameters is not kept: it had no effect. */
+  /** Answers a creating call. A refusal of the parameters is not kept, one met while carrying the request out is. */
   run(req: Request, res: Response, work: (form: Form) => unknown) {
     const body = typeof req.body === 'string' ? req.body : ''
     const key = req.get('idempotency-key')
     if (key === undefined) {
       const reply = work(read(body))
       this.state.save()
-      this.answer(req, res, reply, null)
+      this.answer(req, res, { status: 200, body: reply }, null)
       return
     }
     if (key.length > LONGEST_KEY) throw invalid('Idempotency keys have at most 255 characters.', 'idempotency_key')
@@ -49,8 +51,8 @@ export class Once {
       res.set('Idempotent-Replayed', 'true').status(kept.status).json(kept.body)
       return
     }
-    const reply = work(read(body))
-    this.state.memory.replies[key] = { at: this.now(), fingerprint, status: 200, body: reply }
+    const reply = carryOut(() => work(read(body)))
+    this.state.memory.replies[key] = { at: this.now(), fingerprint, ...reply }
     this.state.save()
     this.answer(req, res, reply, key)
   }
@@ -62,14 +64,14 @@ export class Once {
     return Object.hasOwn(memory.replies, key) ? memory.replies[key] : undefined
   }
 
-  private answer(req: Request, res: Response, reply: unknown, key: string | null) {
+  private answer(req: Request, res: Response, reply: Reply, key: string | null) {
     const { loseReply, holdReplyMs } = this.faults
     this.faults.loseReply = false
     this.faults.holdReplyMs = 0
     const finish = () => {
       if (key !== null) this.running.delete(key)
       if (loseReply) req.socket.destroy()
-      else if (!res.destroyed) res.json(reply)
+      else if (!res.destroyed) res.status(reply.status).json(reply.body)
     }
     if (holdReplyMs === 0) {
       finish()
@@ -77,6 +79,15 @@ export class Once {
     }
     if (key !== null) this.running.add(key)
     setTimeout(finish, holdReplyMs)
+  }
+}
+
+function carryOut(work: () => unknown): Reply {
+  try {
+    return { status: 200, body: work() }
+  } catch (error) {
+    if (error instanceof Refusal && error.begun) return { status: error.status, body: error.body }
+    throw error
   }
 }
 

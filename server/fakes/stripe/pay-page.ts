@@ -37,12 +37,14 @@ function show(res: Response, session: Session, declined: boolean) {
 }
 
 function sums(session: Session, money: (minor: number) => string, total: string) {
-  const rows = session.lines.map(
-    ({ name, quantity, unitAmount }) =>
-      `<tr><th scope="row">${quantity} × ${escaped(name)}</th><td>${escaped(money(unitAmount * quantity))}</td></tr>`,
-  )
-  const last = `<tr class="total"><th scope="row">${escaped(total)}</th><td>${escaped(money(amountOf(session)))}</td></tr>`
-  return `<table class="sums"><tbody>${rows.join('')}${last}</tbody></table>`
+  const row = (name: string, minor: number, className = '') =>
+    `<tr${className}><th scope="row">${escaped(name)}</th><td>${escaped(money(minor))}</td></tr>`
+  const rows = [
+    ...session.lines.map(({ name, quantity, unitAmount }) => row(`${quantity} × ${name}`, unitAmount * quantity)),
+    session.shipping ? row(session.shipping.name, session.shipping.amount) : '',
+    row(total, amountOf(session), ' class="total"'),
+  ]
+  return `<table class="sums"><tbody>${rows.join('')}</tbody></table>`
 }
 
 function openParts(session: Session, money: (minor: number) => string, t: typeof en, declined: boolean) {

@@ -2,22 +2,25 @@
  * A local stand-in for Stripe: the part of its public wire protocol that a shop with hosted checkout uses, spoken to the real SDK. No money moves.
  * It lives apart from the shop and is chosen only by name in the settings.
  */
-import type { Server } from 'node:http'
-import type { AddressInfo } from 'node:net'
 import express, { type Express, type Request } from 'express'
+import { listen } from '../listen.ts'
 import { mountControl } from './control.ts'
-import { absent, answerErrors, invalid, missing, Refusal } from './errors.ts'
+import { absent, answerErrors, invalid, missing, Refusal, refusedAtWork } from './errors.ts'
 import { Deliveries } from './events.ts'
+import { expand, expandOf, expandOfList } from './expand.ts'
 import { listAt, readForm, textAt, wordsAt, type Form } from './forms.ts'
 import { Once } from './idempotency.ts'
 import { mountPayPage } from './pay-page.ts'
 import { readSessionForm } from './session-form.ts'
-import { newId, State, type Refund, type Session } from './state.ts'
+import { newId, State, type Refund, type Session, type StripeEvent } from './state.ts'
 import { chargeView, eventView, intentView, lineItemsView, page, refundView, sessionView } from './views.ts'
 
 export interface StripeFakeOptions {
   port: number
+  /** The fake listens here and, for the shop's own calls, on loopback. */
   host: string
+  /** How a browser names `host` in addresses; `host` itself unless given. */
+  payHost?: string
   secretKey: string
   webhookSecret: string
   webhookUrl: string
@@ -30,19 +33,21 @@ export function createStripeFake(options: StripeFakeOptions) {
   const clock = options.clock ?? (() => new Date())
   const now = () => Math.floor(clock().getTime() / 1000)
   const state = new State(options.file ?? null)
-  const deliveries = new Deliveries(options.webhookUrl, options.webhookSecret, clock)
+  const deliveries = new Deliveries(options.webhookUrl, options.webhookSecret, clock, () => {
+    state.save()
+  })
   const { memory } = state
   const once = new Once(state, deliveries.faults, now)
   let origin = ''
-  let server: Server | undefined
+  let listening: Awaited<ReturnType<typeof listen>> | undefined
   let timer: NodeJS.Timeout | undefined
 
   const payUrl = (session: Session) => `${origin}/pay/${session.id}`
   const emit = (type: string, object: Record<string, unknown>) => {
-    const event = { id: newId('evt'), created: now(), type, object }
-    memory.events.push(event)
-    state.save()
+    const event: StripeEvent = { id: newId('evt'), created: now(), type, object, delivery: 'waiting' }
+    state.enter(event)
     deliveries.send(event)
+    state.save()
   }
   const expireDue = () => {
     for (const session of Object.values(memory.sessions)) {
@@ -59,14 +64,27 @@ export function createStripeFake(options: StripeFakeOptions) {
   function createSession(form: Form) {
     const asked = readSessionForm(form, now())
     const session: Session = { ...asked, id: newId('cs_test'), status: 'open', paid: false, intentId: null }
+    // What is asked to be whole is judged first: a session that is refused was never made.
+    const alone = { ...memory, sessions: { [session.id]: session } }
+    const view = expand(alone, 'session', sessionView(session, payUrl(session)), expandOf(form))
     memory.sessions[session.id] = session
+    return view
+  }
+
+  /** Only what the public reference lets be changed and is of use here: metadata, where an empty word takes a name away. */
+  function updateSession(id: string, form: Form) {
+    const session = findSession(id)
+    const other = Object.keys(form).find((name) => name !== 'metadata')
+    if (other !== undefined) throw invalid(`Received unknown parameter: ${other}`, other, 'parameter_unknown')
+    const words = Object.entries({ ...session.metadata, ...wordsAt(form, 'metadata') })
+    session.metadata = Object.fromEntries(words.filter(([, word]) => word !== ''))
     return sessionView(session, payUrl(session))
   }
 
   function expireSession(id: string) {
     const session = findSession(id)
     if (session.status !== 'open')
-      throw invalid(`Only Checkout Sessions with a status of open can be expired; this one is ${session.status}.`)
+      throw refusedAtWork(`Only Checkout Sessions with a status of open can be expired; this one is ${session.status}.`)
     session.status = 'expired'
     emit('checkout.session.expired', sessionView(session, payUrl(session)))
     return sessionView(session, payUrl(session))
@@ -80,12 +98,12 @@ export function createStripeFake(options: StripeFakeOptions) {
     if (!charge) throw missing(named, intentId === null ? 'charge' : 'payment_intent')
     const left = charge.amount - charge.refunded
     if (left === 0)
-      throw invalid(`Charge ${charge.id} has already been refunded.`, undefined, 'charge_already_refunded')
+      throw refusedAtWork(`Charge ${charge.id} has already been refunded.`, undefined, 'charge_already_refunded')
     const amount = Number(textAt(form, 'amount') ?? left)
     if (!Number.isInteger(amount) || amount < 1)
       throw invalid('Invalid integer.', 'amount', 'parameter_invalid_integer')
     if (amount > left)
-      throw invalid(`Refund amount (${amount}) is greater than unrefunded amount on charge (${left}).`, 'amount')
+      throw refusedAtWork(`Refund amount (${amount}) is greater than unrefunded amount on charge (${left}).`, 'amount')
     const refund: Refund = {
       id: newId('re'),
       created: now(),
@@ -101,6 +119,10 @@ export function createStripeFake(options: StripeFakeOptions) {
     emit('charge.refunded', chargeView(charge))
     return refundView(refund)
   }
+
+  /** One object, with what the caller wants whole. */
+  const shown = (req: Request, kind: Parameters<typeof expand>[1], view: Record<string, unknown>) =>
+    expand(memory, kind, view, expandOf(queryOf(req)))
 
   const app: Express = express()
   app.disable('x-powered-by')
@@ -123,27 +145,28 @@ export function createStripeFake(options: StripeFakeOptions) {
     const found = newestFirst(memory.sessions).filter(
       (one) => (status === null || one.status === status) && (intent === null || one.intentId === intent),
     )
-    res.json(page('/v1/checkout/sessions', found, (one) => sessionView(one, payUrl(one)), query))
+    const fields = expandOfList(query)
+    const view = (one: Session) => expand(memory, 'session', sessionView(one, payUrl(one)), fields)
+    res.json(page('/v1/checkout/sessions', found, view, query))
   })
   app.get('/v1/checkout/sessions/:id', (req, res) => {
     const session = findSession(req.params.id)
-    const expand = listAt(queryOf(req), 'expand')
-    const other = expand.find((field) => field !== 'payment_intent')
-    if (other !== undefined) throw invalid('This property cannot be expanded.', 'expand')
-    const intent = expand.length > 0 && session.intentId !== null ? (memory.intents[session.intentId] ?? null) : null
-    res.json(sessionView(session, payUrl(session), intent))
+    res.json(shown(req, 'session', sessionView(session, payUrl(session))))
+  })
+  app.post('/v1/checkout/sessions/:id', (req, res) => {
+    once.run(req, res, (form) => updateSession(req.params.id, form))
   })
   app.get('/v1/checkout/sessions/:id/line_items', (req, res) => {
-    res.json(lineItemsView(findSession(req.params.id)))
+    res.json(lineItemsView(findSession(req.params.id), queryOf(req)))
   })
   app.post('/v1/checkout/sessions/:id/expire', (req, res) => {
     once.run(req, res, () => expireSession(req.params.id))
   })
   app.get('/v1/payment_intents/:id', (req, res) => {
-    res.json(intentView(known(memory.intents, req.params.id)))
+    res.json(shown(req, 'intent', intentView(known(memory.intents, req.params.id))))
   })
   app.get('/v1/charges/:id', (req, res) => {
-    res.json(chargeView(known(memory.charges, req.params.id)))
+    res.json(shown(req, 'charge', chargeView(known(memory.charges, req.params.id))))
   })
   app.post('/v1/refunds', (req, res) => {
     once.run(req, res, createRefund)
@@ -154,10 +177,11 @@ export function createStripeFake(options: StripeFakeOptions) {
     const found = newestFirst(memory.refunds).filter(
       (one) => (charge === null || one.chargeId === charge) && (intent === null || one.intentId === intent),
     )
-    res.json(page('/v1/refunds', found, refundView, query))
+    const fields = expandOfList(query)
+    res.json(page('/v1/refunds', found, (one) => expand(memory, 'refund', refundView(one), fields), query))
   })
   app.get('/v1/refunds/:id', (req, res) => {
-    res.json(refundView(known(memory.refunds, req.params.id)))
+    res.json(shown(req, 'refund', refundView(known(memory.refunds, req.params.id))))
   })
   app.get('/v1/events', (req, res) => {
     expireDue()
@@ -193,30 +217,18 @@ export function createStripeFake(options: StripeFakeOptions) {
   app.use(answerErrors)
 
   return {
-    start: () =>
-      new Promise<{ port: number }>((resolve, reject) => {
-        server = app.listen(options.port, options.host, (error) => {
-          if (error) {
-            reject(error)
-            return
-          }
-          const { port } = server?.address() as AddressInfo
-          origin = `http://${options.host}:${port}`
-          timer = setInterval(expireDue, 5_000)
-          resolve({ port })
-        })
-      }),
+    start: async () => {
+      listening = await listen(app, options.host, options.port)
+      const { port } = listening
+      origin = `http://${options.payHost ?? options.host}:${port}`
+      timer = setInterval(expireDue, 5_000)
+      deliveries.start(memory.events.filter(({ delivery }) => delivery === 'waiting'))
+      return { port }
+    },
     stop: async () => {
       clearInterval(timer)
       deliveries.stop()
-      await new Promise((resolve) => {
-        if (!server) {
-          resolve(undefined)
-          return
-        }
-        server.close(resolve)
-        server.closeAllConnections()
-      })
+      await listening?.close()
     },
   }
 }

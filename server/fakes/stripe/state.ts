@@ -1,6 +1,6 @@
 /** Everything the stand-in remembers, and the rules by which it changes. Amounts in minor units, times in Unix seconds. */
 import { randomBytes } from 'node:crypto'
-import { readFileSync, renameSync, writeFileSync } from 'node:fs'
+import { existsSync, readFileSync, renameSync, writeFileSync } from 'node:fs'
 
 export interface LineItem {
   name: string
@@ -15,6 +15,8 @@ export interface Session {
   paid: boolean
   currency: string
   lines: LineItem[]
+  /** Files written before deliveries could be priced apart have none. */
+  shipping?: { name: string; amount: number } | null
   clientReferenceId: string | null
   customerEmail: string | null
   locale: string
@@ -57,6 +59,8 @@ export interface StripeEvent {
   created: number
   type: string
   object: Record<string, unknown>
+  /** Waiting ones go out again after a restart; dropped and given-up ones can only be fetched. */
+  delivery?: 'waiting' | 'taken' | 'dropped' | 'given-up'
 }
 export interface KeptReply {
   at: number
@@ -65,7 +69,7 @@ export interface KeptReply {
   body: unknown
 }
 
-interface Memory {
+export interface Memory {
   sessions: Record<string, Session>
   intents: Record<string, Intent>
   charges: Record<string, Charge>
@@ -75,8 +79,25 @@ interface Memory {
 }
 
 export const newId = (prefix: string) => `${prefix}_${randomBytes(14).toString('hex')}`
-export const amountOf = (session: Session) =>
+export const goodsOf = (session: Session) =>
   session.lines.reduce((sum, { unitAmount, quantity }) => sum + unitAmount * quantity, 0)
+export const amountOf = (session: Session) => goodsOf(session) + (session.shipping?.amount ?? 0)
+
+/** The list of events goes back 30 days. */
+const EVENTS_KEPT_S = 30 * 86_400
+
+/** @returns null for a file that is no memory */
+function readMemory(file: string): Partial<Memory> | null {
+  try {
+    const kept: unknown = JSON.parse(readFileSync(file, 'utf8'))
+    if (typeof kept !== 'object' || kept === null || Array.isArray(kept)) return null
+    const isPart = ([name, part]: [string, unknown]) =>
+      typeof part === 'object' && part !== null && Array.isArray(part) === (name === 'events')
+    return Object.entries(kept).every(isPart) ? kept : null
+  } catch {
+    return null
+  }
+}
 
 export class State {
   readonly memory: Memory
@@ -84,13 +105,25 @@ export class State {
 
   constructor(file: string | null) {
     this.file = file
-    this.memory = { sessions: {}, intents: {}, charges: {}, refunds: {}, events: [], replies: {} }
-    if (file === null) return
-    try {
-      Object.assign(this.memory, JSON.parse(readFileSync(file, 'utf8')) as Memory)
-    } catch {
-      // First start, or a file that no longer reads: the stand-in begins with an empty memory.
+    const empty: Memory = { sessions: {}, intents: {}, charges: {}, refunds: {}, events: [], replies: {} }
+    const kept = file === null || !existsSync(file) ? {} : readMemory(file)
+    if (file !== null && kept === null) {
+      // Begun afresh, but what cannot be read is put aside, not written over.
+      const aside = `${file}.unreadable`
+      renameSync(file, aside)
+      console.warn(
+        `The memory of the stand-in for payments could not be read. It begins with an empty one; the old file is now ${aside}.`,
+      )
     }
+    this.memory = { ...empty, ...kept }
+  }
+
+  /** @param event entered as the newest; those of more than 30 days before it are let go */
+  enter(event: StripeEvent) {
+    const oldest = event.created - EVENTS_KEPT_S
+    if ((this.memory.events[0]?.created ?? oldest) < oldest)
+      this.memory.events = this.memory.events.filter(({ created }) => created >= oldest)
+    this.memory.events.push(event)
   }
 
   /** Written whole and renamed into place: a crash leaves the old memory or the new one, never half. */

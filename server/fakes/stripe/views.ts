@@ -1,14 +1,14 @@
 /** The objects as the SDK expects them on the wire. Only the fields that the public reference names and the shop or its tests read. */
 import { invalid, missing } from './errors.ts'
 import { textAt, type Form } from './forms.ts'
-import { amountOf, type Charge, type Intent, type Refund, type Session, type StripeEvent } from './state.ts'
+import { amountOf, goodsOf, type Charge, type Intent, type Refund, type Session, type StripeEvent } from './state.ts'
 
-type Json = Record<string, unknown>
+export type Json = Record<string, unknown>
 
-export const sessionView = (session: Session, payUrl: string, expanded: Intent | null = null): Json => ({
+export const sessionView = (session: Session, payUrl: string): Json => ({
   id: session.id,
   object: 'checkout.session',
-  amount_subtotal: amountOf(session),
+  amount_subtotal: goodsOf(session),
   amount_total: amountOf(session),
   cancel_url: session.cancelUrl,
   client_reference_id: session.clientReferenceId,
@@ -20,11 +20,15 @@ export const sessionView = (session: Session, payUrl: string, expanded: Intent |
   locale: session.locale,
   metadata: session.metadata,
   mode: 'payment',
-  payment_intent: expanded ? intentView(expanded) : session.intentId,
+  payment_intent: session.intentId,
   payment_method_types: ['card'],
   payment_status: session.paid ? 'paid' : 'unpaid',
+  shipping_cost: session.shipping
+    ? { amount_subtotal: session.shipping.amount, amount_tax: 0, amount_total: session.shipping.amount }
+    : null,
   status: session.status,
   success_url: session.successUrl,
+  total_details: { amount_discount: 0, amount_shipping: session.shipping?.amount ?? 0, amount_tax: 0 },
   url: session.status === 'open' ? payUrl : null,
 })
 
@@ -70,20 +74,20 @@ export const refundView = (refund: Refund): Json => ({
   status: 'succeeded',
 })
 
-export const lineItemsView = (session: Session): Json => ({
-  object: 'list',
-  has_more: false,
-  url: `/v1/checkout/sessions/${session.id}/line_items`,
-  data: session.lines.map(({ name, unitAmount, quantity }, index) => ({
-    id: `li_${session.id.slice(8)}_${index}`,
+export function lineItemsView(session: Session, query: Form): Json {
+  const items = session.lines.map((line, index) => ({ ...line, id: `li_${session.id.slice(8)}_${index}` }))
+  const view = ({ id, name, unitAmount, quantity }: (typeof items)[number]): Json => ({
+    id,
     object: 'item',
+    amount_subtotal: unitAmount * quantity,
     amount_total: unitAmount * quantity,
     currency: session.currency,
     description: name,
     price: { object: 'price', currency: session.currency, unit_amount: unitAmount },
     quantity,
-  })),
-})
+  })
+  return page(`/v1/checkout/sessions/${session.id}/line_items`, items, view, query)
+}
 
 export const eventView = (event: StripeEvent): Json => ({
   id: event.id,
@@ -92,7 +96,7 @@ export const eventView = (event: StripeEvent): Json => ({
   created: event.created,
   data: { object: event.object },
   livemode: false,
-  pending_webhooks: 1,
+  pending_webhooks: event.delivery === 'waiting' ? 1 : 0,
   request: { id: null, idempotency_key: null },
   type: event.type,
 })
