@@ -3,13 +3,14 @@
  * is the outside value here. Limits and meanings: the public API reference on checkout sessions, refunds, idempotent requests and webhooks.
  */
 import { randomUUID } from 'node:crypto'
-import { mkdtemp, readFile, rm } from 'node:fs/promises'
+import { mkdtemp, readFile, rm, writeFile } from 'node:fs/promises'
 import { createServer, type IncomingHttpHeaders, type Server } from 'node:http'
 import type { AddressInfo } from 'node:net'
 import os from 'node:os'
 import path from 'node:path'
 import Stripe from 'stripe'
-import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest'
+import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest'
+import { reachableHost } from '../../server/fakes/listen.ts'
 import type { Faults } from '../../server/fakes/stripe/control.ts'
 import { createStripeFake } from '../../server/fakes/stripe/server.ts'
 
@@ -46,16 +47,16 @@ const client = (atPort: number, key = KEY, retries = 0) =>
     timeout: 4_000,
     telemetry: false,
   })
-const fakeAt = (file: string | null = null) =>
-  createStripeFake({
-    port: 0,
-    host: '127.0.0.1',
-    secretKey: KEY,
-    webhookSecret: SECRET,
-    webhookUrl: shopUrl,
-    file,
-    clock,
-  })
+const optionsOf = (file: string | null) => ({
+  port: 0,
+  host: '127.0.0.1',
+  secretKey: KEY,
+  webhookSecret: SECRET,
+  webhookUrl: shopUrl,
+  file,
+  clock,
+})
+const fakeAt = (file: string | null = null) => createStripeFake(optionsOf(file))
 
 beforeAll(async () => {
   shop = createServer((req, res) => {
@@ -115,8 +116,8 @@ const raw = (method: string, url: string, body?: string, headers: Record<string,
     headers: { Authorization: `Bearer ${KEY}`, 'Content-Type': 'application/x-www-form-urlencoded', ...headers },
     ...(body === undefined ? {} : { body }),
   })
-const faults = (wanted: Partial<Faults> | object) =>
-  fetch(`http://127.0.0.1:${port}/control/faults`, {
+const faults = (wanted: Partial<Faults> | object, atPort = port) =>
+  fetch(`http://127.0.0.1:${atPort}/control/faults`, {
     method: 'POST',
     headers: { 'Content-Type': 'application/json' },
     body: JSON.stringify(wanted),
@@ -193,6 +194,64 @@ describe('checkout sessions', () => {
     expect(await refusal(stripe.checkout.sessions.retrieve(session.id, { expand: ['customer'] }))).toMatchObject({
       statusCode: 400,
     })
+  })
+
+  it('show references inside references, and their lines, whole', async () => {
+    const { session, intent } = await bought()
+    const whole = await stripe.checkout.sessions.retrieve(session.id, {
+      expand: ['payment_intent.latest_charge', 'line_items'],
+    })
+    expect(whole.payment_intent).toMatchObject({
+      id: intent,
+      latest_charge: { object: 'charge', amount: TOTAL, payment_intent: intent },
+    })
+    expect(whole.line_items?.data.map(({ description }) => description)).toEqual(['Rowan 45', 'Delivery'])
+    const { data } = await stripe.checkout.sessions.list({ expand: ['data.payment_intent'] })
+    expect(data.map(({ payment_intent: one }) => one)).toMatchObject([{ id: intent, status: 'succeeded' }])
+  })
+
+  it('asked for with something whole that they do not hold are not made', async () => {
+    expect(await refusal(stripe.checkout.sessions.create(order({ expand: ['customer'] })))).toMatchObject({
+      statusCode: 400,
+      param: 'expand',
+    })
+    expect((await stripe.checkout.sessions.list()).data).toEqual([])
+  })
+
+  it('count shipping in the total, apart from the goods, on the page and in what is paid', async () => {
+    const { session, intent } = await bought({ shipping_options: [shipping(1_250)] })
+    // 2 × 1299.00 + 19.50 + 12.50, by hand
+    expect(session).toMatchObject({
+      amount_subtotal: TOTAL,
+      amount_total: 263_000,
+      shipping_cost: { amount_total: 1_250 },
+      total_details: { amount_shipping: 1_250 },
+    })
+    expect((await stripe.paymentIntents.retrieve(intent)).amount_received).toBe(263_000)
+    const page = await see(session)
+    expect(page).toContain('<th scope="row">By &lt;road&gt;</th><td>€12.50</td>')
+    expect(page).toMatch(/class="total".*€2,630\.00/)
+    expect((await stripe.refunds.create({ payment_intent: intent })).amount).toBe(263_000)
+  })
+
+  it('without shipping say so and show no row for it', async () => {
+    const session = await stripe.checkout.sessions.create(order())
+    expect(session).toMatchObject({
+      amount_subtotal: TOTAL,
+      shipping_cost: null,
+      total_details: { amount_shipping: 0 },
+    })
+    // Two lines and the total.
+    expect((await see(session)).match(/<th scope="row">/g)).toHaveLength(3)
+  })
+
+  it.each([
+    ['two ways', [shipping(1_250), shipping(2_500)], 'shipping_options'],
+    ['less than nothing', [shipping(-1)], 'shipping_options[0][shipping_rate_data][fixed_amount][amount]'],
+    ['another currency', [shipping(1_250, 'gbp')], 'shipping_options[0][shipping_rate_data][fixed_amount][currency]'],
+  ])('refuse shipping in %s', async (_words, options, param) => {
+    const error = await refusal(stripe.checkout.sessions.create(order({ shipping_options: options })))
+    expect(error).toMatchObject({ statusCode: 400, param })
   })
 
   it('list their lines, which add up to the total', async () => {
@@ -279,6 +338,12 @@ describe('requests that cannot be', () => {
     ['no name', lineForm('product_data][name', ''), 'line_items[0][price_data][product_data][name]'],
     ['no such currency', lineForm('currency', 'euros'), 'line_items[0][price_data][currency]'],
     ['a way back that is a script', `${lineForm()}&success_url=javascript:alert(1)`, 'success_url'],
+    ['a name that is not spoken here', 'mode=payment&automatic_tax[enabled]=true', 'automatic_tax'],
+    [
+      'a field that is not spoken here',
+      lineForm('tax_behavior', 'inclusive'),
+      'line_items[0][price_data][tax_behavior]',
+    ],
     ['no way back', lineForm(), 'success_url'],
   ])('are answered 400: %s', async (_words, body, param) => {
     const reply = await raw('POST', '/v1/checkout/sessions', body)
@@ -300,6 +365,13 @@ describe('requests that cannot be', () => {
     expect((await refusal(stripe.events.list({ starting_after: 'evt_none' }))).statusCode).toBe(404)
   })
 })
+
+/** One way of delivery at a fixed price. */
+function shipping(amount: number, currency = 'eur'): Stripe.Checkout.SessionCreateParams.ShippingOption {
+  return {
+    shipping_rate_data: { type: 'fixed_amount', display_name: 'By <road>', fixed_amount: { amount, currency } },
+  }
+}
 
 /** A form with one line in which one field is another. */
 function lineForm(field = '', value = '') {
@@ -337,6 +409,17 @@ describe('idempotency keys', () => {
     const options = { idempotencyKey: randomUUID() }
     await refusal(stripe.checkout.sessions.create(order({ line_items: [] }), options))
     expect((await stripe.checkout.sessions.create(order(), options)).status).toBe('open')
+  })
+
+  it('keep a refusal met while the request was carried out', async () => {
+    const { intent } = await bought()
+    const ask = () =>
+      refusal(stripe.refunds.create({ payment_intent: intent, amount: TOTAL }, { idempotencyKey: `late-${intent}` }))
+    await stripe.refunds.create({ payment_intent: intent, amount: 100 })
+    const [first, again] = [await ask(), await ask()]
+    expect(first).toMatchObject({ statusCode: 400, param: 'amount' })
+    expect(again.message).toBe(first.message)
+    expect(again.headers?.['idempotent-replayed']).toBe('true')
   })
 
   it('are forgotten after a day', async () => {
@@ -527,6 +610,27 @@ describe('events', () => {
     expect(new Set(copies.map(({ id }) => id)).size).toBe(1)
   })
 
+  it('can be told to come more often still', async () => {
+    await faults({ deliver: 'duplicate', copies: 5 })
+    await bought()
+    await delivered('checkout.session.completed', 5)
+  })
+
+  it('can be told to come in another order, and still all come', async () => {
+    await faults({ shuffleMs: 500, deliver: 'duplicate', copies: 2 })
+    for (let count = 0; count < 4; count += 1) {
+      const { id } = await stripe.checkout.sessions.create(order())
+      await stripe.checkout.sessions.expire(id)
+    }
+    const made = (await stripe.events.list()).data.map(({ id }) => id).reverse()
+    expect(made).toHaveLength(4)
+    await delivered('checkout.session.expired', 8)
+    const came = deliveries.map(({ id }) => id)
+    const inOrder = made.flatMap((id) => [id, id])
+    expect(came.toSorted()).toEqual(inOrder.toSorted())
+    expect(came).not.toEqual(inOrder)
+  })
+
   it('that were dropped can still be fetched, by kind and from a time on', async () => {
     await faults({ deliver: 'drop' })
     const { session } = await bought()
@@ -555,6 +659,16 @@ describe('events', () => {
     await stripe.refunds.create({ payment_intent: intent, amount: 1 })
     const { data } = await stripe.events.list({ type: 'charge.refunded' })
     expect(data.map(({ data: { object } }) => (object as Stripe.Charge).amount_refunded)).toEqual([2, 1])
+  })
+
+  it('wait in the list until the shop has taken them', async () => {
+    await faults({ delayMs: 200 })
+    const { id } = await stripe.checkout.sessions.create(order())
+    await stripe.checkout.sessions.expire(id)
+    const waiting = async () => (await stripe.events.list()).data.map((one) => one.pending_webhooks)
+    expect(await waiting()).toEqual([1])
+    await delivered('checkout.session.expired')
+    await expect.poll(waiting).toEqual([0])
   })
 
   it('take no fault that is not one', async () => {
@@ -592,5 +706,111 @@ describe('memory', () => {
       await after.stop()
     }
     expect(JSON.parse(await readFile(file, 'utf8')).sessions[session.id].paid).toBe(true)
+  })
+
+  /** A stand-in over `file` while `work` runs. */
+  const during = async (file: string, work: (sdk: Stripe, atPort: number) => Promise<void>) => {
+    const one = fakeAt(file)
+    const { port: atPort } = await one.start()
+    try {
+      await work(client(atPort), atPort)
+    } finally {
+      await one.stop()
+    }
+  }
+  const expired = async (sdk: Stripe) => {
+    const { id } = await sdk.checkout.sessions.create(order())
+    await sdk.checkout.sessions.expire(id)
+  }
+
+  it('sends an event that was under way again after a restart, and no more once it was taken', async () => {
+    const file = path.join(folder, 'under-way.json')
+    shopAnswers = [500]
+    await during(file, async (sdk) => {
+      await expired(sdk)
+      await delivered('checkout.session.expired')
+    })
+    await during(file, async (sdk) => {
+      const [first, second] = await delivered('checkout.session.expired', 2)
+      expect(second!.id).toBe(first!.id)
+      await expect.poll(async () => (await sdk.events.list()).data[0]?.pending_webhooks).toBe(0)
+    })
+    await during(file, async (sdk) => {
+      // An event made now comes after whatever the start had sent.
+      await expired(sdk)
+      await delivered('checkout.session.expired', 3)
+    })
+    expect(new Set(deliveries.map(({ id }) => id)).size).toBe(2)
+  })
+
+  it('sends what was gathered for another order after a restart', async () => {
+    const file = path.join(folder, 'gathered.json')
+    await during(file, async (sdk, atPort) => {
+      await faults({ shuffleMs: 60_000 }, atPort)
+      await expired(sdk)
+      await expired(sdk)
+    })
+    expect(deliveries).toEqual([])
+    await during(file, async () => {
+      const came = await delivered('checkout.session.expired', 2)
+      expect(new Set(came.map(({ id }) => id)).size).toBe(2)
+    })
+  })
+
+  it('does not send an event that was dropped after a restart', async () => {
+    const file = path.join(folder, 'dropped.json')
+    await during(file, async (sdk, atPort) => {
+      await faults({ deliver: 'drop' }, atPort)
+      await expired(sdk)
+    })
+    await during(file, async (sdk) => {
+      expect((await sdk.events.list()).data).toHaveLength(1)
+      await expired(sdk)
+      const [one] = await delivered('checkout.session.expired')
+      expect((await sdk.events.list()).data[0]?.id).toBe(one!.id)
+    })
+  })
+
+  it.each([
+    ['cut off in the middle', '{"sessions":{"cs_test_1":{"id":"cs_te'],
+    ['of another kind', '{"sessions":{},"events":{}}'],
+    ['a list', '[]'],
+  ])('that cannot be read is put aside and told of, and the stand-in starts: %s', async (_words, text) => {
+    const file = path.join(folder, 'damaged.json')
+    await writeFile(file, text)
+    const told = vi.spyOn(console, 'warn').mockReturnValue()
+    try {
+      await during(file, async (sdk) => {
+        expect((await sdk.checkout.sessions.create(order())).status).toBe('open')
+      })
+      expect(told.mock.calls).toEqual([[expect.stringContaining(`the old file is now ${file}.unreadable.`)]])
+    } finally {
+      told.mockRestore()
+    }
+    expect(await readFile(`${file}.unreadable`, 'utf8')).toBe(text)
+    expect(Object.keys(JSON.parse(await readFile(file, 'utf8')).sessions)).toHaveLength(1)
+  })
+})
+
+describe('where it listens', () => {
+  it.each([
+    ['127.0.0.1', 'http://shop.example:4300', '127.0.0.1'],
+    ['0.0.0.0', 'http://shop.example:4300', 'shop.example'],
+    ['::', 'http://[::1]:4300', '[::1]'],
+    ['::1', 'http://shop.example:4300', '[::1]'],
+  ])('a browser names %s under %s as %s', (host, publicUrl, name) => {
+    expect(reachableHost(host, publicUrl)).toBe(name)
+  })
+
+  it.each(['127.0.0.2', '0.0.0.0', 'localhost'])('the shop finds it on loopback beside %s', async (host) => {
+    const one = createStripeFake({ ...optionsOf(null), host, payHost: 'shop.example' })
+    const { port: atPort } = await one.start()
+    try {
+      const { url } = await client(atPort).checkout.sessions.create(order())
+      expect(url).toContain(`http://shop.example:${atPort}/pay/`)
+      expect((await fetch(`http://${host}:${atPort}/pay/cs_test_none`)).status).toBe(404)
+    } finally {
+      await one.stop()
+    }
   })
 })
