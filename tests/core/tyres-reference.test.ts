@@ -60,14 +60,14 @@ describe(`exact units (${reference.units.source})`, () => {
 
 describe('pressure', () => {
   it.each(reference.dropFactors.rows)('3.5: a drop of %f has the factor %f', (drop, factor) => {
-    expect(dropFactor(Number(drop))).toBeCloseTo(Number(factor), 3)
-    expect(pressureAtDrop(4, Number(drop))).toBeCloseTo(4 * Number(factor), 2)
-    expect(dropAtPressure(4, 4 * Number(factor))).toBeCloseTo(Number(drop), 3)
+    expect(dropFactor(drop)).toBeCloseTo(factor, 3)
+    expect(pressureAtDrop(4, drop)).toBeCloseTo(4 * factor, 2)
+    expect(dropAtPressure(4, 4 * factor)).toBeCloseTo(drop, 3)
   })
   it.each(reference.wheelSizeFactors.rows)(
     '3.6: a bead seat of %d mm raises the pressure by %f',
     (beadSeatMm, factor) => {
-      expect(pressureAt15(50, 40, Number(beadSeatMm)) / pressureAt15(50, 40, 622)).toBeCloseTo(Number(factor), 2)
+      expect(pressureAt15(50, 40, beadSeatMm) / pressureAt15(50, 40, 622)).toBeCloseTo(factor, 2)
     },
   )
   it.each(reference.fits.rows)('3.17: %d kg on %d mm: fit K %d psi, fit B %d psi', (kg, mm, k, b) => {
@@ -117,7 +117,7 @@ describe('pressure', () => {
     '3.11: %d kg on straight-side rims: %d, %d and %d mm at 17, 18, 20 %%',
     (kg, ...mm) => {
       const cap = (width: number) => Math.min(ceilings.road.maxBar, hooklessRow(ceilings, width).maxBar)
-      expect([0.17, 0.18, 0.2].map((drop) => widthThatWouldDo(Number(kg), 622, drop, 25, cap))).toEqual(mm)
+      expect([0.17, 0.18, 0.2].map((drop) => widthThatWouldDo(kg, 622, drop, 25, cap))).toEqual(mm)
     },
   )
   it('3.11: the drop at the cap of a 70 kg load is 20.8 % at 28 mm and 18.2 % at 45 mm', () => {
@@ -187,9 +187,9 @@ describe('widths and sizes', () => {
   it.each(reference.widthGrowth.rows)(
     '3.14: at inner/width %f the arc of constant length gives %f, around the 0.4 in use',
     (part, growth) => {
-      const angle = Math.asin(Number(part))
-      expect(1 / ((Math.PI - angle) * Math.cos(angle) + Math.sin(angle))).toBeCloseTo(Number(growth), 2)
-      expect(Math.abs(rules['measuring-rims'].growthPerMm - Number(growth))).toBeLessThanOrEqual(0.12)
+      const angle = Math.asin(part)
+      expect(1 / ((Math.PI - angle) * Math.cos(angle) + Math.sin(angle))).toBeCloseTo(growth, 2)
+      expect(Math.abs(rules['measuring-rims'].growthPerMm - growth)).toBeLessThanOrEqual(0.12)
     },
   )
   it.each(reference.beadSeats.rows)('3.7: "%s" is %d mm on a bead seat of %d mm', (text, widthMm, beadSeatMm) => {

@@ -37,6 +37,11 @@ export function Refusal({ advice, banded }: { advice: Advice; banded: boolean })
     <div className="grid gap-8 lg:grid-cols-[minmax(0,1.25fr)_minmax(0,1fr)]">
       <div>
         <p className="max-w-[60ch] text-lg">{say('text')}</p>
+        {typeof data.row === 'string' && (
+          <p className="mt-1 text-sm text-soft">
+            {t('refusal.row', { row: data.row, label: t(`working.labels.${String(data.rowLabel)}.name`) })}
+          </p>
+        )}
         {inScope(advice) && (
           <>
             <h2 className="mt-6">{t('refusal.holdTitle')}</h2>
