@@ -1,0 +1,45 @@
+/** One of the two servers that http.ts compares, in a process of its own: it says its port, then its CPU time whenever asked. */
+import type { AddressInfo } from 'node:net'
+import express from 'express'
+import { pino } from 'pino'
+import { createApp } from '../../server/app.ts'
+import { readConfig } from '../../server/config.ts'
+import { openDatabase } from '../../server/db.ts'
+import { initModels } from '../../server/models/index.ts'
+import { createPayments } from '../../server/payments/create.ts'
+
+function echo() {
+  const app = express()
+  app.post('/api/advice', express.json(), (req, res) => {
+    res.json(req.body)
+  })
+  return app
+}
+
+function shop() {
+  const config = readConfig({
+    ...process.env,
+    NODE_ENV: 'development',
+    PAYMENTS: 'stripe-fake',
+    SESSION_SECRET: 'a secret that only the benchmark knows',
+    STRIPE_SECRET_KEY: 'sk_test_bench',
+    STRIPE_WEBHOOK_SECRET: 'whsec_bench',
+    PUBLIC_URL: 'http://127.0.0.1:1',
+    SMTP_URL: 'smtp://127.0.0.1:1',
+  })
+  const db = openDatabase(config.DATABASE_URL)
+  initModels(db)
+  const clock = () => new Date()
+  // Lines are written as in the shop, and thrown away.
+  const log = pino({ level: 'info' }, { write: () => undefined })
+  return createApp({ config, db, payments: createPayments(config, clock), clock, log }, null)
+}
+
+const server = (process.argv[2] === 'echo' ? echo() : shop()).listen(0, '127.0.0.1', () => {
+  process.send?.({ port: (server.address() as AddressInfo).port })
+})
+process.on('message', () => {
+  const { user, system } = process.cpuUsage()
+  process.send?.({ cpuMicros: user + system })
+})
+process.on('disconnect', () => process.exit(0))

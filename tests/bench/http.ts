@@ -1,0 +1,113 @@
+/**
+ * POST /api/advice of the whole application against a bare Express that parses the same body and sends it back: CPU time per request of either
+ * process, in turns within one run, so that the ratio means something on a shared machine. Both listen on loopback only; requests are counted.
+ */
+import { fork, type ChildProcess } from 'node:child_process'
+import { Agent, request } from 'node:http'
+import { testDatabase } from '../support/test-db.ts'
+import { startTestServer } from '../support/mariadb-server.ts'
+import { median, say } from './measure.ts'
+import { riders } from './riders.ts'
+
+const ROUNDS = 7
+const REQUESTS = 600
+const AT_ONCE = 8
+
+export async function benchHttp(): Promise<void> {
+  const server = await startTestServer()
+  process.env.TEST_DATABASE_URL = server.url
+  const database = await testDatabase({ seed: 'range' })
+  const shop = await start('shop', database.url)
+  const echo = await start('echo', '')
+  try {
+    const bodies = riders(200).map((answers) => JSON.stringify(answers))
+    await load(shop, bodies, 2 * REQUESTS)
+    await load(echo, bodies, 2 * REQUESTS)
+    const found: Record<'shop' | 'echo', Figures[]> = { shop: [], echo: [] }
+    for (let round = 0; round < ROUNDS; round += 1) {
+      found.shop.push(await load(shop, bodies, REQUESTS))
+      found.echo.push(await load(echo, bodies, REQUESTS))
+    }
+    const cpu = (name: 'shop' | 'echo') => median(found[name].map(({ cpuMicros }) => cpuMicros))
+    const wall = (name: 'shop' | 'echo') => median(found[name].map(({ wallMicros }) => wallMicros))
+    const size = median(found.shop.map(({ bytes }) => bytes))
+    say(
+      `POST /api/advice: CPU per request ${cpu('shop').toFixed(0)} µs, bare Express echo ${cpu('echo').toFixed(0)} µs, ratio ${(cpu('shop') / cpu('echo')).toFixed(2)} (goal 1.60); reply ${(size / 1024).toFixed(1)} kB`,
+    )
+    say(`  wall time per request with ${AT_ONCE} at once: ${wall('shop').toFixed(0)} and ${wall('echo').toFixed(0)} µs`)
+  } finally {
+    shop.child.kill()
+    echo.child.kill()
+    await database.close()
+    await server.stop()
+  }
+}
+
+interface Running {
+  child: ChildProcess
+  port: number
+  path: string
+  agent: Agent
+}
+interface Figures {
+  cpuMicros: number
+  wallMicros: number
+  bytes: number
+}
+
+function start(kind: 'shop' | 'echo', databaseUrl: string): Promise<Running> {
+  const child = fork(new URL('http-server.ts', import.meta.url), [kind], {
+    execArgv: ['--import', 'tsx'],
+    env: { ...process.env, DATABASE_URL: databaseUrl, NODE_ENV: 'production' },
+  })
+  return new Promise((resolve, reject) => {
+    child.once('exit', (code) => {
+      reject(new Error(`${kind} ended with ${code}`))
+    })
+    child.once('message', (message) => {
+      const { port } = message as { port: number }
+      resolve({ child, port, path: '/api/advice', agent: new Agent({ keepAlive: true, maxSockets: AT_ONCE }) })
+    })
+  })
+}
+
+const cpuOf = ({ child }: Running) =>
+  new Promise<number>((resolve) => {
+    child.once('message', (message) => {
+      resolve((message as { cpuMicros: number }).cpuMicros)
+    })
+    child.send('cpu')
+  })
+
+async function load(target: Running, bodies: readonly string[], count: number): Promise<Figures> {
+  const before = await cpuOf(target)
+  const began = performance.now()
+  let [sent, bytes] = [0, 0]
+  const worker = async () => {
+    while (sent < count) {
+      const body = bodies[sent % bodies.length] ?? ''
+      sent += 1
+      const size = await post(target, body)
+      bytes += size
+    }
+  }
+  await Promise.all(Array.from({ length: AT_ONCE }, worker))
+  const wallMicros = ((performance.now() - began) * 1000) / count
+  return { cpuMicros: ((await cpuOf(target)) - before) / count, wallMicros, bytes: bytes / count }
+}
+
+function post({ port, path, agent }: Running, body: string): Promise<number> {
+  return new Promise((resolve, reject) => {
+    const headers = { 'content-type': 'application/json', 'content-length': Buffer.byteLength(body) }
+    const sent = request({ host: '127.0.0.1', port, path, method: 'POST', agent, headers }, (reply) => {
+      let bytes = 0
+      reply.on('data', (part: Buffer) => (bytes += part.length))
+      reply.on('end', () => {
+        if (reply.statusCode === 200) resolve(bytes)
+        else reject(new Error(`status ${reply.statusCode}`))
+      })
+    })
+    sent.on('error', reject)
+    sent.end(body)
+  })
+}
