@@ -191,11 +191,6 @@ export function rememberFitting(draft: Draft) {
   keep(DRAFT_KEY, writeDraft(draft).toString())
 }
 
-export function forgetFitting() {
-  keep(DRAFT_KEY, null)
-  keep(MASS_KEY, null)
-}
-
 export const adviceQuery = (answers: RiderAnswers) =>
   queryOptions({
     queryKey: ['advisor', 'advice', answers],
