@@ -23,7 +23,3 @@ export const markets = [
   market('US', 'USD', 0, 6900, 6, 11),
 ]
 export type SeedMarket = (typeof markets)[number]
-
-/** Tax inside an amount that includes it, half a cent up; 0 where the market has none. */
-export const taxInside = (cents: number, vatPercentBp: number) =>
-  Math.round((cents * vatPercentBp) / (10_000 + vatPercentBp))

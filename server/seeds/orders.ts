@@ -1,10 +1,11 @@
 /** 400 invented orders over the year before `now`: buyers, lines, money, history, mails and the advice each was bought on. */
 import { createHash } from 'node:crypto'
+import { taxInside } from '../features/basket/pricing.ts'
 import type { LineOptions } from '../models/basket-line.ts'
 import { demoAdvice } from './advice.ts'
 import { catalogue, type SeedWheelset } from './catalogue.ts'
 import { receiptWords, refundWords } from './mails.ts'
-import { markets, taxInside } from './markets.ts'
+import { markets } from './markets.ts'
 import { inventAnswers } from './order-answers.ts'
 import { inventLife, type Step } from './order-life.ts'
 import { inventBuyer, type Buyer } from './people.ts'
