@@ -1,6 +1,7 @@
 /** Invented people who can sign in to the demo, one for each role; their passwords are printed in README.md. */
 import { createHash } from 'node:crypto'
 import { hash } from '@node-rs/argon2'
+import { PASSWORD_COST } from '../features/account/password-cost.ts'
 
 export const demoUsers = [
   {
@@ -45,13 +46,10 @@ export const demoUsers = [
   },
 ] as const
 
-/** argon2id, 19 MiB, two passes, one lane: the least that OWASP's password storage sheet advises (MEMORY). */
-export const ARGON2 = { memoryCost: 19_456, timeCost: 2, parallelism: 1 }
-
 /** The demo's salts are fixed by the address, as its passwords are public and two seeds must be equal. Real accounts get random salts. */
 const withPasswordHash = async ({ password, ...user }: (typeof demoUsers)[number]) => {
   const salt = createHash('sha256').update(`demo:${user.email}`).digest().subarray(0, 16)
-  return { ...user, passwordHash: await hash(password, { ...ARGON2, salt }) }
+  return { ...user, passwordHash: await hash(password, { ...PASSWORD_COST, salt }) }
 }
 
 let rows: Promise<Awaited<ReturnType<typeof withPasswordHash>>[]> | undefined

@@ -6,9 +6,8 @@ import { Bike } from '../../models/bike.ts'
 import { Order } from '../../models/order.ts'
 import { OrderLine } from '../../models/order-line.ts'
 import { User } from '../../models/user.ts'
+import { PASSWORD_COST } from './password-cost.ts'
 
-/** Argon2id, 19 MiB, two passes, one lane: the OWASP Password Storage Cheat Sheet's floor. */
-const COST = { memoryCost: 19_456, timeCost: 2, parallelism: 1 }
 let nobody: Promise<string> | undefined
 
 /**
@@ -17,7 +16,7 @@ let nobody: Promise<string> | undefined
  */
 export async function checkSignIn({ email, password }: SignIn): Promise<number> {
   const user = await User.findOne({ where: { email: email.trim().toLowerCase() } })
-  nobody ??= hash('nobody', COST)
+  nobody ??= hash('nobody', PASSWORD_COST)
   const matches = await verify(user?.passwordHash ?? (await nobody), password).catch(() => false)
   if (!user || !matches) throw new AppError('sign-in-failed', 401)
   return user.id
