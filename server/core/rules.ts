@@ -32,7 +32,7 @@ const solved = z.object({
 })
 
 /** One schema a table; the name is the table's name in `rule_tables`. */
-const tables = {
+export const tables = {
   'load-split': z.object({ frontShare: perRide, luggageFrontShare: perRide }),
   /** The front wheel's design load: at least a part of the rear's, at most a multiple of its own. */
   'front-design-load': z.object({ leastOfRear: positive.max(1), mostOfOwn: z.number().min(1).max(2) }),
