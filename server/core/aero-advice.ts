@@ -22,8 +22,8 @@ const stocked = new WeakMap<readonly WheelsetFacts[], Map<string, readonly numbe
 
 /** Depths that the catalogue holds for a kind of brake, shallowest first, as far as the drag model goes: 25 to 100 mm. */
 export function stockedDepths(catalogue: readonly WheelsetFacts[], brakes: string): readonly number[] {
-  let known = stocked.get(catalogue)
-  if (!known) stocked.set(catalogue, (known = new Map()))
+  const known = stocked.get(catalogue) ?? new Map<string, readonly number[]>()
+  stocked.set(catalogue, known)
   let depths = known.get(brakes)
   if (!depths) {
     const all = catalogue

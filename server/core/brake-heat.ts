@@ -134,13 +134,22 @@ export function massAtRimC(
   airC = 20,
   mostSpeedMs = 40 / 3.6,
 ): number {
-  const at = (massKg: number) => worstRim({ ...descent, massKg }, material, onThisRim, airC, mostSpeedMs)
+  const tried: Descent = {
+    massKg: 1,
+    gradient: descent.gradient,
+    cdaM2: descent.cdaM2,
+    rollingCoefficient: descent.rollingCoefficient,
+    airDensity: descent.airDensity,
+  }
   let [low, high] = [1, 1000]
-  if (at(high) < celsius) return Infinity
-  for (let step = 0; step < 30; step += 1) {
-    const middle = (low + high) / 2
-    if (at(middle) < celsius) low = middle
-    else high = middle
+  for (let step = 0; step <= 30; step += 1) {
+    // The first try is the heaviest: where even that stays cooler, there is no such mass.
+    tried.massKg = step === 0 ? high : (low + high) / 2
+    const cooler = worstRim(tried, material, onThisRim, airC, mostSpeedMs) < celsius
+    if (step === 0 && cooler) return Infinity
+    if (step === 0) continue
+    if (cooler) low = tried.massKg
+    else high = tried.massKg
   }
   return (low + high) / 2
 }

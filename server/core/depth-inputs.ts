@@ -44,8 +44,8 @@ const widths = new WeakMap<readonly WheelsetFacts[], Map<string, number | null>>
  * @returns mm; null where the catalogue holds none
  */
 export function usualRimOuterMm(ride: string, catalogue: readonly WheelsetFacts[]): number | null {
-  let known = widths.get(catalogue)
-  if (!known) widths.set(catalogue, (known = new Map()))
+  const known = widths.get(catalogue) ?? new Map<string, number | null>()
+  widths.set(catalogue, known)
   const found = known.get(ride)
   if (found !== undefined) return found
   const outer = catalogue

@@ -108,36 +108,51 @@ export function windOnRider(speedMs: number, windMs: number, fromDeg: number, he
   return { airSpeedMs, yawDeg: Math.abs((Math.atan2(windMs * Math.sin(angle), airSpeedMs) * 180) / Math.PI) }
 }
 
+/** What a ride's resistance is made of whatever the slope: a·v² of air, b·v and bearingsN of bearings, and the weight that slope and rolling act on. */
+export function roadLoads(ride: Omit<Ride, 'speedMs' | 'airSpeedMs' | 'gradient'>) {
+  return {
+    a: 0.5 * ride.airDensity * (ride.cdaM2 + ride.spokeAreaM2),
+    b: BEARING_NS_PER_M,
+    bearingsN: BEARING_N,
+    weightN: ride.massKg * (ride.gravity ?? STANDARD_GRAVITY),
+  }
+}
+
 /** Resistance of a ride in still air as a polynomial of its speed: N = a·v² + b·v + c. */
 export function resistance(ride: Omit<Ride, 'speedMs' | 'airSpeedMs'>) {
-  const { massKg, cdaM2, spokeAreaM2, rollingCoefficient, gradient, airDensity } = ride
-  return {
-    a: 0.5 * airDensity * (cdaM2 + spokeAreaM2),
-    b: BEARING_NS_PER_M,
-    c: massKg * pullPerKg(gradient, rollingCoefficient, ride.gravity) + BEARING_N,
-  }
+  const { a, b, bearingsN, weightN } = roadLoads(ride)
+  return { a, b, c: weightN * pullPerKg(ride.gradient, ride.rollingCoefficient, 1) + bearingsN }
 }
 
 /**
  * Speed above 0 at which a·v³ + b·v² + c·v takes `watts`. Newton from a speed that takes more: the curve is convex there, so each step stays
- * above the answer and comes closer, and the last one that still does is it.
+ * above the answer and comes closer.
  * @param watts 0 or more; a > 0, b ≥ 0; where c < 0 (downhill) the answer is the larger one
  * @param startMs a guess; one that lies below costs a step more
  * @throws RangeError outside those ranges
  */
 export function speedOfCubic(watts: number, a: number, b: number, c: number, startMs?: number): number {
   if (!(watts >= 0 && a > 0 && b >= 0 && Number.isFinite(c))) throw new RangeError('speedOfCubic: out of range')
-  const above = Math.cbrt(watts / a) + Math.sqrt(Math.max(0, -c) / a)
-  let v = startMs ?? (c > 0 ? Math.min(above, watts / c) : above)
+  let v = startMs ?? speedAbove(watts, a, c)
   for (let step = 0; step < 100; step += 1) {
     const slope = (3 * a * v + 2 * b) * v + c
-    const next = slope > 0 ? v - (((a * v + b) * v + c) * v - watts) / slope : above
-    // A guess from below jumps over the answer once; from then on the steps only go down.
-    if (step > 0 && next >= v) break
-    if (Math.abs(next - v) <= 1e-14 * v) return next
-    v = next > 0 ? next : above
+    const next = slope > 0 ? v - (((a * v + b) * v + c) * v - watts) / slope : 0
+    if (!(next > 0)) {
+      if (watts === 0 && c >= 0) return 0
+      v = speedAbove(watts, a, c)
+      continue
+    }
+    // What is left after a step is about its square: past 10⁻⁸ nothing that a number can hold.
+    if (Math.abs(next - v) <= 1e-8 * v) return next
+    v = next
   }
   return v
+}
+
+/** A speed that surely takes `watts` or more: W/c alone, or the cube root of W/a with what the slope gives. */
+function speedAbove(watts: number, a: number, c: number): number {
+  const above = Math.cbrt(watts / a) + Math.sqrt(Math.max(0, -c) / a)
+  return c > 0 ? Math.min(above, watts / c) : above
 }
 
 /**

@@ -102,18 +102,19 @@ export function ridingOf(given: DepthInputs, direct = false): Riding {
   const flatSpeedMs = kmhToMs(given.flatSpeedKmh)
   const massKg = given.bodyMassKg + given.bikeMassKg + given.carriedKg
   const cdaM2 = dragArea(given.bodyMassKg) * given.positionDrag
-  const ride = {
-    massKg,
-    cdaM2,
-    spokeAreaM2: 0,
-    rollingCoefficient,
-    gradient: 0,
-    airDensity: FLAT_AIR_DENSITY,
-    chainEfficiency: CHAIN_EFFICIENCY,
-  }
-  const level = resistance(ride)
+  const on = (gradient: number, airDensity: number) =>
+    resistance({
+      massKg,
+      cdaM2,
+      spokeAreaM2: 0,
+      rollingCoefficient,
+      gradient,
+      airDensity,
+      chainEfficiency: CHAIN_EFFICIENCY,
+    })
+  const level = on(0, FLAT_AIR_DENSITY)
   const wheelWatts = ((level.a * flatSpeedMs + level.b) * flatSpeedMs + level.c) * flatSpeedMs
-  const up = resistance({ ...ride, gradient: terrain.gradient, airDensity: CLIMB_AIR_DENSITY })
+  const up = on(terrain.gradient, CLIMB_AIR_DENSITY)
   const climbSpeedMs = speedOfCubic(wheelWatts, up.a, up.b, up.c)
   const sailShare = given.wideTyre ? method.wideTyre.sailShare : 1
   const means = (speedMs: number) => windMeans({ speedMs, meanWindMs, stallDeg, sailShare }, direct)
@@ -164,7 +165,8 @@ export interface DepthRange {
  */
 export function depthRange(given: DepthInputs, riding = ridingOf(given)): DepthRange {
   const { gainShare, rearExtraMm, pairStepMm, leastRangeMm, stepMm } = given.method
-  const capMm = frontDepthCap({ ...given, speedMs: given.referenceSpeedMs })
+  const { bodyMassKg, bikeMassKg, gustMs, correctionDeg, referenceSpeedMs } = given
+  const capMm = frontDepthCap({ bodyMassKg, bikeMassKg, gustMs, speedMs: referenceSpeedMs, correctionDeg })
   const shallow = capMm < SHALLOWEST_MM
   const clampMm = roundTo(given.clampMm, stepMm, 'down')
   const to = Math.max(SHALLOWEST_MM, Math.min(roundTo(Math.min(capMm, 200), stepMm, 'nearest'), clampMm))

@@ -1,6 +1,6 @@
 /** What depth gains and costs: the curve, pairs of two depths, and the gradient from which weight weighs more than air. */
 import type { DepthInputs } from './depth-inputs.ts'
-import { CHAIN_EFFICIENCY, pullPerKg, resistance, speedAtPower, speedOfCubic, type Ride } from './power.ts'
+import { CHAIN_EFFICIENCY, pullPerKg, resistance, roadLoads, speedOfCubic, type Ride } from './power.ts'
 import {
   CLIMB_AIR_DENSITY,
   FLAT_AIR_DENSITY,
@@ -27,7 +27,7 @@ export function breakEvenGradient(
 }
 
 /**
- * Gradient at which two pairs are equally fast at the same power, and the speed there: the speed v at which the ride up G*(v) takes the power.
+ * Gradient at which two pairs are equally fast at the same power, and the speed there: that at which the ride up G*(v) takes the power.
  * @param ride of the lighter pair; its own gradient plays no part
  * @returns gradient, rise over run; speed in m/s
  * @throws RangeError unless power and added mass are positive
@@ -41,17 +41,18 @@ export function breakEvenAtPower(
 ): { gradient: number; speedMs: number } {
   if (!(watts > 0 && addedKg > 0)) throw new RangeError('breakEvenAtPower: out of range')
   const { airDensity, rollingCoefficient } = ride
-  const gradientAt = (v: number) => breakEvenGradient(dragChangeM2, addedKg, v, airDensity, rollingCoefficient)
-  // The speed kept is what the gradient asks for at this power; both fall into step within a few rounds of bisection on speed.
-  let [low, high] = [0, speedAtPower(watts, { ...ride, gradient: -rollingCoefficient })]
-  for (let step = 0; step < 50; step += 1) {
-    const middle = (low + high) / 2
-    const { a, b, c } = resistance({ ...ride, gradient: gradientAt(middle) })
-    if (((a * middle + b) * middle + c) * middle < watts * ride.chainEfficiency) low = middle
-    else high = middle
+  const { a, b, bearingsN, weightN } = roadLoads(ride)
+  // G* + C_rr = κ·v², so slope and rolling are one more term in v³; only the cosine of the slope has to be found by going round.
+  const steepness = (0.5 * airDensity * Math.abs(dragChangeM2)) / (addedKg * STANDARD_GRAVITY)
+  let [gradient, speedMs] = [0, 0]
+  for (let round = 0; round < 30; round += 1) {
+    const cosine = 1 / Math.sqrt(1 + gradient * gradient)
+    speedMs = speedOfCubic(watts * ride.chainEfficiency, a + weightN * steepness * cosine, b, bearingsN)
+    const next = steepness * speedMs * speedMs - rollingCoefficient
+    if (Math.abs(next - gradient) < 1e-13) break
+    gradient = next
   }
-  const speedMs = (low + high) / 2
-  return { gradient: gradientAt(speedMs), speedMs }
+  return { gradient, speedMs }
 }
 
 export interface TradeOffPoint {
@@ -74,6 +75,17 @@ export const wattsBand = ({ wideTyre, method }: DepthInputs) =>
 const areaChange = (wattsSaved: number, speedMs: number) =>
   -(wattsSaved * CHAIN_EFFICIENCY) / (0.5 * FLAT_AIR_DENSITY * speedMs ** 3)
 
+/** The ride on 25 mm rims in still air. Written out in full: copying objects costs more than the sums here. */
+const still = (riding: Riding, given: DepthInputs, gradient: number, airDensity: number) => ({
+  massKg: riding.massKg,
+  cdaM2: riding.cdaM2,
+  spokeAreaM2: 0,
+  rollingCoefficient: given.rollingCoefficient,
+  gradient,
+  airDensity,
+  chainEfficiency: CHAIN_EFFICIENCY,
+})
+
 /**
  * The trade-off, one point per depth of a matched pair against a 25 mm pair.
  * @param depthsMm 20 to 100
@@ -88,18 +100,11 @@ export function tradeOff(
   depthsMm: readonly number[],
   riding: Riding = ridingOf(given),
 ): TradeOffPoint[] {
-  const { flatSpeedMs, climbSpeedMs, massKg, cdaM2 } = riding
+  const { flatSpeedMs, climbSpeedMs } = riding
   const band = wattsBand(given)
-  const ride = {
-    massKg,
-    cdaM2,
-    spokeAreaM2: 0,
-    rollingCoefficient: given.rollingCoefficient,
-    chainEfficiency: CHAIN_EFFICIENCY,
-  }
   const wheelWatts = riding.watts * CHAIN_EFFICIENCY
-  const level = resistance({ ...ride, gradient: 0, airDensity: FLAT_AIR_DENSITY })
-  const up = resistance({ ...ride, gradient: given.terrain.gradient, airDensity: CLIMB_AIR_DENSITY })
+  const level = resistance(still(riding, given, 0, FLAT_AIR_DENSITY))
+  const up = resistance(still(riding, given, given.terrain.gradient, CLIMB_AIR_DENSITY))
   /** Newtons of slope and rolling that each added kilogram brings. */
   const perKg = pullPerKg(given.terrain.gradient, given.rollingCoefficient)
   const thinner = CLIMB_AIR_DENSITY / FLAT_AIR_DENSITY
@@ -142,14 +147,7 @@ export function mixedPair(given: DepthInputs, range: DepthRange, riding: Riding 
   const [frontMm, rearMm] = [range.front.to, range.rear.to]
   const addedKg = pairAddedKg(given, frontMm, rearMm)
   const wattsSaved = pairWatts(given, riding, frontMm, rearMm, 'flat')
-  const ride = {
-    massKg: riding.massKg,
-    cdaM2: riding.cdaM2,
-    spokeAreaM2: 0,
-    rollingCoefficient: given.rollingCoefficient,
-    airDensity: CLIMB_AIR_DENSITY,
-    chainEfficiency: CHAIN_EFFICIENCY,
-  }
+  const ride = still(riding, given, given.terrain.gradient, CLIMB_AIR_DENSITY)
   return {
     frontMm,
     rearMm,

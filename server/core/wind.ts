@@ -131,13 +131,13 @@ export function meanSailDirect(windRatio: number, stallDeg: number): number {
   const part = (beta: number) =>
     sailShape(beta / RAD, stallDeg) * Math.exp(-((k * Math.sin(beta)) ** 2) / 2) * thirdMoment(k * Math.cos(beta))
   const bend = stallDeg * RAD
-  return (simpson(0, bend, 160, part) + simpson(bend, bend + FADE_DEG * RAD, 80, part)) / (Math.PI * k * k)
+  return (simpson(0, bend, 96, part) + simpson(bend, bend + FADE_DEG * RAD, 64, part)) / (Math.PI * k * k)
 }
 export const LEAST_STALL_DEG = 8
 export const MOST_STALL_DEG = 12
 
 /** The table behind meanSail: one curve over ū/v for each whole degree of stall, made when first asked for. */
-const STEP = 1 / 64
+const STEP = 1 / 48
 const MOST_RATIO = 4
 const curves = new Map<number, Spline>()
 function curveAt(stallDeg: number): Spline {
@@ -197,10 +197,10 @@ export function yawQuantiles(windRatio: number): { medianDeg: number; nineTenths
   return { medianDeg: yawCurves.median.at(windRatio), nineTenthsDeg: yawCurves.nineTenths.at(windRatio) }
 }
 
-/** yawQuantileDeg by running along the spread once, a tenth of a degree at a time: quick enough to fill a table. */
+/** yawQuantileDeg by running along the spread once, a quarter of a degree at a time: quick enough to fill a table. */
 function quantileOnce(windRatio: number, share: number): number {
   const k = 1 / spreadOf(windRatio)
-  const step = 0.1
+  const step = 0.25
   const density = (deg: number) =>
     (Math.exp(-((k * Math.sin(deg * RAD)) ** 2) / 2) * firstMoment(k * Math.cos(deg * RAD)) * RAD) / Math.PI
   let [sum, deg, before] = [0, 0, density(0)]
