@@ -3,7 +3,9 @@
  * process, in turns within one run, so that the ratio means something on a shared machine. Both listen on loopback only; requests are counted.
  */
 import { fork, type ChildProcess } from 'node:child_process'
+import path from 'node:path'
 import { Agent, request } from 'node:http'
+import { build } from 'esbuild'
 import { testDatabase } from '../support/test-db.ts'
 import { startTestServer } from '../support/mariadb-server.ts'
 import { median, say } from './measure.ts'
@@ -17,6 +19,7 @@ export async function benchHttp(): Promise<void> {
   const server = await startTestServer()
   process.env.TEST_DATABASE_URL = server.url
   const database = await testDatabase({ seed: 'range' })
+  await bundle()
   const shop = await start('shop', database.url)
   const echo = await start('echo', '')
   try {
@@ -36,8 +39,8 @@ export async function benchHttp(): Promise<void> {
     )
     say(`  wall time per request with ${AT_ONCE} at once: ${wall('shop').toFixed(0)} and ${wall('echo').toFixed(0)} µs`)
   } finally {
-    shop.child.kill()
-    echo.child.kill()
+    shop.child.disconnect()
+    echo.child.disconnect()
     await database.close()
     await server.stop()
   }
@@ -55,9 +58,25 @@ interface Figures {
   bytes: number
 }
 
+/** Built as the shop is built for use, so that no loader of the sources counts. */
+const BUNDLE = path.resolve(import.meta.dirname, '../../test-output/bench/http-server.mjs')
+const bundle = () =>
+  build({
+    entryPoints: [path.join(import.meta.dirname, 'http-server.ts')],
+    outfile: BUNDLE,
+    bundle: true,
+    platform: 'node',
+    target: 'node20',
+    format: 'esm',
+    packages: 'external',
+    logLevel: 'warning',
+  })
+
 function start(kind: 'shop' | 'echo', databaseUrl: string): Promise<Running> {
-  const child = fork(new URL('http-server.ts', import.meta.url), [kind], {
-    execArgv: ['--import', 'tsx'],
+  const child = fork(BUNDLE, [kind], {
+    execArgv: process.env.BENCH_PROFILE
+      ? ['--cpu-prof', `--cpu-prof-dir=${process.env.BENCH_PROFILE}`, `--cpu-prof-name=${kind}`]
+      : [],
     env: { ...process.env, DATABASE_URL: databaseUrl, NODE_ENV: 'production' },
   })
   return new Promise((resolve, reject) => {
