@@ -160,6 +160,8 @@ export const tradeOffPoint = z.object({
   wattsSaved: z.number(),
   wattsLow: z.number(),
   wattsHigh: z.number(),
+  /** Seconds saved on the flat in an hour at the rider's own power. Older advice has none. */
+  secondsPerHour: z.number().optional(),
   climbSecondsPer10Km: z.number(),
   gustMomentNm: z.number(),
 })
@@ -185,6 +187,9 @@ export const advice = z.object({
       carbonC: z.number(),
       alloyC: z.number(),
       gradient: z.number(),
+      /** rimC with its doubt. Older advice has none. */
+      lowC: z.number().optional(),
+      highC: z.number().optional(),
     })
     .nullable(),
   notes: z.array(note),
