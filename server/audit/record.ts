@@ -6,8 +6,8 @@ import { AuditRow } from '../models/audit-row.ts'
 export interface AuditEntry {
   /** `<thing>.<what happened>`, such as `limit-change.seconded`; put into words by locales product-desk.json `audit.action`. */
   action: string
-  subjectType: 'order' | 'wheelset' | 'limit-change'
-  /** What people call it: an order number, a SKU. */
+  subjectType: 'order' | 'wheelset' | 'limit-change' | 'rule-table'
+  /** What people call it: an order number, a SKU, a table's name. */
   subjectId: string
   reason: string
   /** Only what changed. Never a body mass. */

@@ -142,7 +142,7 @@ export const limitImpact = z.object({
 export type LimitImpact = z.infer<typeof limitImpact>
 
 export const auditFilters = z.strictObject({
-  subjectType: z.enum(['order', 'wheelset', 'limit-change']).optional(),
+  subjectType: z.enum(['order', 'wheelset', 'limit-change', 'rule-table']).optional(),
   subjectId: z.string().trim().max(64).optional(),
   limit: z.coerce.number<string>().int().min(1).max(100).optional(),
   cursor: z.string().max(20).regex(/^\d+$/).optional(),

@@ -18,6 +18,8 @@ export interface FieldError {
   path: string
   code: string
   data?: Record<string, unknown>
+  /** Where it stands in a table, said before the fault. */
+  cell?: { row: string; column: string }
 }
 
 export const notFound = () => new AppError('not-found', 404)

@@ -94,11 +94,11 @@ function sendProblem(req: Request, res: Response, error: AppError) {
     ...(Object.keys(error.data).length > 0 ? { data: error.data } : {}),
     ...(fields
       ? {
-          errors: fields.map(({ path, code, data }) => ({
-            path,
-            code,
-            message: t([`errors:field.${code}`, 'errors:field.not-valid'], data ?? {}),
-          })),
+          errors: fields.map(({ path, code, data, cell }) => {
+            const message = t([`errors:field.${code}`, 'errors:field.not-valid'], data ?? {})
+            const place = cell?.row === '' ? 'errors:field.at-value' : 'errors:field.at-cell'
+            return { path, code, message: cell ? t(place, { ...cell, message }) : message }
+          }),
         }
       : {}),
   }

@@ -22,6 +22,7 @@ import * as protectHistory from './20261201-1017-protect-history.ts'
 import * as addRefundLines from './20261201-1018-add-refund-lines.ts'
 import * as addWheelStructure from './20261201-1020-add-wheel-structure.ts'
 import * as markAdviceInputs from './20261201-1021-mark-advice-inputs.ts'
+import * as secondRuleTables from './20261201-1022-second-rule-tables.ts'
 
 interface Migration {
   up: (q: QueryInterface) => Promise<unknown>
@@ -50,6 +51,7 @@ const migrations: Record<string, Migration> = {
   '20261201-1018-add-refund-lines': addRefundLines,
   '20261201-1020-add-wheel-structure': addWheelStructure,
   '20261201-1021-mark-advice-inputs': markAdviceInputs,
+  '20261201-1022-second-rule-tables': secondRuleTables,
 }
 
 /** In the order they run. The shop itself may only read and write rows, so its health check compares names and runs nothing. */

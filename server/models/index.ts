@@ -18,7 +18,7 @@ import { OutboxMail, initOutboxMail } from './outbox-mail.ts'
 import { Price, initPrice } from './price.ts'
 import { Refund, initRefund } from './refund.ts'
 import { Rim, initRim } from './rim.ts'
-import { initRuleTable } from './rule-table.ts'
+import { initRuleTable, RuleTable } from './rule-table.ts'
 import { Session, initSession } from './session.ts'
 import { Spoke, initSpoke } from './spoke.ts'
 import { Stock, initStock } from './stock.ts'
@@ -79,6 +79,8 @@ function joinCatalogue() {
   LimitVersion.belongsTo(Wheelset, { as: 'wheelset', foreignKey: 'wheelsetId' })
   LimitVersion.belongsTo(User, { as: 'draftedBy', foreignKey: 'draftedById' })
   LimitVersion.belongsTo(User, { as: 'secondedBy', foreignKey: 'secondedById' })
+  RuleTable.belongsTo(User, { as: 'draftedBy', foreignKey: 'draftedById' })
+  RuleTable.belongsTo(User, { as: 'secondedBy', foreignKey: 'secondedById' })
 }
 
 function joinPeople() {

@@ -48,6 +48,11 @@ const expected: Record<string, typeof everyone | Role[]> = {
   'get /api/product/limit-changes/:id/impact': staffOf.product,
   'post /api/product/limit-changes/:id/approve': staffOf.product,
   'post /api/product/limit-changes/:id/reject': staffOf.product,
+  'get /api/product/rules': staffOf.product,
+  'get /api/product/rules/:name': staffOf.product,
+  'post /api/product/rule-changes': staffOf.product,
+  'post /api/product/rule-changes/:id/approve': staffOf.product,
+  'post /api/product/rule-changes/:id/reject': staffOf.product,
   'get /api/product/audit': ['product', 'support', 'admin'],
 }
 

@@ -11,16 +11,19 @@ import {
   productList,
   productWheelset,
 } from '#contract/product-desk.ts'
+import { ruleDraft, ruleTableList, ruleTableView, ruleVersion } from '#contract/product-desk-rules.ts'
 import { listAudit } from '../../audit/list.ts'
 import { route, signedIn, type Route } from '../../http/route.ts'
 import { changeWheelset } from './change-wheelset.ts'
 import { limitImpact } from './impact.ts'
 import { draftLimit, listLimits, rejectLimit, secondLimit } from './limits.ts'
 import { listProducts, readProduct } from './read.ts'
+import { draftRules, listRules, readRuleTable, rejectRules, secondRules } from './rules.ts'
 
 const feature = 'product-desk'
 const access = ['product', 'admin'] as const
 const bySku = z.object({ sku: z.string().max(40) })
+const byName = z.object({ name: z.string().max(80) })
 const byId = z.object({ id: z.coerce.number<string>().int().min(1).max(4_294_967_295) })
 
 export const productDeskRoutes: Route[] = [
@@ -122,6 +125,69 @@ export const productDeskRoutes: Route[] = [
       reply: limitVersion,
     },
     (call) => rejectLimit(call.deps, signedIn(call), call.params.id, call.body.reason),
+  ),
+  route(
+    {
+      method: 'get',
+      path: '/api/product/rules',
+      feature,
+      access,
+      summary: 'The tables that the sums go by: version in force, and what waits',
+      reply: ruleTableList,
+    },
+    (call) => listRules(call.deps, signedIn(call)),
+  ),
+  route(
+    {
+      method: 'get',
+      path: '/api/product/rules/:name',
+      feature,
+      access,
+      summary: 'One table of the sums with all its dated versions',
+      params: byName,
+      reply: ruleTableView,
+    },
+    (call) => readRuleTable(call.deps, call.params.name, signedIn(call)),
+  ),
+  route(
+    {
+      method: 'post',
+      path: '/api/product/rule-changes',
+      feature,
+      access,
+      summary: 'Draft a new version of a table; a second person puts it in force',
+      body: ruleDraft,
+      reply: ruleVersion,
+      status: 201,
+      idempotency: 'optional',
+    },
+    (call) => draftRules(call.deps, signedIn(call), call.body),
+  ),
+  route(
+    {
+      method: 'post',
+      path: '/api/product/rule-changes/:id/approve',
+      feature,
+      access,
+      summary: 'Second a version drafted by somebody else; refused if another has followed since',
+      params: byId,
+      body: limitDecision,
+      reply: ruleVersion,
+    },
+    (call) => secondRules(call.deps, signedIn(call), call.params.id, call.body.reason),
+  ),
+  route(
+    {
+      method: 'post',
+      path: '/api/product/rule-changes/:id/reject',
+      feature,
+      access,
+      summary: 'Turn a new version down, or stop it before its time has come',
+      params: byId,
+      body: limitDecision,
+      reply: ruleVersion,
+    },
+    (call) => rejectRules(call.deps, signedIn(call), call.params.id, call.body.reason),
   ),
   route(
     {
