@@ -55,6 +55,24 @@ export interface Advice {
   reasons: Record<string, Reason>
 }
 
+/** Cautions that go with every answer, and plain information; notes beyond them make it one "with notes". */
+const standing = new Set([
+  'start-value',
+  'lower-maximum-wins',
+  'mechanic',
+  'makers-and-rules',
+  'measure-cold',
+  'check-bead',
+  'softer-by-taste',
+  'bike-unknown',
+  'sharpen',
+  'rotor-size',
+  'race-65',
+  'gusts-beyond',
+  'deeper-behind',
+  'one-step-shallower',
+])
+
 /**
  * @param catalogue every wheelset on sale; rulesVersion names rules and catalogue together
  * @returns refusals and out-of-scope answers too: being over a limit is an answer
@@ -137,45 +155,31 @@ export function advise(
   const tyreRefused = refusals.some(({ code }) => code !== 'over-every-limit' && code !== 'none-for-bike')
   const pressure = tyreRefused || !front || !rear ? null : { front, rear }
 
-  const first = wheelsets.find(({ rank }) => rank === 1)
-  const offered = new Set(wheelsets.flatMap(({ rank, sku }) => (rank === null ? [] : [sku])))
+  // The ranked come first.
+  const first = wheelsets[0]?.rank === 1 ? wheelsets[0] : undefined
+  const offered = new Set<string>()
+  for (const { rank, sku } of wheelsets) if (rank !== null) offered.add(sku)
   const offers = catalogue.filter(({ sku }) => offered.has(sku))
-  const bare = loadsWith(0)
-  const bareKg = { front: frontDesignLoad(bare.frontKg, bare.rearKg, rules['front-design-load']), rear: bare.rearKg }
-  const notes = [
-    ...refusals,
-    ...pressureNotes(filled, results, pressure !== null, rules),
-    ...(pressure && seat !== 'hookless'
-      ? hooklessOfferNotes(filled, offers, pressures(filled, loadsKg, 'hookless', rules))
-      : []),
-    ...(pressure ? bareNotes(filled, pressures(filled, bareKg, seat, rules)) : []),
-    ...rimBrakeNotes(filled, offers),
-    ...situationNotes(filled, aero, spokes, totalKg, rules),
-    ...(first?.verdict === 'no-margin'
-      ? [note('no-margin', 'caution', { marginKg: first.marginKg, limitKg: first.limitKg })]
-      : []),
+  const notes = refusals.concat(pressureNotes(filled, results, pressure !== null, rules))
+  if (pressure && seat !== 'hookless')
+    notes.push(...hooklessOfferNotes(filled, offers, pressures(filled, loadsKg, 'hookless', rules)))
+  if (pressure && filled.luggageKg > 0) {
+    const bare = loadsWith(0)
+    const bareKg = {
+      front: frontDesignLoad(bare.frontKg, bare.rearKg, rules['front-design-load']),
+      rear: bare.rearKg,
+    }
+    notes.push(...bareNotes(filled, pressures(filled, bareKg, seat, rules)))
+  }
+  notes.push(...rimBrakeNotes(filled, offers), ...situationNotes(filled, aero, spokes, totalKg, rules))
+  if (first?.verdict === 'no-margin')
+    notes.push(note('no-margin', 'caution', { marginKg: first.marginKg, limitKg: first.limitKg }))
+  notes.push(
     note('start-value', 'caution'),
     note('lower-maximum-wins', 'caution'),
     note('mechanic', 'info'),
     note('makers-and-rules', 'info'),
-  ]
-  // Standing cautions go with every answer; notes beyond them make it one "with notes".
-  const standing = new Set([
-    'start-value',
-    'lower-maximum-wins',
-    'mechanic',
-    'makers-and-rules',
-    'measure-cold',
-    'check-bead',
-    'softer-by-taste',
-    'bike-unknown',
-    'sharpen',
-    'rotor-size',
-    'race-65',
-    'gusts-beyond',
-    'deeper-behind',
-    'one-step-shallower',
-  ])
+  )
   const outcome =
     refusals.length > 0
       ? 'refuse'
@@ -183,23 +187,25 @@ export function advise(
         ? 'recommend-with-notes'
         : 'recommend'
   const extraKg = extraKgOf(useOf(filled.ride, filled.brakes), rules)
+  // Key by key: spreading a dozen small objects into one costs more than the sums.
   const reasons: Record<string, Reason> = {
     systemMassKg: massReason(filled, totalKg),
     loads: loadReason(filled, loads, share, luggageShare),
-    ...(results && !tyreRefused
-      ? {
-          'pressure.front': pressureReason(filled, 'front', results.front, seat, loads, rules),
-          'pressure.rear': pressureReason(filled, 'rear', results.rear, seat, loads, rules),
-        }
-      : {}),
-    ...(filled.tyre ? { pairing: pairingReason(filled, filled.tyre, seat, wheelsets, rules) } : {}),
-    ...aeroReasons(filled, aero, totalKg, rules),
-    'spokes.front': spokeReason(filled, totalKg, spokes.front, extraKg),
-    'spokes.rear': spokeReason(filled, totalKg, spokes.rear, extraKg),
-    limit: limitReason(totalKg, first?.limitKg ?? null),
   }
+  if (results && !tyreRefused) {
+    reasons['pressure.front'] = pressureReason(filled, 'front', results.front, seat, loads, rules)
+    reasons['pressure.rear'] = pressureReason(filled, 'rear', results.rear, seat, loads, rules)
+  }
+  if (filled.tyre) reasons.pairing = pairingReason(filled, filled.tyre, seat, wheelsets, rules)
+  aeroReasons(reasons, filled, aero, totalKg, rules)
+  reasons['spokes.front'] = spokeReason(filled, totalKg, spokes.front, extraKg)
+  reasons['spokes.rear'] = spokeReason(filled, totalKg, spokes.rear, extraKg)
+  reasons.limit = limitReason(totalKg, first?.limitKg ?? null)
   return {
-    ...base,
+    rulesVersion,
+    assumed: filled.assumed,
+    systemMassKg: totalKg,
+    parts,
     outcome,
     loads: { frontN: loads.frontN, rearN: loads.rearN, frontShare: loads.frontShare },
     pressure,

@@ -235,9 +235,15 @@ export function brakeHeatReason(f: Filled, totalKg: number, heat: RimHeatAdvice,
 }
 
 /** The working of depth, trade-off and, for rim brakes, heat. */
-export const aeroReasons = (f: Filled, aero: AeroAdvice, totalKg: number, rules: Rules): Record<string, Reason> => ({
-  'rimDepthMm.front': depthReason(f, aero, 'front', rules),
-  'rimDepthMm.rear': depthReason(f, aero, 'rear', rules),
-  tradeOff: tradeOffReason(f, aero),
-  ...(aero.brakeHeat ? { brakeHeat: brakeHeatReason(f, totalKg, aero.brakeHeat, rules) } : {}),
-})
+export function aeroReasons(
+  into: Record<string, Reason>,
+  f: Filled,
+  aero: AeroAdvice,
+  totalKg: number,
+  rules: Rules,
+): void {
+  into['rimDepthMm.front'] = depthReason(f, aero, 'front', rules)
+  into['rimDepthMm.rear'] = depthReason(f, aero, 'rear', rules)
+  into.tradeOff = tradeOffReason(f, aero)
+  if (aero.brakeHeat) into.brakeHeat = brakeHeatReason(f, totalKg, aero.brakeHeat, rules)
+}

@@ -2,7 +2,7 @@
 import type { Filled } from './answers.ts'
 import type { WheelFacts, WheelsetFacts } from './catalogue.ts'
 import { checkLimit, lowestLimit, type LimitSource } from './limits.ts'
-import { useOf, type Criterion } from './rider-limits.ts'
+import { useOf, type Criterion, type WheelUse } from './rider-limits.ts'
 import { lookUp, type Rules } from './rules.ts'
 import { structuralLimit, type SpokeAdvice, type StructuralLimit } from './spokes.ts'
 import { tyreChecker, type NearestChange, type Removal, type TyreCheck } from './tyre-check.ts'
@@ -153,7 +153,7 @@ interface Offered {
   judgement: Judgement
   key: readonly number[]
 }
-const bySlug = (a: Judgement, b: Judgement) => (a.slug < b.slug ? -1 : a.slug > b.slug ? 1 : 0)
+const bySlug = (a: { slug: string }, b: { slug: string }) => (a.slug < b.slug ? -1 : a.slug > b.slug ? 1 : 0)
 
 function firstDifference(a: Offered, b: Offered): number {
   for (let i = 0; i < a.key.length; i += 1) if (a.key[i] !== b.key[i]) return i
@@ -176,8 +176,7 @@ export function judgeAll(sets: readonly WheelsetFacts[], situation: Situation): 
   const tyreOf = tyreChecker(situation)
   const offered: Offered[] = []
   const removed: Judgement[] = []
-  for (const set of sets) {
-    const structural = structuralLimit(set, use, rules)
+  for (const { set, structural, structure } of candidates(sets, use, rules)) {
     const lowest = lowestLimit(set, totalKg, situation.restingKg, structural)
     const limit = checkLimit(totalKg, lowest.limitKg, rules.limits.noMarginFrom)
     const judgement: Judgement = {
@@ -189,11 +188,7 @@ export function judgeAll(sets: readonly WheelsetFacts[], situation: Situation): 
       limitKg: lowest.limitKg,
       limitFrom: lowest.from,
       marginKg: limit.marginKg,
-      structure: structural && {
-        position: structural.position,
-        limitKg: structural.limit.systemKg,
-        governedBy: structural.limit.governedBy,
-      },
+      structure,
       codes: [],
       behindBy: null,
       startBar: null,
@@ -243,7 +238,37 @@ export function judgeAll(sets: readonly WheelsetFacts[], situation: Situation): 
     const before = offered[index - 1]
     if (before) one.judgement.behindBy = rankedBy[firstDifference(before, one)] ?? 'name'
   })
-  return [...offered.map(({ judgement }) => judgement), ...removed.sort(bySlug)]
+  const ranked = offered.map(({ judgement }) => judgement)
+  for (const judgement of removed) ranked.push(judgement)
+  return ranked
+}
+
+interface Candidate {
+  set: WheelsetFacts
+  structural: StructuralLimit | null
+  structure: Judgement['structure']
+}
+const known = new WeakMap<readonly WheelsetFacts[], { rules: Rules; byUse: Map<WheelUse, readonly Candidate[]> }>()
+
+/** What holds for every rider of a use: the range by name, each with its structural limit. Worked out once for a range and a set of rules. */
+function candidates(sets: readonly WheelsetFacts[], use: WheelUse, rules: Rules): readonly Candidate[] {
+  let kept = known.get(sets)
+  if (kept?.rules !== rules) known.set(sets, (kept = { rules, byUse: new Map<WheelUse, readonly Candidate[]>() }))
+  const found = kept.byUse.get(use)
+  if (found) return found
+  const fresh = sets
+    .map((set): Candidate => {
+      const structural = structuralLimit(set, use, rules)
+      const structure = structural && {
+        position: structural.position,
+        limitKg: structural.limit.systemKg,
+        governedBy: structural.limit.governedBy,
+      }
+      return { set, structural, structure }
+    })
+    .sort((a, b) => bySlug(a.set, b.set))
+  kept.byUse.set(use, fresh)
+  return fresh
 }
 
 const notRobust: Removal = { verdict: 'mismatch', code: 'not-robust' }

@@ -159,25 +159,14 @@ export interface StructuralLimit {
   position: 'front' | 'rear'
   limit: RiderLimit
 }
-const byWheelset = new WeakMap<WheelsetFacts, Map<Rules, Map<WheelUse, StructuralLimit | null>>>()
-
 /**
  * Structural limit of a wheelset as a ready-to-ride total: the wheel that gives first. Null while a wheel is not solved.
- * Worked out once for each wheelset, use and set of rules.
  */
 export function structuralLimit(set: WheelsetFacts, use: WheelUse, rules: Rules): StructuralLimit | null {
-  let byRules = byWheelset.get(set)
-  if (!byRules) byWheelset.set(set, (byRules = new Map<Rules, Map<WheelUse, StructuralLimit | null>>()))
-  let byUse = byRules.get(rules)
-  if (!byUse) byRules.set(rules, (byUse = new Map<WheelUse, StructuralLimit | null>()))
-  const known = byUse.get(use)
-  if (known !== undefined) return known
   const of = (wheel: WheelFacts): StructuralLimit | null =>
     wheel.strength ? { position: wheel.position, limit: riderLimit(wheel.strength, wheel.position, use, rules) } : null
   const [front, rear] = [of(set.front), of(set.rear)]
-  const found = !front || !rear ? null : weaker(front, rear)
-  byUse.set(use, found)
-  return found
+  return !front || !rear ? null : weaker(front, rear)
 }
 
 /** A wheel that is not robust gives before any that is. */

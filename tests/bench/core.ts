@@ -37,7 +37,7 @@ export function benchCore(): void {
   interleaved(3, works)
   const { one = 0, two = 0, four = 0, eight = 0 } = interleaved(ROUNDS, works)
   say(`advice for one rider over ${wheelsetFacts.length} wheelsets: median ${one.toFixed(1)} µs (goal 50)`)
-  const each = (sets: number, value: number) => `${((value - one) / ((sets - 1) * wheelsetFacts.length)).toFixed(2)}`
+  const each = (sets: number, value: number) => ((value - one) / ((sets - 1) * wheelsetFacts.length)).toFixed(2)
   say(
     `  2, 4, 8 times the range: ${[two, four, eight].map((value) => value.toFixed(1)).join(', ')} µs; each further wheelset costs ${each(2, two)}, ${each(4, four)}, ${each(8, eight)} µs`,
   )
