@@ -7,6 +7,7 @@ import express, { type Express } from 'express'
 import helmet from 'helmet'
 import { pinoHttp } from 'pino-http'
 import type { Deps } from './deps.ts'
+import { watchAdviceInputs } from './features/advisor/inputs.ts'
 import { AppError } from './http/errors.ts'
 import { mountRoutes } from './http/mount.ts'
 import { problemHandler, requestId } from './http/problem.ts'
@@ -17,9 +18,12 @@ import { routes } from './routes.ts'
 /** @param clientDir folder of the built pages; null where only the API is wanted (tests) */
 export function createApp(deps: Deps, clientDir: string | null): Express {
   const { config, log } = deps
+  watchAdviceInputs(deps.db)
   const secure = config.PUBLIC_URL.startsWith('https:')
   const app = express()
   app.disable('x-powered-by')
+  // Replies of the API are not to be stored, so a digest of each would be worked out for nothing; files have their own.
+  app.disable('etag')
   app.set('trust proxy', secure ? 1 : false)
   app.use(
     pinoHttp({

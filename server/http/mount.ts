@@ -37,7 +37,7 @@ export function mountRoutes(app: Express, routes: readonly Route[], deps: Deps) 
       const call = { deps, req, res, params, query, body, user } as never
       const answer = async () => ({
         status: spec.status ?? 200,
-        body: spec.contentType ? undefined : spec.reply.parse(await handle(call)),
+        body: spec.contentType ? undefined : spec.asMade ? await handle(call) : spec.reply.parse(await handle(call)),
       })
 
       if (spec.contentType) {

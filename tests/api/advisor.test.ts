@@ -1,5 +1,5 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import type { Advice } from '#contract/advisor.ts'
+import { advice, type Advice } from '#contract/advisor.ts'
 import { AdviceSnapshot } from '../../server/models/advice-snapshot.ts'
 import { wheelsetFacts } from '../../server/seeds/facts.ts'
 import { RULES_VERSION } from '../../server/seeds/rule-tables.ts'
@@ -24,9 +24,11 @@ const ask = async (answers: object) => (await shop.agent().post('/api/advice').s
 
 describe('POST /api/advice', () => {
   it.each((reference.personas as unknown as Persona[]).map((persona) => [persona.id, persona] as const))(
-    '%s meets every bound over the wire',
+    '%s meets every bound over the wire, in the shape that is published',
     async (_id, persona) => {
-      expect(checkPersona(persona, await ask(persona.inputs), facts).failures).toEqual([])
+      const reply = await ask(persona.inputs)
+      expect(advice.parse(reply)).toEqual(reply)
+      expect(checkPersona(persona, reply, facts).failures).toEqual([])
     },
   )
   it('gives the same bytes for the same answers, under a version that names rules and catalogue', async () => {

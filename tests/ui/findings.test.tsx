@@ -47,7 +47,7 @@ describe('findings', () => {
     await title(/^Ride/)
     await user.click(screen.getByRole('button', { name: 'working: Tyre pressure, to start' }))
     expect(screen.getAllByText(/All About Tire Inflation/).length).toBe(2)
-    expect(screen.getAllByText('derived').length).toBe(2)
+    expect(screen.getAllByText('practice').length).toBe(2)
   })
 
   it('show the trade-off as a table as well', async () => {

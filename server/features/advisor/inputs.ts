@@ -1,9 +1,10 @@
 /**
  * What advice is worked out from besides the rider's answers: the range and the rules in force. Kept in memory for as long as the database says that
- * nothing of it was written and no dated version has come into force, so a lowered limit counts from the next call on, in every process.
+ * nothing of it was written and no dated version has come into force. This process's own writes count from the next call on; a write from
+ * elsewhere within a quarter of a second. What is decided (basket, order) is read afresh inside its transaction.
  */
 import { createHash } from 'node:crypto'
-import { Op, QueryTypes, type Transaction } from 'sequelize'
+import { Op, QueryTypes, type Sequelize, type Transaction } from 'sequelize'
 import { rulesFrom, type Rules } from '#core/rules.ts'
 import type { Deps } from '../../deps.ts'
 import { RuleTable } from '../../models/rule-table.ts'
@@ -24,8 +25,11 @@ interface Kept extends AdviceInputs {
   until: number
 }
 
-const keptBy = new WeakMap<Deps['db'], Kept>()
-const asking = new WeakMap<Deps['db'], Promise<string | null>>()
+/** How long a mark is believed without asking again, ms. */
+const BELIEVED_MS = 250
+
+const keptBy = new WeakMap<Sequelize, Kept>()
+const asked = new WeakMap<Sequelize, { mark: Promise<string | null>; at: number }>()
 
 /** @param transaction reads afresh on its connection: what is decided inside a transaction is decided on what that transaction sees */
 export async function adviceInputs(deps: Reach, transaction?: Transaction): Promise<AdviceInputs> {
@@ -40,19 +44,36 @@ export async function adviceInputs(deps: Reach, transaction?: Transaction): Prom
   return inputs
 }
 
-/** Calls that come in before the question is sent share it. */
-function presentMark(db: Deps['db']): Promise<string | null> {
-  const shared = asking.get(db)
-  if (shared) return shared
-  const asked = Promise.resolve().then(async () => {
-    asking.delete(db)
-    const [row] = await db.query<{ mark: string }>('SELECT mark FROM advice_inputs WHERE id = 1', {
-      type: QueryTypes.SELECT,
-    })
-    return row?.mark ?? null
-  })
-  asking.set(db, asked)
-  return asked
+function presentMark(db: Sequelize): Promise<string | null> {
+  const known = asked.get(db)
+  // Not the shop's clock: this is about how long ago a question was asked, also while a test moves that clock.
+  const at = performance.now()
+  if (known && at - known.at < BELIEVED_MS) return known.mark
+  const mark = db
+    .query<{ mark: string }>('SELECT mark FROM advice_inputs WHERE id = 1', { type: QueryTypes.SELECT })
+    .then(([row]) => row?.mark ?? null)
+  mark.catch(() => asked.delete(db))
+  asked.set(db, { mark, at })
+  return mark
+}
+
+/** Forgets the mark whenever this process writes a row through a model, once the write is there for others to see. */
+export function watchAdviceInputs(db: Sequelize): void {
+  const forget = ({ transaction }: { transaction?: Transaction | null }) => {
+    if (!transaction) asked.delete(db)
+    else
+      transaction.afterCommit(() => {
+        asked.delete(db)
+      })
+  }
+  const afterRow = (_row: unknown, options: object) => {
+    forget(options)
+  }
+  db.addHook('afterSave', afterRow)
+  db.addHook('afterDestroy', afterRow)
+  db.addHook('afterBulkCreate', afterRow)
+  db.addHook('afterBulkUpdate', forget)
+  db.addHook('afterBulkDestroy', forget)
 }
 
 /** When the next seconded limit or table comes into force, ms. */

@@ -14,6 +14,7 @@ export const advisorRoutes: Route[] = [
       summary: 'Advice for one rider over every wheelset on sale; stores nothing',
       body: riderAnswers,
       reply: advice,
+      asMade: true,
     },
     ({ deps, body }) => giveAdvice(deps, body),
   ),
