@@ -7,6 +7,13 @@ import { lookUp, type Rules } from './rules.ts'
 import { structuralLimit, type SpokeAdvice, type StructuralLimit } from './spokes.ts'
 import { tyreChecker, type NearestChange, type Removal, type TyreCheck } from './tyre-check.ts'
 
+interface Structure {
+  position: 'front' | 'rear'
+  limitKg: number
+  governedBy: Criterion
+}
+
+/** What a wheelset has nothing to say of is left out, so that the reply stays short: undefined here, absent on the wire. */
 export interface Judgement {
   sku: string
   slug: string
@@ -17,16 +24,16 @@ export interface Judgement {
   limitKg: number
   limitFrom: LimitSource
   marginKg: number
-  /** What its weaker wheel carries in this use by the structural model, ±25 %; null while it is not solved. */
-  structure: { position: 'front' | 'rear'; limitKg: number; governedBy: Criterion } | null
+  /** What its weaker wheel carries in this use by the structural model, ±25 %; absent while it is not solved, and for what something else rules out. */
+  structure: Structure | undefined
   codes: string[]
-  /** What puts it behind the one ranked before it; null for the first and for what is ruled out. */
-  behindBy: (typeof rankedBy)[number] | null
+  /** What puts it behind the one ranked before it; absent for the first and for what is ruled out. */
+  behindBy: (typeof rankedBy)[number] | undefined
   nearestChange?: NearestChange
   /** Start values on this wheelset's own rims; null where no tyre is known or it is ruled out. */
   startBar: { front: number; rear: number } | null
   /** Names of the pairing rows that judged tyre and rim; null where another rule decided before or no tyre is known. */
-  pairingRows: { front: string; rear: string } | null
+  pairingRows: { front: string; rear: string } | undefined
 }
 
 /** Rules of the tyre come last: a wheelset that one of them removes takes the bike, the use and the total. */
@@ -144,8 +151,8 @@ function spokeVerdict(set: WheelsetFacts, situation: Situation, structural: Stru
     : 'spokes-below-advice'
 }
 
-const rowsOf = (tyre: TyreCheck | null) =>
-  tyre?.pairing ? { front: tyre.pairing.front.row, rear: tyre.pairing.rear.row } : null
+const rowsOf = (tyre: TyreCheck) =>
+  tyre.pairing ? { front: tyre.pairing.front.row, rear: tyre.pairing.rear.row } : undefined
 
 /** What ranks the offered ones, in this order; the names are the ones that a judgement gives for standing behind the one before it. */
 export const rankedBy = ['spokes', 'margin', 'depth', 'made-for', 'tyre', 'mass', 'name'] as const
@@ -188,11 +195,11 @@ export function judgeAll(sets: readonly WheelsetFacts[], situation: Situation): 
       limitKg: lowest.limitKg,
       limitFrom: lowest.from,
       marginKg: limit.marginKg,
-      structure,
+      structure: undefined,
       codes: [],
-      behindBy: null,
+      behindBy: undefined,
       startBar: null,
-      pairingRows: null,
+      pairingRows: undefined,
     }
     const early =
       bikeMismatch(set, situation) ??
@@ -200,9 +207,10 @@ export function judgeAll(sets: readonly WheelsetFacts[], situation: Situation): 
       (structural && !structural.limit.robust ? notRobust : null) ??
       (limit.verdict === 'over-limit' ? overLimit(lowest) : null)
     const tyre = early ? null : tyreOf(set)
-    judgement.pairingRows = rowsOf(tyre)
+    if (tyre) judgement.pairingRows = rowsOf(tyre)
     const removal = early ?? tyre?.removal ?? null
     if (removal) {
+      if (lowest.from === 'structure') judgement.structure = structure
       judgement.verdict = removal.verdict
       judgement.codes.push(removal.code)
       if (removal.change) judgement.nearestChange = removal.change
@@ -220,6 +228,7 @@ export function judgeAll(sets: readonly WheelsetFacts[], situation: Situation): 
       codes.push('structure-near')
     if (tyre) codes.push(...tyre.codes)
     judgement.startBar = tyre?.startBar ?? null
+    judgement.structure = structure
     offered.push({
       judgement,
       key: [
@@ -246,7 +255,7 @@ export function judgeAll(sets: readonly WheelsetFacts[], situation: Situation): 
 interface Candidate {
   set: WheelsetFacts
   structural: StructuralLimit | null
-  structure: Judgement['structure']
+  structure: Structure | undefined
 }
 const known = new WeakMap<readonly WheelsetFacts[], { rules: Rules; byUse: Map<WheelUse, readonly Candidate[]> }>()
 
@@ -259,11 +268,13 @@ function candidates(sets: readonly WheelsetFacts[], use: WheelUse, rules: Rules)
   const fresh = sets
     .map((set): Candidate => {
       const structural = structuralLimit(set, use, rules)
-      const structure = structural && {
-        position: structural.position,
-        limitKg: structural.limit.systemKg,
-        governedBy: structural.limit.governedBy,
-      }
+      const structure = structural
+        ? {
+            position: structural.position,
+            limitKg: structural.limit.systemKg,
+            governedBy: structural.limit.governedBy,
+          }
+        : undefined
       return { set, structural, structure }
     })
     .sort((a, b) => bySlug(a.set, b.set))

@@ -191,7 +191,7 @@ export function pairingReason(
   f: Filled,
   tyre: NonNullable<Filled['tyre']>,
   seat: 'hooked' | 'hookless',
-  judged: readonly { pairingRows: { front: string; rear: string } | null }[],
+  judged: readonly { pairingRows: { front: string; rear: string } | undefined }[],
   rules: Rules,
 ): Reason {
   const table = rules['tyre-rim-pairing']

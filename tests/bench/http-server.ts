@@ -2,16 +2,33 @@
 import type { AddressInfo } from 'node:net'
 import express from 'express'
 import { pino } from 'pino'
+import { advise } from '#core/advise.ts'
+import { rulesFrom } from '#core/rules.ts'
 import { createApp } from '../../server/app.ts'
 import { readConfig } from '../../server/config.ts'
 import { openDatabase } from '../../server/db.ts'
 import { initModels } from '../../server/models/index.ts'
 import { createPayments } from '../../server/payments/create.ts'
+import { wheelsetFacts } from '../../server/seeds/facts.ts'
+import { ruleTables } from '../../server/seeds/rule-tables.ts'
+import { riders } from './riders.ts'
 
 function echo() {
   const app = express()
   app.post('/api/advice', express.json(), (req, res) => {
     res.json(req.body)
+  })
+  return app
+}
+
+/** The same, with an advice for its answer that was made beforehand: what sending so much costs by itself. */
+function largeEcho() {
+  const [someone] = riders(1)
+  if (!someone) throw new Error('no rider')
+  const reply = advise(someone, wheelsetFacts, rulesFrom(ruleTables), 'bench')
+  const app = express()
+  app.post('/api/advice', express.json(), (_req, res) => {
+    res.json(reply)
   })
   return app
 }
@@ -35,7 +52,8 @@ function shop() {
   return createApp({ config, db, payments: createPayments(config, clock), clock, log }, null)
 }
 
-const server = (process.argv[2] === 'echo' ? echo() : shop()).listen(0, '127.0.0.1', () => {
+const kinds: Record<string, () => express.Express> = { echo, 'large-echo': largeEcho, shop }
+const server = (kinds[process.argv[2] ?? ''] ?? shop)().listen(0, '127.0.0.1', () => {
   process.send?.({ port: (server.address() as AddressInfo).port })
 })
 process.on('message', () => {
