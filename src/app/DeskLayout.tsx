@@ -20,6 +20,7 @@ const desks: { key: 'supportDesk' | 'productDesk'; roles: readonly Role[]; tabs:
     tabs: [
       { to: '/product/wheelsets', key: 'wheelsets' },
       { to: '/product/limits', key: 'limits' },
+      { to: '/product/rules', key: 'rules' },
     ],
   },
 ]

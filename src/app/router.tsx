@@ -74,6 +74,14 @@ export const router = createBrowserRouter([
                 path: 'product/limits',
                 ...page(async () => (await import('../pages/product-desk/LimitsPage.tsx')).LimitsPage),
               },
+              {
+                path: 'product/rules',
+                ...page(async () => (await import('../pages/product-desk/RulesPage.tsx')).RulesPage),
+              },
+              {
+                path: 'product/rules/:name',
+                ...page(async () => (await import('../pages/product-desk/RuleTablePage.tsx')).RuleTablePage),
+              },
             ],
           },
           { path: '*', Component: ErrorPage },
