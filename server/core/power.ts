@@ -68,19 +68,6 @@ export function effectiveMass(massKg: number, inertia: number, radiusM: number):
   return massKg + inertia / (radiusM * radiusM)
 }
 
-/**
- * Inertia of one wheel without its hub, kg·m²: m_rim·r_rim² + m_tyre·r_tyre²
- * @throws RangeError unless masses are at least 0 and radii positive
- * @source aero reference 5.6, DERIVED; the pair of Martin et al. 1998 had 0.14 (READ via an open transcription)
- * @example wheelInertia({ rimKg: 0.45, rimRadiusM: 0.3, tyreKg: 0.33, tyreRadiusM: 0.325 }) // 0.075
- */
-export function wheelInertia(wheel: { rimKg: number; rimRadiusM: number; tyreKg: number; tyreRadiusM: number }) {
-  const { rimKg, rimRadiusM, tyreKg, tyreRadiusM } = wheel
-  if (!(rimKg >= 0 && tyreKg >= 0 && rimRadiusM > 0 && tyreRadiusM > 0))
-    throw new RangeError('wheelInertia: out of range')
-  return rimKg * rimRadiusM ** 2 + tyreKg * tyreRadiusM ** 2
-}
-
 /** Pull of slope and rolling on each kilogram, N/kg: g·(sin θ + C_rr·cos θ), θ = atan(gradient). */
 export const pullPerKg = (gradient: number, rollingCoefficient: number, gravity = STANDARD_GRAVITY) =>
   (gravity * (gradient + rollingCoefficient)) / Math.sqrt(1 + gradient * gradient)
