@@ -22,19 +22,11 @@ import {
   situationNotes,
   type Note,
 } from './notes.ts'
-import {
-  limitReason,
-  loadReason,
-  massReason,
-  pairingReason,
-  pressureReason,
-  spokeReason,
-  type Reason,
-} from './reasons.ts'
+import { loadReason, massReason, pairingReason, pressureReason, type Reason } from './reasons.ts'
 import { lookUp, type Rules } from './rules.ts'
 import type { TradeOffPoint } from './trade-off.ts'
-import { useOf } from './rider-limits.ts'
-import { extraKgOf, spokeAdvice, type SpokeAdvice } from './spokes.ts'
+import { spokeAdvice, type SpokeAdvice } from './spokes.ts'
+import { limitReason, spokeReason } from './structure-reasons.ts'
 import { wheelPressure, type WheelPressure } from './wheel-pressure.ts'
 
 export interface Advice {
@@ -186,7 +178,6 @@ export function advise(
       : notes.some(({ code }) => !standing.has(code))
         ? 'recommend-with-notes'
         : 'recommend'
-  const extraKg = extraKgOf(useOf(filled.ride, filled.brakes), rules)
   // Key by key: spreading a dozen small objects into one costs more than the sums.
   const reasons: Record<string, Reason> = {
     systemMassKg: massReason(filled, totalKg),
@@ -198,9 +189,16 @@ export function advise(
   }
   if (filled.tyre) reasons.pairing = pairingReason(filled, filled.tyre, seat, wheelsets, rules)
   aeroReasons(reasons, filled, aero, totalKg, rules)
-  reasons['spokes.front'] = spokeReason(filled, totalKg, spokes.front, extraKg)
-  reasons['spokes.rear'] = spokeReason(filled, totalKg, spokes.rear, extraKg)
-  reasons.limit = limitReason(totalKg, first?.limitKg ?? null)
+  reasons['spokes.front'] = spokeReason(filled, totalKg, 'front', spokes.front, rules)
+  reasons['spokes.rear'] = spokeReason(filled, totalKg, 'rear', spokes.rear, rules)
+  reasons.limit = limitReason(
+    filled,
+    totalKg,
+    situation.restingKg,
+    first,
+    first && catalogue.find(({ sku }) => sku === first.sku),
+    rules,
+  )
   return {
     rulesVersion,
     assumed: filled.assumed,

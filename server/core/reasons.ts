@@ -1,7 +1,6 @@
 /** The working behind each value: formula in symbols, the rider's inputs, the constants, the source with its label. The words live with the pages. */
 import type { Filled } from './answers.ts'
 import type { Loads } from './loads.ts'
-import type { SpokeAdvice } from './spokes.ts'
 import type { Rules } from './rules.ts'
 import {
   CHART_DROP,
@@ -260,32 +259,3 @@ export function pairingReason(
     ],
   }
 }
-
-export const spokeReason = (f: Filled, totalKg: number, advice: SpokeAdvice, extraKg: number): Reason => ({
-  formula: 'least n with limit(n) ≥ m − bike and kit of the table, then the trade floors; front ≥ rear − 4',
-  inputs: {
-    ride: f.ride,
-    brakes: f.brakes,
-    systemMassKg: totalKg,
-    riderEquivalentKg: totalKg - extraKg,
-    governedBy: advice.governedBy,
-    luggageKg: f.luggageKg,
-    assist: f.assist,
-  },
-  constants: { tableExtraKg: extraKg, frontMayBeFewerBy: 4 },
-  source:
-    'Rider limits of a finite-element model of rim and pre-tensioned spokes, by count; trade floors are common practice',
-  label: 'derived',
-  uncertainty: '±20–25 %',
-  wouldChangeIf: ['bodyMassKg', 'luggageKg', 'ride', 'assist'],
-})
-
-export const limitReason = (totalKg: number, limitKg: number | null): Reason => ({
-  formula: 'margin = stated limit − (rider + kit + bike + bags); from 95 % of the limit: no margin',
-  inputs: { systemMassKg: totalKg, limitKg },
-  constants: { noMarginFrom: 0.95 },
-  source: 'The stated system limit of the wheelset in force today, with its proof',
-  label: 'practice',
-  uncertainty: 'exact',
-  wouldChangeIf: ['bodyMassKg', 'bikeMassKg', 'luggageKg', 'limit-change'],
-})
