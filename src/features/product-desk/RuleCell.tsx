@@ -46,7 +46,13 @@ export function RuleCell({ shape, typed, path, unit = null, name }: CellProps) {
           ))}
         </Select>
       ) : shape.kind === 'text' && path.at(-1) === 'source' ? (
-        <TextArea {...tied} rows={2} value={text} className={tight} onChange={(event) => set(event.target.value)} />
+        <TextArea
+          {...tied}
+          rows={2}
+          value={text}
+          className={`${tight} field-sizing-content`}
+          onChange={(event) => set(event.target.value)}
+        />
       ) : (
         <span className="flex items-center gap-1.5">
           <TextInput

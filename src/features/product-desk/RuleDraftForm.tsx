@@ -81,7 +81,9 @@ export function RuleDraftForm({ table, base: newest }: { table: TableName; base:
     }
     const parsed = ruleDraft.safeParse(request, { error: codeOf })
     // A cell that cannot be read needs no second word about its shape.
-    const cells = read.faults.length > 0 ? read.faults : checkTable(table, read.data, base.data)
+    const unread = new Set(read.faults.map(({ path }) => path.join('.')))
+    const others = checkTable(table, read.data, base.data).filter(({ path }) => !unread.has(path.join('.')))
+    const cells = [...read.faults, ...others]
     const wrong: Problem[] = [
       ...cells.map((one) => ({ path: ['data', ...one.path].join('.'), message: words.fault(one, read.data) })),
       ...(parsed.error?.issues ?? []).map(({ path, message }) => ({
@@ -124,7 +126,7 @@ export function RuleDraftForm({ table, base: newest }: { table: TableName; base:
   }
 
   return (
-    <form noValidate className="grid gap-6" onSubmit={submit}>
+    <form noValidate className="grid grid-cols-1 gap-6" onSubmit={submit}>
       {problems.length > 0 && (
         <ErrorSummary
           key={tries}
@@ -220,7 +222,7 @@ export function RuleDraftForm({ table, base: newest }: { table: TableName; base:
         <h3 id={`${formId}-changes`} className="mb-1 text-sm font-bold">
           {t('rules.changes', { count: found.length })}
         </h3>
-        <RuleDifferences found={found} words={words} />
+        {found.length > 0 && <RuleDifferences found={found} words={words} />}
       </section>
       <div className="flex flex-wrap gap-3">
         <Button type="submit" busy={send.isPending}>

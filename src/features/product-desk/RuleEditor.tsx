@@ -33,16 +33,19 @@ export function RulePart({ shape, typed, path, unit }: PartProps) {
 const inside = (typed: Typed, key: string | number): Typed =>
   typeof typed === 'object' ? ((typed as Record<string | number, Typed>)[key] ?? '') : ''
 
-/** Sources and names of rows need the whole line. */
+/** A source needs the whole line. */
 const isWide = (key: string, { kind }: Leaf) => kind === 'text' && key === 'source'
 
 function Group({ shape, typed, path, unit }: PartProps<Extract<Shape, { kind: 'group' }>>) {
   const { words } = useEditing()
   const entries = Object.entries(shape.of)
-  const leaves = entries.flatMap(([key, one]) => (isLeaf(one) ? [[key, one] as const] : []))
+  // What needs the whole line comes last, so that the rest stands on one.
+  const leaves = entries
+    .flatMap(([key, one]) => (isLeaf(one) ? [[key, one] as const] : []))
+    .sort(([a, one], [b, other]) => Number(isWide(a, one)) - Number(isWide(b, other)))
   const rest = entries.filter(([, one]) => !isLeaf(one))
   return (
-    <div className="grid gap-6">
+    <div className="grid grid-cols-1 gap-6">
       {leaves.length > 0 && (
         <div className="grid grid-cols-[repeat(auto-fill,minmax(min(11.5rem,100%),1fr))] items-end gap-x-5 gap-y-3">
           {leaves.map(([key, one]) => (

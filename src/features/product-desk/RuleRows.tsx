@@ -104,7 +104,7 @@ function NumberGrid({ columns, rows, path, buttons }: RowsProps & { columns: [st
   const few = columns.length <= 3
   return (
     // A wide grid scrolls by itself, so that the page does not; the keyboard can reach it.
-    <div role="group" aria-label={words.word(list)} tabIndex={few ? undefined : 0} className="overflow-x-auto">
+    <div role="group" aria-label={words.word(list)} tabIndex={few ? undefined : 0} className="relative overflow-x-auto">
       <table className={`border-collapse text-sm ${few ? 'w-full max-w-[34rem]' : 'min-w-full'}`}>
         <thead>
           <tr className="border-b border-ink text-xs text-soft">
@@ -155,18 +155,18 @@ function RowBlocks({ row, rows, path, buttons }: RowsProps & { row: Shape }) {
   return (
     <ol className="border-t border-ink">
       {rows.map((one, index) => (
-        <li key={index} className="border-b border-line py-3">
+        <li key={index} className="relative border-b border-line py-3">
           <div className="flex items-start gap-3">
             <fieldset className="min-w-0 flex-1">
-              <legend className="float-start me-3 w-7 pt-7 text-end text-xs text-soft max-sm:w-auto max-sm:pt-0.5">
+              <legend className="float-start me-3 w-7 pt-7 text-end text-xs text-soft max-sm:min-h-9 max-sm:w-auto max-sm:pt-1.5">
                 <span className="sr-only">{t('rules.rowHead')} </span>
                 {index + 1}
               </legend>
-              <div className="min-w-0 overflow-hidden p-1 max-sm:clear-both">
+              <div className="flow-root min-w-0 max-sm:clear-both">
                 <RulePart shape={row} typed={one} path={[...path, index]} unit={null} />
               </div>
             </fieldset>
-            <div className="flex-none pt-6 max-sm:pt-0">{buttons(index)}</div>
+            <div className="flex-none pt-6 max-sm:absolute max-sm:end-0 max-sm:top-2 max-sm:pt-0">{buttons(index)}</div>
           </div>
         </li>
       ))}

@@ -49,13 +49,13 @@ function TableRow({ row: { name, current, waiting } }: { row: RuleTableRow }) {
           </>
         )}
       </Cell>
-      <Cell className="max-xl:hidden">
+      <Cell className="min-w-36 max-xl:hidden">
         {current?.draftedBy ?? t('nobody')}
         {current?.secondedBy && (
           <span className="block text-xs text-soft">{t('limits.secondedByShort', { name: current.secondedBy })}</span>
         )}
       </Cell>
-      <Cell>
+      <Cell className="min-w-28 md:min-w-44">
         {waiting.map((one) => (
           <span key={one.id} className={`block ${one.stale ? 'text-soft' : 'font-[650] text-near'}`}>
             {one.standing === 'seconded' && one.inForceFrom !== null
