@@ -54,6 +54,36 @@ export const wheelset = z.object({
   rear: wheelFacts,
 })
 export type Wheelset = z.infer<typeof wheelset>
+const bothSides = z.object({ left: z.number(), right: z.number() })
+const spread = z.object({ mean: z.number(), least: z.number(), greatest: z.number() })
+const broken = z.object({ shiftMm: z.number(), runOutMm: z.number(), leastTensionN: z.number() })
+/** What the structural model found of one wheel at its tension: an estimate, ±25 % as a rider limit. Left is the rotor's side. */
+export const wheelStructure = z.object({
+  tensionN: bothSides.extend({ average: z.number() }),
+  tensionRatio: z.number(),
+  spokeLengthMm: bothSides,
+  bracingDeg: bothSides,
+  rimCompressionN: z.number(),
+  radialNPerMm: spread,
+  lateralNPerMm: spread,
+  tangentialNPerMm: spread,
+  share: z.number(),
+  gain: z.number(),
+  /** Change of each spoke's tension for a newton of load at a left and at a right spoke; spoke 0 is at the road. */
+  profile: z.object({ underLeft: z.array(z.number()), underRight: z.array(z.number()) }),
+  firstSlackN: z.number(),
+  firstSlackSide: z.enum(['left', 'right', 'either']),
+  lateralFirstSlackN: z.number(),
+  rangePerN: bothSides,
+  torqueWeightN: z.object({ front: z.number(), rear: z.number() }),
+  brokenSpoke: z.object({ left: broken, right: broken }),
+  bucklingTensionN: z.number(),
+})
+export const wheelsetDetail = wheelset.extend({
+  /** Null while a wheel is not solved. */
+  structure: z.object({ front: wheelStructure.nullable(), rear: wheelStructure.nullable() }),
+})
+export type WheelsetDetail = z.infer<typeof wheelsetDetail>
 export const wheelsetList = listOf(wheelset)
 export type WheelsetList = z.infer<typeof wheelsetList>
 

@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { marketList, wheelset, wheelsetFilters, wheelsetList } from '#contract/catalogue.ts'
+import { marketList, wheelsetDetail, wheelsetFilters, wheelsetList } from '#contract/catalogue.ts'
 import { locale } from '#contract/common.ts'
 import { route, type Route } from '../../http/route.ts'
 import { localeOf } from '../../http/texts.ts'
@@ -27,10 +27,10 @@ export const catalogueRoutes: Route[] = [
       path: '/api/wheelsets/:slug',
       feature,
       access: 'anyone',
-      summary: 'One wheelset',
+      summary: 'One wheelset, with what the structural model found of its wheels',
       params: z.object({ slug: z.string().max(80) }),
       query: z.strictObject({ lng: locale.optional() }),
-      reply: wheelset,
+      reply: wheelsetDetail,
     },
     ({ deps, req, params, query }) => readWheelset(deps, params.slug, query.lng ?? localeOf(req)),
   ),

@@ -1,8 +1,9 @@
 /** Looking through the range. */
-import type { Wheelset, WheelsetFilters, WheelsetList } from '#contract/catalogue.ts'
+import type { Wheelset, WheelsetDetail, WheelsetFilters, WheelsetList } from '#contract/catalogue.ts'
 import type { Locale } from '#contract/common.ts'
 import type { Deps } from '../../deps.ts'
 import { badField, notFound } from '../../http/errors.ts'
+import { WheelsetWheel } from '../../models/wheelset-wheel.ts'
 import { readCatalogue } from './read.ts'
 
 const PAGE = 60
@@ -49,8 +50,14 @@ export async function listWheelsets(deps: Deps, filters: WheelsetFilters, locale
   return { items, nextCursor: after + items.length < found.length ? (items.at(-1)?.slug ?? null) : null }
 }
 
-export async function readWheelset(deps: Deps, slug: string, locale: Locale): Promise<Wheelset> {
+export async function readWheelset(deps: Deps, slug: string, locale: Locale): Promise<WheelsetDetail> {
   const set = (await readCatalogue(deps, locale)).find((one) => one.slug === slug)
   if (!set) throw notFound()
-  return set
+  const wheels = await WheelsetWheel.findAll({
+    where: { wheelsetId: set.id },
+    attributes: ['position', 'structure'],
+    raw: true,
+  })
+  const of = (position: 'front' | 'rear') => wheels.find((wheel) => wheel.position === position)?.structure ?? null
+  return { ...set, structure: { front: of('front'), rear: of('rear') } }
 }
