@@ -100,11 +100,14 @@ function keptSolution(wheel: WheelToSolve) {
  * so does advice frozen under them; what is new comes in force beside them.
  */
 async function addNewRuleTables() {
-  const known = new Set((await RuleTable.findAll({ raw: true })).map(({ name, version }) => `${name} ${version}`))
-  const fresh = ruleTables.filter(({ name }) => !known.has(`${name} ${RULES_VERSION}`))
+  const rows = await RuleTable.findAll({ attributes: ['name', 'version', 'draftedById'], raw: true })
+  const has = (name: string, version: string) => rows.find((row) => row.name === name && row.version === version)
+  // Staff count in the same series, so the number may be a draft of theirs by now.
+  const versionFor = (name: string) => (has(name, RULES_VERSION)?.draftedById ? `${RULES_VERSION}-seed` : RULES_VERSION)
+  const fresh = ruleTables.filter(({ name }) => !has(name, versionFor(name)))
   await RuleTable.bulkCreate(
     fresh.map(({ name, source, label, data }) => ({
-      ...{ name, source, label, data, version: RULES_VERSION },
+      ...{ name, source, label, data, version: versionFor(name) },
       ...{ inForceFrom: DEMO_NOW, state: 'in-force' as const, ...dated(DEMO_NOW) },
     })),
   )

@@ -5,6 +5,8 @@ import type { RuleTableRow, RuleTableView, RuleVersionView } from '#contract/pro
 import type { Problem } from '#contract/common.ts'
 import { AuditRow } from '../../server/models/audit-row.ts'
 import { RuleTable } from '../../server/models/rule-table.ts'
+import { seedDemo } from '../../server/seeds/index.ts'
+import { RULES_VERSION } from '../../server/seeds/rule-tables.ts'
 import { testApp, type TestApp } from '../support/test-app.ts'
 import { answers, rider, type Agent } from '../support/till.ts'
 
@@ -193,4 +195,19 @@ it('every seeded table may be drafted again as it stands with a source of its ow
   const { items } = (await desk.get('/api/product/rules')).body as { items: RuleTableRow[] }
   for (const { name } of items) await draft(desk, { table: name, data: (await table(desk, name)).base.data })
   expect(await RuleTable.count({ where: { state: 'drafted' } })).toBe(items.length)
+})
+
+it('a draft that has the number of a later seed does not keep that seed out', async () => {
+  const desk = await shop.signedIn('product')
+  await RuleTable.update({ version: '2026-01.1' }, { where: { name: 'limits' } })
+  const { id } = await draft(desk, { table: 'limits', data: limits })
+  await RuleTable.update({ version: RULES_VERSION }, { where: { id } })
+  await seedDemo(shop.deps.db)
+  await seedDemo(shop.deps.db)
+  const versions = (await table(desk, 'limits')).versions.map(({ version, standing }) => [version, standing])
+  expect(versions).toEqual([
+    [`${RULES_VERSION}-seed`, 'in-force'],
+    [RULES_VERSION, 'drafted'],
+    ['2026-01.1', 'replaced'],
+  ])
 })
