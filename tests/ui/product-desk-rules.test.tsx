@@ -76,12 +76,12 @@ const preferences = {
   theme: 'light',
 } as const
 
-async function open() {
+async function open(client = new QueryClient({ defaultOptions: { queries: { retry: false } } })) {
   const router = createMemoryRouter([{ path: '/product/rules/:name', Component: RuleTablePage }], {
     initialEntries: ['/product/rules/measuring-rims'],
   })
   render(
-    <QueryClientProvider client={new QueryClient({ defaultOptions: { queries: { retry: false } } })}>
+    <QueryClientProvider client={client}>
       <PreferencesProvider initial={preferences}>
         <RouterProvider router={router} />
       </PreferencesProvider>
@@ -217,8 +217,30 @@ describe('the page of a table', () => {
     await user.click(screen.getByRole('button', { name: 'Second it' }))
     expect(sent).toEqual([])
     await user.type(screen.getByRole('textbox', { name: 'Reason for your decision' }), 'looked up')
+    const seconded = waits({ standing: 'in-force', secondedBy: 'Rui' })
+    table = { ...table, base: seconded, versions: [seconded, version({ standing: 'replaced' })] }
     await user.click(screen.getByRole('button', { name: 'Second it' }))
     expect(sent).toEqual([{ path: '/api/product/rule-changes/2/approve', body: { reason: 'looked up' } }])
+    await screen.findByRole('heading', { name: 'Draft a new version over 2026-12.2' })
+    expect(cell('Rim inner width, mm', 2).value).toBe('19.5')
+    expect(screen.queryByRole('alert')).toBeNull()
+  })
+
+  it('that got a newer version while somebody typed keeps the typing and says so', async () => {
+    const client = new QueryClient({ defaultOptions: { queries: { retry: false } } })
+    const user = await open(client)
+    await retype(user, cell('Rim inner width, mm', 1), '14')
+    const seconded = waits({ standing: 'in-force' })
+    table = { ...table, base: seconded, versions: [seconded, version({ standing: 'replaced' })] }
+    await client.invalidateQueries()
+    await screen.findByText('Version 2026-12.2 was seconded while you typed over 2026-12.1')
+    expect(cell('Rim inner width, mm', 1).value).toBe('14')
+    await user.click(screen.getByRole('button', { name: 'Keep my typing, compare' }))
+    // against the newer version the typing would also take its changes back
+    expect(screen.getByText('4 places change')).toBeTruthy()
+    await user.type(screen.getByRole('textbox', { name: 'Reason for the change' }), 'a reason of the test')
+    await user.click(screen.getByRole('button', { name: 'Draft the version' }))
+    expect(sent[0]?.body).toMatchObject({ basedOn: '2026-12.2' })
   })
 
   it.each([

@@ -72,6 +72,10 @@ export function RuleDraftForm({ table, base: newest }: { table: TableName; base:
     setProblems([])
   }
 
+  const untouched = found.length === 0 && fields.reason === '' && fields.inForceFrom === ''
+  // Nobody loses anything by it, so there is nothing to ask.
+  if (newest.version !== base.version && untouched) begin(newest)
+
   const check = () => {
     const at = fields.inForceFrom === '' ? null : new Date(fields.inForceFrom)
     const request = {
