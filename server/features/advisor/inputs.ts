@@ -108,7 +108,7 @@ async function readRules({ clock }: Reach, transaction?: Transaction): Promise<{
   const version =
     newest
       .map((row) => row.version)
-      .sort()
+      .sort((a, b) => a.localeCompare(b, 'en', { numeric: true })) // 2026-12.10 follows 2026-12.9
       .at(-1) ?? 'none'
   return { rules: rulesFrom(newest), version }
 }
