@@ -2,7 +2,7 @@
 import type { Filled } from './answers.ts'
 import type { WheelFacts, WheelsetFacts } from './catalogue.ts'
 import type { Rules } from './rules.ts'
-import type { DecidingRow } from './tyre-pressure.ts'
+import { byWidth, type DecidingRow } from './tyre-pressure.ts'
 import { notOfWidth, pairTyre } from './tyre-rim.ts'
 import { otherWidth, pressureOn, wheelTyre, type WheelTyre } from './wheel-pressure.ts'
 
@@ -122,6 +122,9 @@ function wayBack(rims: Rims, wrong: readonly Position[], byWidth: boolean, asked
   if (byWidth) {
     const widthMm = nearestWidth(rims, tyres, wrong, filled, rules)
     if (widthMm !== null) {
+      // The same width would do with another tyre of it: what is printed on this one stands in the way.
+      if (wrong.every((position) => tyres[position].widthMm === widthMm))
+        return { code: 'other-fact', field: 'tyre.maxBar', to: usualMaximum(widthMm, rules) }
       const field = wrong.length === 2 ? 'tyre.widthMm' : `tyre.${wrong[0] ?? 'rear'}WidthMm`
       return { code: 'other-tyre', field, to: widthMm }
     }
@@ -216,6 +219,10 @@ interface Pair {
   rear: OnRim
   check: TyreCheck
 }
+
+/** Highest pressure that tyres of this width usually carry. */
+const usualMaximum = (widthMm: number, { 'assumed-tyre-maxima': usual }: Rules) =>
+  byWidth(usual.rows, widthMm) ?? usual.beyondBar
 
 /** A rim like one seen before is not worked out again. */
 function seenBefore(known: OnRim[], rim: RimOf, tyre: WheelTyre, rules: Rules): OnRim {

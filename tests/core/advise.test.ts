@@ -435,3 +435,22 @@ describe('rule tables', () => {
     }
   })
 })
+
+describe('the smallest change', () => {
+  it('where a tyre of the same width would do, names what is printed on this one, and that brings the wheelset back', () => {
+    const rider: RiderAnswers = {
+      ...road,
+      brakes: 'rim',
+      bodyMassKg: 106.6,
+      tyre: { frontWidthMm: 29, rearWidthMm: 29, setup: 'tube', maxBar: 5.8 },
+      frontLoadShare: 0.29,
+      rim: { seat: 'any' },
+    }
+    const out = ask(rider).wheelsets.find(({ codes }) => codes[0] === 'pressure-not-suitable')
+    expect(out?.nearestChange).toMatchObject({ code: 'other-fact', field: 'tyre.maxBar' })
+    const maxBar = out?.nearestChange?.to as number
+    expect(maxBar).toBeGreaterThan(5.8)
+    const tyre = { frontWidthMm: 29, rearWidthMm: 29, setup: 'tube' as const, maxBar }
+    expect(ask({ ...rider, tyre }).wheelsets.find(({ sku }) => sku === out?.sku)?.rank).not.toBeNull()
+  })
+})
