@@ -9,7 +9,7 @@ import { pinoHttp } from 'pino-http'
 import type { Deps } from './deps.ts'
 import { watchAdviceInputs } from './features/advisor/inputs.ts'
 import { AppError } from './http/errors.ts'
-import { mountRoutes } from './http/mount.ts'
+import { beforeSession, mountRoutes } from './http/mount.ts'
 import { problemHandler, requestId } from './http/problem.ts'
 import { sameSiteOnly } from './http/same-site.ts'
 import { sessionMiddleware } from './http/session.ts'
@@ -74,13 +74,13 @@ export function createApp(deps: Deps, clientDir: string | null): Express {
 
   mountRoutes(
     app,
-    routes.filter(({ spec }) => spec.raw),
+    routes.filter(({ spec }) => beforeSession(spec)),
     deps,
   )
   app.use('/api', sessionMiddleware(deps))
   mountRoutes(
     app,
-    routes.filter(({ spec }) => !spec.raw),
+    routes.filter(({ spec }) => !beforeSession(spec)),
     deps,
   )
   app.use('/api', () => {

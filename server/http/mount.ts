@@ -26,6 +26,9 @@ const jsonOnly: RequestHandler = (req, _res, next) => {
   next(hasBody && !req.is('application/json') ? new AppError('json-only', 415) : undefined)
 }
 
+/** Signed webhooks come without a session, and some routes have no use for one: these are mounted before the session is looked for. */
+export const beforeSession = ({ raw, sessionless }: Route['spec']) => raw === true || sessionless === true
+
 export function mountRoutes(app: Express, routes: readonly Route[], deps: Deps) {
   for (const { spec, handle } of routes) {
     const readBody = spec.raw ? [readRaw] : spec.body ? [jsonOnly, readJson] : []
@@ -52,8 +55,7 @@ export function mountRoutes(app: Express, routes: readonly Route[], deps: Deps) 
       res.status(status).json(reply)
     }
     const guard: RequestHandler = async (req, res, next) => {
-      // Signed webhooks come without a session; raw routes are mounted before the session middleware looks for one.
-      const user = spec.raw ? null : await readUser(req.session.userId)
+      const user = beforeSession(spec) ? null : await readUser(req.session.userId)
       mayCall(spec.access, user)
       res.locals.user = user
       next()

@@ -39,6 +39,8 @@ export interface RouteSpec<
   idempotency?: 'required' | 'optional'
   /** The body arrives as raw bytes (signed webhooks). */
   raw?: boolean
+  /** Asks nobody who they are: mounted before the session is looked for, which costs more than many an answer. For `anyone` only. */
+  sessionless?: boolean
   /** The reply is not JSON: the handler writes it itself. */
   contentType?: string
 }
