@@ -4,9 +4,10 @@ import { render } from '@testing-library/react'
 import userEvent from '@testing-library/user-event'
 import { createMemoryRouter, RouterProvider } from 'react-router-dom'
 import { vi } from 'vitest'
-import { riderAnswers, type RiderAnswers } from '#contract/advisor.ts'
+import { riderAnswers, type AdviceChanges, type RiderAnswers } from '#contract/advisor.ts'
 import { advise } from '#core/advise.ts'
 import { rulesFrom } from '#core/rules.ts'
+import { influence, tippingPoints } from '#core/what-changes.ts'
 import { wheelsetFacts } from '../../server/seeds/facts.ts'
 import { ruleTables } from '../../server/seeds/rule-tables.ts'
 import type { Preferences } from '../../src/lib/preferences.tsx'
@@ -18,6 +19,12 @@ import { WorkingPage } from '../../src/pages/advisor/WorkingPage.tsx'
 const rules = rulesFrom([...ruleTables])
 
 export const adviceFor = (answers: RiderAnswers) => advise(answers, wheelsetFacts, rules, 'test+0')
+
+export const changesFor = (answers: RiderAnswers): AdviceChanges => ({
+  rulesVersion: 'test+0',
+  tippingPoints: tippingPoints(answers, wheelsetFacts, rules, 'test+0'),
+  influence: influence(answers, wheelsetFacts, rules, 'test+0'),
+})
 
 /** Addresses and bodies of every call; `fail` lets the next calls for advice go wrong. */
 export const shop = { calls: [] as { path: string; answers: RiderAnswers | null }[], fail: false }
@@ -37,6 +44,10 @@ function answer(path: string, init?: RequestInit): Response {
       requestId: 'r7',
     }
     return new Response(JSON.stringify(problem), { status: 503 })
+  }
+  if (path === '/api/advice/changes') {
+    const asked = riderAnswers.parse(JSON.parse(typeof init?.body === 'string' ? init.body : 'null'))
+    return new Response(JSON.stringify(changesFor(asked)))
   }
   return new Response(JSON.stringify(answers ? adviceFor(answers) : { items: wheelsetFacts, nextCursor: null }))
 }

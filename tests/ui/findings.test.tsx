@@ -2,7 +2,7 @@
 import { screen, waitFor, within } from '@testing-library/react'
 import { afterEach, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest'
 import { startTexts } from '../../src/lib/i18n.ts'
-import { adviceFor, open, openShop, shop } from './advisor-shop.tsx'
+import { adviceFor, changesFor, open, openShop, shop } from './advisor-shop.tsx'
 
 beforeAll(() => startTexts('en'))
 beforeEach(openShop)
@@ -39,6 +39,33 @@ describe('findings', () => {
     screen.getByRole('heading', {
       name: `${advice.wheelsets.length - offered} ruled out, and what would bring them back`,
     })
+  })
+
+  it('say where they turn, in whole kilograms of the rider and by name, and which answers matter', async () => {
+    weigh(92)
+    open(ADDRESS)
+    const heading = await screen.findByRole('heading', { level: 2, name: 'What would change this' })
+    const section = within(heading.closest('section')!)
+    const heavier = (await section.findByText(/kg of rider and more:$/)).closest('li')
+    const advice = adviceFor(shop.calls.find(({ answers }) => answers?.bodyMassKg === 92)!.answers!)
+    const point = changesFor(shop.calls.find(({ answers }) => answers?.bodyMassKg === 92)!.answers!).tippingPoints.find(
+      ({ input, direction }) => input === 'bodyMassKg' && direction === 'up',
+    )
+    expect(heavier?.textContent).toContain(`At ${point?.at.toFixed(1)}`)
+    // Wheelsets by their names, never by their numbers.
+    for (const { sku } of advice.wheelsets) expect(heavier?.textContent).not.toContain(sku)
+    expect(section.getAllByText(/assumed$/).length).toBeGreaterThan(0)
+  })
+  it('carry the doubt of the spokes and what the structure bears beside the stated limit', async () => {
+    weigh(92)
+    open(ADDRESS)
+    await title(/^Ride/)
+    screen.getByText(/^such a wheel carries about \d+\.\d.kg in all, \d+\.\d to \d+\.\d.kg$/)
+    screen.getByText(/^by our model its structure carries about \d+\.\d.kg, ±25 %/)
+    screen.getByText(
+      (_, element) =>
+        /^stated limit .* less .*, everything counted$/.test(element?.textContent ?? '') && element?.tagName === 'P',
+    )
   })
 
   it('open each figure to its working', async () => {

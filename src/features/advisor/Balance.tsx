@@ -94,9 +94,10 @@ function Row({
 }) {
   const { t } = useTranslation('advisor')
   const { format, verdict } = useAdviceWords()
-  const { name, slug, limitKg, codes, rank, startBar } = judged
+  const { name, slug, limitKg, codes, rank, startBar, behindBy, structure, limitFrom = 'system' } = judged
   const over = judged.verdict === 'over-limit'
   const why = [
+    ...(behindBy ? [t([`findings.behindBy.${behindBy}`, 'findings.behindBy.other'])] : []),
     ...codes.filter((code) => !shared.includes(code)).map((code) => t([`findings.why.${code}`, 'findings.why.other'])),
     ...(startBar
       ? [
@@ -106,6 +107,7 @@ function Row({
           }),
         ]
       : []),
+    ...(structure ? [t('findings.balance.structure', { limit: format.mass(structure.limitKg, 'down').text })] : []),
   ]
   return (
     <li className="grid grid-cols-[minmax(0,1fr)_auto] items-center gap-x-4 gap-y-1 border-b border-line py-2.5 sm:grid-cols-[8.5rem_minmax(0,1fr)_9.5rem]">
@@ -122,11 +124,17 @@ function Row({
         label={t('findings.balance.row', {
           total: format.mass(totalKg, 'up').text,
           limit: format.mass(limitKg, 'down').text,
+          from: t(`option.limitFrom.${limitFrom}`),
         })}
       />
       <p className="text-end max-sm:col-start-2 max-sm:row-start-1">
         <Verdict standing={standings[judged.verdict]}>{verdict(judged)}</Verdict>
       </p>
+      {over && limitFrom !== 'system' && (
+        <p className="col-span-full text-[0.8125rem] leading-snug text-soft">
+          {t('findings.balance.overBy', { from: t(`option.limitFrom.${limitFrom}`) })}
+        </p>
+      )}
       {!over && why.length > 0 && (
         <p className="col-span-full text-[0.8125rem] leading-snug text-soft">{why.join(' · ')}</p>
       )}

@@ -8,7 +8,7 @@ export function BrakeHeat({ advice: { brakeHeat, reasons } }: { advice: Advice }
   const { t } = useTranslation('advisor')
   const { format } = useAdviceWords()
   if (!brakeHeat) return null
-  const { carbonC, alloyC, limitC, verdict, gradient } = brakeHeat
+  const { carbonC, alloyC, limitC, verdict, gradient, lowC, highC } = brakeHeat
   const end = Math.max(carbonC, alloyC, limitC) * 1.08
   const degrees = (celsius: number) => `${format.number(celsius)}\u00a0°C`
   const title = t(`findings.heat.title_${verdict}`, { limit: degrees(limitC) })
@@ -41,7 +41,12 @@ export function BrakeHeat({ advice: { brakeHeat, reasons } }: { advice: Advice }
           </ul>
         </WithWorking>
       </div>
-      <p className="mt-2 text-sm text-soft">{t('findings.heat.text', { gradient: format.percent(gradient) })}</p>
+      <p className="mt-2 text-sm text-soft">
+        {t('findings.heat.text', { gradient: format.percent(gradient) })}
+        {lowC !== undefined && highC !== undefined && (
+          <> {t('findings.heat.band', { low: format.number(lowC), high: degrees(highC) })}</>
+        )}
+      </p>
     </section>
   )
 }

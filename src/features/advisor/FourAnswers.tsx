@@ -30,7 +30,10 @@ export function FourAnswers({ advice }: { advice: Advice }) {
 }
 
 const Cell = ({ children }: { children: ReactNode }) => (
-  <section className="border-b border-line py-4 sm:odd:pe-6 sm:nth-[2n]:border-s sm:nth-[2n]:ps-6">{children}</section>
+  // With its working open a cell takes the whole row: two workings side by side need the room.
+  <section className="border-b border-line py-4 has-[[aria-expanded=true]]:col-span-full sm:odd:pe-6 sm:nth-[2n]:border-s sm:nth-[2n]:ps-6 sm:has-[[aria-expanded=true]]:border-s-0! sm:has-[[aria-expanded=true]]:px-0!">
+    {children}
+  </section>
 )
 
 function Figures({ parts, unit }: { parts: readonly { name?: string; value: string }[]; unit?: string }) {
@@ -155,7 +158,10 @@ function Depth({ advice: { reasons }, depth }: { advice: Advice; depth: NonNulla
 
 function Spokes({ advice: { reasons }, spokes }: { advice: Advice; spokes: NonNullable<Advice['spokes']> }) {
   const { t } = useTranslation('advisor')
+  const { format } = useAdviceWords()
   const { front, rear } = spokes
+  const limits = [front.limitKg, rear.limitKg].filter((limit) => limit !== null && limit !== undefined)
+  const weaker = limits.length === 2 ? limits.reduce((a, b) => (a.estimate <= b.estimate ? a : b)) : undefined
   const label = t('findings.answers.spokes')
   const more = front.advised > front.min || rear.advised > rear.min
   return (
@@ -179,6 +185,15 @@ function Spokes({ advice: { reasons }, spokes }: { advice: Advice; spokes: NonNu
           advised: `${front.advised} / ${rear.advised}`,
         })}
       </Small>
+      {weaker && (
+        <Small>
+          {t('findings.answers.spokesCarry', {
+            estimate: format.mass(weaker.estimate, 'down').text,
+            low: format.mass(weaker.low, 'down').value,
+            high: format.mass(weaker.high, 'down').text,
+          })}
+        </Small>
+      )}
     </WithWorking>
   )
 }
@@ -207,12 +222,21 @@ function Margin({ advice: { wheelsets, reasons, systemMassKg } }: { advice: Advi
               t={t}
               i18nKey="findings.answers.marginSum"
               values={{
+                from: t(`option.limitFrom.${first.limitFrom ?? 'system'}`),
                 limit: format.mass(first.limitKg, 'down').text,
                 total: format.mass(systemMassKg, 'up').text,
               }}
               components={{ own: <span className="font-bold text-own" /> }}
             />
           </Small>
+          {first.structure && (
+            <Small>
+              {t('findings.answers.structure', {
+                limit: format.mass(first.structure.limitKg, 'down').text,
+                criterion: t([`findings.governedBy.${first.structure.governedBy}`, 'findings.governedBy.other']),
+              })}
+            </Small>
+          )}
         </>
       ) : (
         <p className="figure mt-2 text-2xl">{t('findings.answers.marginNone')}</p>

@@ -43,11 +43,14 @@ export function WithWorking({ label, name, reasons, children }: WithWorkingProps
       </div>
       {children}
       <div id={id} hidden={!open}>
-        {open &&
-          shown.map(
-            ({ key, title, reason }) =>
-              reason && <Reasoning key={key} kind={reasonKind(key)} title={title} reason={reason} />,
-          )}
+        {open && (
+          <div className={shown.length > 1 ? 'grid gap-x-8 sm:grid-cols-2' : ''}>
+            {shown.map(
+              ({ key, title, reason }) =>
+                reason && <Reasoning key={key} kind={reasonKind(key)} title={title} reason={reason} />,
+            )}
+          </div>
+        )}
         {open && (
           <Link to="/working" className="quiet-link mt-2 inline-block text-sm">
             {t('working.more')}
@@ -57,6 +60,9 @@ export function WithWorking({ label, name, reasons, children }: WithWorkingProps
     </>
   )
 }
+
+/** A figure with its unit stays in one piece; words may break. */
+const isShort = (text: string) => text.length <= 14
 
 function Reasoning({ kind, title, reason }: { kind: string; title: string | undefined; reason: Reason }) {
   const { t } = useTranslation('advisor')
@@ -81,7 +87,9 @@ function Reasoning({ kind, title, reason }: { kind: string; title: string | unde
         {lines.map(([name, value]) => (
           <div key={name} className="flex justify-between gap-4 border-b border-line py-0.5">
             <dt className="text-soft">{t([`working.value.${name}`, `field.${name}`, 'working.value.other'])}</dt>
-            <dd className="min-w-0 text-end font-semibold break-words">
+            <dd
+              className={`text-end font-semibold ${isShort(show(name, value)) ? 'whitespace-nowrap' : 'min-w-0 break-words'}`}
+            >
               <Formula text={show(name, value)} />
             </dd>
           </div>

@@ -1,6 +1,15 @@
-import { useQuery } from '@tanstack/react-query'
-import type { Advice, RiderAnswers } from '#contract/advisor.ts'
+import { queryOptions, useQuery } from '@tanstack/react-query'
+import { adviceChanges, type Advice, type RiderAnswers } from '#contract/advisor.ts'
+import { api } from '../../lib/api.ts'
 import { adviceQuery, type Draft } from '../../lib/fitting.ts'
+
+/** Where the advice turns; asked for again when rules or range have changed. The answers travel in the body, never in an address. */
+export const changesQuery = (answers: RiderAnswers, rulesVersion: string) =>
+  queryOptions({
+    queryKey: ['advisor', 'changes', answers, rulesVersion],
+    queryFn: ({ signal }) => api.post('/api/advice/changes', answers, adviceChanges, { signal }),
+    staleTime: 5 * 60_000,
+  })
 
 /** Any mass does: kit, bike and bags do not depend on it. */
 const STAND_IN_KG = 75

@@ -27,10 +27,12 @@ export function showValue(name: string, value: number, format: Format): string {
   if (/Bar$/.test(name)) return format.pressure(value, rounding).text
   if (/^(depth|cap|clamp|beadSeat|rotor)Mm$/.test(name))
     return name === 'beadSeatMm' ? String(value) : format.depth(value).text
+  if (/NPerMm$/.test(name)) return `${format.number(value, 1)}\u00a0N/mm`
+  if (/PerMm$/.test(name)) return format.number(value, 1)
+  if (/(Shift|side)Mm$/.test(name)) return `${format.number(value, 1)}\u00a0mm`
   if (/Mm$/.test(name)) return format.width(value, rounding).text
   if (/Kmh$/.test(name)) return `${format.number(value)}\u00a0km/h`
   if (/Ms$/.test(name)) return `${format.number(value, 1)}\u00a0m/s`
-  if (/NPerMm$/.test(name)) return `${format.number(value, 1)}\u00a0N/mm`
   if (/N$/.test(name)) return `${format.number(value)}\u00a0N`
   if (/Deg$/.test(name)) return `${format.number(value, 1)}°`
   if (/C$/.test(name)) return `${format.number(value)}\u00a0°C`
@@ -49,6 +51,10 @@ export function answerText(t: TFunction, format: Format, path: string, value: un
   if (name === 'ride' || name === 'brakes' || name === 'setup')
     return t(`advisor:${name}.${String(value)}.label`, { defaultValue: String(value) })
   if (typeof value === 'number' && name !== 'beadSeatMm') return showValue(name, value, format)
+  if (typeof value === 'object' && value !== null)
+    return Object.entries(value)
+      .map(([key, one]) => `${key}: ${answerText(t, format, key, one)}`)
+      .join('; ')
   return t(`advisor:option.${name}.${String(value)}`, { defaultValue: String(value) })
 }
 

@@ -15,6 +15,7 @@ import { RuledOut } from '../../features/advisor/RuledOut.tsx'
 import { Sharpen } from '../../features/advisor/Sharpen.tsx'
 import { stepDone, steps } from '../../features/advisor/steps.ts'
 import { TradeOffChart } from '../../features/advisor/TradeOffChart.tsx'
+import { WhatChanges } from '../../features/advisor/WhatChanges.tsx'
 import { ErrorNotice } from '../../lib/ErrorNotice.tsx'
 import { adviceQuery, rememberFitting, useFitting, writeDraft, type Mass } from '../../lib/fitting.ts'
 import { useTitle } from '../../lib/title.ts'
@@ -159,6 +160,9 @@ function Result({ advice, answers, headline }: ResultProps) {
           <BrakeHeat advice={advice} />
           <Notes advice={advice} />
         </div>
+      </div>
+      <div className="border-t border-line px-5 py-7 md:px-9">
+        <WhatChanges advice={advice} answers={answers} />
       </div>
       <div className="border-t border-line px-5 py-7 md:px-9">
         <RuledOut advice={advice} />
