@@ -1,6 +1,6 @@
 /** The range as the server has it. Filters travel as they stand in the address. */
 import { keepPreviousData, queryOptions } from '@tanstack/react-query'
-import { marketList, wheelset, wheelsetList, type Wheelset, type WheelsetList } from '#contract/catalogue.ts'
+import { marketList, wheelsetDetail, wheelsetList, type Wheelset, type WheelsetList } from '#contract/catalogue.ts'
 import type { Locale } from '#contract/common.ts'
 import { api } from './api.ts'
 
@@ -33,7 +33,7 @@ export const wheelsetsQuery = (asked: Asked) =>
 export const wheelsetQuery = (slug: string, lng: Locale) =>
   queryOptions({
     queryKey: ['catalogue', 'wheelset', slug, lng],
-    queryFn: ({ signal }) => api.get(`/api/wheelsets/${encodeURIComponent(slug)}?lng=${lng}`, wheelset, signal),
+    queryFn: ({ signal }) => api.get(`/api/wheelsets/${encodeURIComponent(slug)}?lng=${lng}`, wheelsetDetail, signal),
   })
 
 export const marketsQuery = () =>

@@ -8,7 +8,10 @@ import { riderAnswers, type AdviceChanges, type RiderAnswers } from '#contract/a
 import { advise } from '#core/advise.ts'
 import { rulesFrom } from '#core/rules.ts'
 import { influence, tippingPoints } from '#core/what-changes.ts'
+import { catalogue } from '../../server/seeds/catalogue.ts'
 import { wheelsetFacts } from '../../server/seeds/facts.ts'
+import { solvedWheels } from '../../server/seeds/solved-wheels.ts'
+import { designDigest } from '../../server/wheel-designs/solve.ts'
 import { ruleTables } from '../../server/seeds/rule-tables.ts'
 import type { Preferences } from '../../src/lib/preferences.tsx'
 import { PreferencesProvider } from '../../src/lib/preferences.tsx'
@@ -25,6 +28,18 @@ export const changesFor = (answers: RiderAnswers): AdviceChanges => ({
   tippingPoints: tippingPoints(answers, wheelsetFacts, rules, 'test+0'),
   influence: influence(answers, wheelsetFacts, rules, 'test+0'),
 })
+
+/** A wheelset with what was found of its wheels, as the server gives it. */
+export function detailOf(slug: string) {
+  const seed = catalogue.find((one) => one.slug === slug)
+  const facts = wheelsetFacts.find((one) => one.slug === slug)
+  if (!seed || !facts) throw new Error(`no wheelset ${slug}`)
+  const of = (position: 'front' | 'rear') => {
+    const wheel = seed.wheels.find((one) => one.position === position)
+    return wheel ? (solvedWheels.designs[designDigest(wheel)]?.structure ?? null) : null
+  }
+  return { ...facts, structure: { front: of('front'), rear: of('rear') } }
+}
 
 /** Addresses and bodies of every call; `fail` lets the next calls for advice go wrong. */
 export const shop = { calls: [] as { path: string; answers: RiderAnswers | null }[], fail: false }
@@ -45,6 +60,8 @@ function answer(path: string, init?: RequestInit): Response {
     }
     return new Response(JSON.stringify(problem), { status: 503 })
   }
+  const slug = /^\/api\/wheelsets\/([\w-]+)\?/.exec(path)?.[1]
+  if (slug !== undefined) return new Response(JSON.stringify(detailOf(slug)))
   if (path === '/api/advice/changes') {
     const asked = riderAnswers.parse(JSON.parse(typeof init?.body === 'string' ? init.body : 'null'))
     return new Response(JSON.stringify(changesFor(asked)))

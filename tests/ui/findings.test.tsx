@@ -2,7 +2,7 @@
 import { screen, waitFor, within } from '@testing-library/react'
 import { afterEach, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest'
 import { startTexts } from '../../src/lib/i18n.ts'
-import { adviceFor, changesFor, open, openShop, shop } from './advisor-shop.tsx'
+import { adviceFor, changesFor, detailOf, open, openShop, shop } from './advisor-shop.tsx'
 
 beforeAll(() => startTexts('en'))
 beforeEach(openShop)
@@ -55,6 +55,35 @@ describe('findings', () => {
     // Wheelsets by their names, never by their numbers.
     for (const { sku } of advice.wheelsets) expect(heavier?.textContent).not.toContain(sku)
     expect(section.getAllByText(/assumed$/).length).toBeGreaterThan(0)
+  })
+  it('draw the tension of every spoke under the rider, and list it: the one at the road has lost the most', async () => {
+    weigh(92)
+    const { user } = open(ADDRESS)
+    const heading = await screen.findByRole('heading', {
+      name: /^Standing under you, the lowest spoke keeps \d+.?% of its tension$/,
+    })
+    const section = within(heading.closest('section')!)
+    const answers = shop.calls.find((call) => call.answers?.bodyMassKg === 92)!.answers!
+    const advice = adviceFor(answers)
+    const rear = detailOf(advice.wheelsets[0]!.slug).structure.rear!
+    await user.click(section.getByRole('button', { name: /table/i }))
+    const rows = section.getAllByRole('row').slice(1)
+    expect(rows).toHaveLength(rear.profile.underLeft.length)
+    const kept = rows.map((row) => {
+      const [, resting, loaded] = [...row.querySelectorAll('td')].map((cell) =>
+        Number(cell.textContent.replace(/\D/g, '')),
+      )
+      return (loaded ?? 0) / (resting ?? 1)
+    })
+    expect(Math.min(...kept.slice(0, 2), kept.at(-1)!)).toBe(Math.min(...kept))
+    // By hand: tension at rest less share of the resting load on the rear wheel.
+    const { left, right } = rear.tensionN
+    const byHand = Math.min(
+      ...[rear.profile.underLeft, rear.profile.underRight].flatMap((shares) =>
+        shares.map((share, spoke) => 1 + (share * advice.loads!.rearN) / (spoke % 2 === 0 ? left : right)),
+      ),
+    )
+    expect(Math.min(...kept)).toBeCloseTo(byHand, 2)
   })
   it('carry the doubt of the spokes and what the structure bears beside the stated limit', async () => {
     weigh(92)

@@ -14,6 +14,7 @@ import { ResultStrip } from '../../features/advisor/ResultStrip.tsx'
 import { RuledOut } from '../../features/advisor/RuledOut.tsx'
 import { Sharpen } from '../../features/advisor/Sharpen.tsx'
 import { stepDone, steps } from '../../features/advisor/steps.ts'
+import { TensionRing } from '../../features/advisor/TensionRing.tsx'
 import { TradeOffChart } from '../../features/advisor/TradeOffChart.tsx'
 import { WhatChanges } from '../../features/advisor/WhatChanges.tsx'
 import { ErrorNotice } from '../../lib/ErrorNotice.tsx'
@@ -156,6 +157,7 @@ function Result({ advice, answers, headline }: ResultProps) {
         </div>
         <div className="order-2 grid content-start gap-9 border-line px-5 pt-7 pb-9 max-lg:border-t md:px-9 lg:order-1 lg:border-e lg:pt-10">
           <DrawnFirst advice={advice} answers={answers} />
+          <TensionRing advice={advice} />
           <TradeOffChart advice={advice} />
           <BrakeHeat advice={advice} />
           <Notes advice={advice} />
