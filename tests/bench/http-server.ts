@@ -2,6 +2,7 @@
 import type { AddressInfo } from 'node:net'
 import express from 'express'
 import { pino } from 'pino'
+import { riderAnswers } from '#contract/advisor.ts'
 import { advise } from '#core/advise.ts'
 import { rulesFrom } from '#core/rules.ts'
 import { createApp } from '../../server/app.ts'
@@ -11,7 +12,6 @@ import { initModels } from '../../server/models/index.ts'
 import { createPayments } from '../../server/payments/create.ts'
 import { wheelsetFacts } from '../../server/seeds/facts.ts'
 import { ruleTables } from '../../server/seeds/rule-tables.ts'
-import { riders } from './riders.ts'
 
 function echo() {
   const app = express()
@@ -21,14 +21,13 @@ function echo() {
   return app
 }
 
-/** The same, with an advice for its answer that was made beforehand: what sending so much costs by itself. */
-function largeEcho() {
-  const [someone] = riders(1)
-  if (!someone) throw new Error('no rider')
-  const reply = advise(someone, wheelsetFacts, rulesFrom(ruleTables), 'bench')
+/** Bare Express with the same check and the same sums: what the answer costs before anything that a shop needs around it. */
+function lean() {
+  const rules = rulesFrom(ruleTables)
   const app = express()
-  app.post('/api/advice', express.json(), (_req, res) => {
-    res.json(reply)
+  app.disable('etag')
+  app.post('/api/advice', express.json(), (req, res) => {
+    res.json(advise(riderAnswers.parse(req.body), wheelsetFacts, rules, 'bench'))
   })
   return app
 }
@@ -52,7 +51,7 @@ function shop() {
   return createApp({ config, db, payments: createPayments(config, clock), clock, log }, null)
 }
 
-const kinds: Record<string, () => express.Express> = { echo, 'large-echo': largeEcho, shop }
+const kinds: Record<string, () => express.Express> = { echo, lean, shop }
 const server = (kinds[process.argv[2] ?? ''] ?? shop)().listen(0, '127.0.0.1', () => {
   process.send?.({ port: (server.address() as AddressInfo).port })
 })
