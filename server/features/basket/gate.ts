@@ -87,12 +87,14 @@ export async function passGate(
   }
   const { advice } = fitting
   const readyToRideKg = advice.systemMassKg
-  const marginKg = set.limitKg - readyToRideKg
   const verdict = advice.wheelsets.find(({ sku }) => sku === set.sku)
+  // The lowest of its limits for this rider: the stated one, or what its structure or an axle carries.
+  const limitKg = Math.min(set.limitKg, verdict?.limitKg ?? set.limitKg)
+  const marginKg = limitKg - readyToRideKg
   if (advice.outcome === 'out-of-scope') problem('out-of-scope')
   // The plain sum is checked whatever else rules the wheelset out: nothing may hide that it is over the limit.
   const over = marginKg < 0 || verdict?.verdict === 'over-limit'
-  if (over) problem('over-limit', '', { totalKg: readyToRideKg, limitKg: set.limitKg, gapKg: Math.max(0, -marginKg) })
+  if (over) problem('over-limit', '', { totalKg: readyToRideKg, limitKg, gapKg: Math.max(0, -marginKg) })
   else if (verdict && (verdict.verdict === 'mismatch' || verdict.verdict === 'pressure'))
     problem('does-not-fit', '', { reason: verdict.codes[0] ?? verdict.verdict })
   // The advice covers all that is on sale: a wheelset it does not name has only just come or gone, and was not judged.

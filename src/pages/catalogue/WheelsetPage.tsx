@@ -2,7 +2,7 @@ import { useQuery } from '@tanstack/react-query'
 import { useState } from 'react'
 import { useTranslation } from 'react-i18next'
 import { Link, useParams } from 'react-router-dom'
-import type { Wheelset } from '#contract/catalogue.ts'
+import type { Wheelset, WheelsetDetail } from '#contract/catalogue.ts'
 import { drawn, drawnTyreMm } from '../../lib/drawn.ts'
 import { LimitPanel } from '../../features/catalogue/LimitPanel.tsx'
 import { useLimitText } from '../../features/catalogue/limit-text.ts'
@@ -14,7 +14,7 @@ import { RiderVerdict, useVerdictWord } from '../../features/catalogue/RiderVerd
 import { RimPanel } from '../../features/catalogue/RimPanel.tsx'
 import { SideBySideToggle } from '../../features/catalogue/SideBySideToggle.tsx'
 import { SideBySideTray } from '../../features/catalogue/SideBySideTray.tsx'
-import { SpecTable } from '../../features/catalogue/SpecTable.tsx'
+import { SpecTable, StructureTable } from '../../features/catalogue/SpecTable.tsx'
 import { shortPair, useWheelRows } from '../../features/catalogue/wheel-rows.ts'
 import { ApiError } from '../../lib/api.ts'
 import { usePutLine } from '../../lib/basket.ts'
@@ -51,7 +51,7 @@ export function WheelsetPage() {
   )
 }
 
-function Page({ set }: { set: Wheelset }) {
+function Page({ set }: { set: WheelsetDetail }) {
   const { t } = useTranslation('catalogue')
   const { language } = usePreferences()
   const verdicts = useFittingVerdicts()
@@ -96,6 +96,15 @@ function Page({ set }: { set: Wheelset }) {
           </Notice>
         </div>
       </section>
+      {set.structure.front && set.structure.rear && (
+        <section aria-labelledby="structure" className="border-t border-ink px-5 py-7 md:px-9">
+          <h2 id="structure">{t('structure.title')}</h2>
+          <p className="mt-1 mb-4 max-w-[70ch] text-sm text-soft">{t('structure.text')}</p>
+          <div className="lg:max-w-[68%]">
+            <StructureTable set={set} />
+          </div>
+        </section>
+      )}
       <SideBySideTray sets={range?.items ?? [set]} />
     </>
   )
