@@ -350,9 +350,20 @@ describe('the limit', () => {
           else if (last) await agent.post(pathOf(last.orderUrl, '/refresh'))
         }
       }),
-      { numRuns: 20 },
+      {
+        numRuns: 20,
+        // Told first every time: the plain purchase of the wheelset that carries the rider. The rest is chance.
+        examples: [
+          [
+            [
+              { do: 'put', sku: fine, withFitting: true, quantity: 1 },
+              { do: 'order', limitAcknowledged: false },
+            ],
+          ],
+        ],
+      },
     )
-    expect(await Order.count()).toBeGreaterThan(0) // some stories did buy the wheelset that carries the rider
+    expect(await Order.count()).toBeGreaterThan(0)
     const lines = await OrderLine.findAll()
     for (const { sku, limitKg, adviceId } of lines) {
       expect(skus).not.toContain(sku)
