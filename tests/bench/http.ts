@@ -3,11 +3,10 @@
  * process, in turns within one run, so that the ratio means something on a shared machine. Both listen on loopback only; requests are counted.
  */
 import { fork, type ChildProcess } from 'node:child_process'
-import path from 'node:path'
 import { Agent, request } from 'node:http'
-import { build } from 'esbuild'
 import { testDatabase } from '../support/test-db.ts'
 import { startTestServer } from '../support/mariadb-server.ts'
+import { bundle } from './bundle.ts'
 import { median, say } from './measure.ts'
 import { riders } from './riders.ts'
 
@@ -19,10 +18,10 @@ export async function benchHttp(): Promise<void> {
   const server = await startTestServer()
   process.env.TEST_DATABASE_URL = server.url
   const database = await testDatabase({ seed: 'range' })
-  await bundle()
-  const shop = await start('shop', database.url)
-  const echo = await start('echo', '')
-  const lean = await start('lean', '')
+  const built = await bundle('http-server')
+  const shop = await start(built, 'shop', database.url)
+  const echo = await start(built, 'echo', '')
+  const lean = await start(built, 'lean', '')
   try {
     const bodies = riders(200).map((answers) => JSON.stringify(answers))
     await load(shop, bodies, 2 * REQUESTS)
@@ -67,22 +66,8 @@ interface Figures {
   bytes: number
 }
 
-/** Built as the shop is built for use, so that no loader of the sources counts. */
-const BUNDLE = path.resolve(import.meta.dirname, '../../test-output/bench/http-server.mjs')
-const bundle = () =>
-  build({
-    entryPoints: [path.join(import.meta.dirname, 'http-server.ts')],
-    outfile: BUNDLE,
-    bundle: true,
-    platform: 'node',
-    target: 'node20',
-    format: 'esm',
-    packages: 'external',
-    logLevel: 'warning',
-  })
-
-function start(kind: Kind, databaseUrl: string): Promise<Running> {
-  const child = fork(BUNDLE, [kind], {
+function start(built: string, kind: Kind, databaseUrl: string): Promise<Running> {
+  const child = fork(built, [kind], {
     execArgv: process.env.BENCH_PROFILE
       ? ['--cpu-prof', `--cpu-prof-dir=${process.env.BENCH_PROFILE}`, `--cpu-prof-name=${kind}`]
       : [],
