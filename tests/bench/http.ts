@@ -24,20 +24,26 @@ export async function benchHttp(): Promise<void> {
   const lean = await start(built, 'lean', '')
   try {
     const bodies = riders(200).map((answers) => JSON.stringify(answers))
+    const replies = await Promise.all(bodies.map((body) => text(shop, body)))
     await load(shop, bodies, 2 * REQUESTS)
     await load(echo, bodies, 2 * REQUESTS)
     await load(lean, bodies, 2 * REQUESTS)
-    const found: Record<Kind, Figures[]> = { shop: [], echo: [], lean: [] }
+    await load(echo, replies, 2 * REQUESTS)
+    const found: Record<Kind | 'alike', Figures[]> = { shop: [], echo: [], lean: [], alike: [] }
     for (let round = 0; round < ROUNDS; round += 1) {
       found.shop.push(await load(shop, bodies, REQUESTS))
       found.echo.push(await load(echo, bodies, REQUESTS))
       found.lean.push(await load(lean, bodies, REQUESTS))
+      found.alike.push(await load(echo, replies, REQUESTS))
     }
-    const cpu = (name: Kind) => median(found[name].map(({ cpuMicros }) => cpuMicros))
+    const cpu = (name: Kind | 'alike') => median(found[name].map(({ cpuMicros }) => cpuMicros))
     const wall = (name: Kind) => median(found[name].map(({ wallMicros }) => wallMicros))
     const size = median(found.shop.map(({ bytes }) => bytes))
     say(
       `POST /api/advice: CPU per request ${cpu('shop').toFixed(0)} µs, bare Express echo ${cpu('echo').toFixed(0)} µs, ratio ${(cpu('shop') / cpu('echo')).toFixed(2)} (goal 1.60); reply ${(size / 1024).toFixed(1)} kB`,
+    )
+    say(
+      `  echo of a body as large as our reply: ${cpu('alike').toFixed(0)} µs, ratio ${(cpu('shop') / cpu('alike')).toFixed(2)}`,
     )
     say(
       `  bare Express with the same check and sums: ${cpu('lean').toFixed(0)} µs, ratio ${(cpu('shop') / cpu('lean')).toFixed(2)}`,
@@ -109,14 +115,16 @@ async function load(target: Running, bodies: readonly string[], count: number): 
   return { cpuMicros: ((await cpuOf(target)) - before) / count, wallMicros, bytes: bytes / count }
 }
 
-function post({ port, path, agent }: Running, body: string): Promise<number> {
+const post = async (target: Running, body: string) => Buffer.byteLength(await text(target, body))
+
+function text({ port, path, agent }: Running, body: string): Promise<string> {
   return new Promise((resolve, reject) => {
     const headers = { 'content-type': 'application/json', 'content-length': Buffer.byteLength(body) }
     const sent = request({ host: '127.0.0.1', port, path, method: 'POST', agent, headers }, (reply) => {
-      let bytes = 0
-      reply.on('data', (part: Buffer) => (bytes += part.length))
+      const parts: Buffer[] = []
+      reply.on('data', (part: Buffer) => parts.push(part))
       reply.on('end', () => {
-        if (reply.statusCode === 200) resolve(bytes)
+        if (reply.statusCode === 200) resolve(Buffer.concat(parts).toString())
         else reject(new Error(`status ${reply.statusCode}`))
       })
     })
